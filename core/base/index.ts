@@ -1,0 +1,18 @@
+/**
+ * Foundation of core: refusals, arrays, constants and the numerical methods every room shares.
+ */
+export { at, bracket, equallySpaced, last } from './arrays'
+export { EULER_GAMMA, STANDARD_ATMOSPHERE, STANDARD_GRAVITY, ZERO_CELSIUS } from './constants'
+export { completeElliptic, completeEllipticFromComplement, type CompleteElliptic } from './elliptic'
+export {
+  DomainError,
+  requireRange,
+  type CancelSignal,
+  type Problem,
+  type Progress,
+  type RunOptions,
+  type RunStatus,
+} from './errors'
+export { evaluateCubic, monotoneCubic, type CubicCurve } from './interpolation'
+export { gaussLegendre, integrate, type GaussRule } from './quadrature'
+export { bracketedRoot } from './root'
