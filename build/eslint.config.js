@@ -2,7 +2,11 @@ import vue from 'eslint-plugin-vue'
 import tseslint from 'typescript-eslint'
 import { lawOfImports } from './eslint/law-of-imports.js'
 
-/** No `as` outside decoders, no `any`, no non-null `!`: a value is narrowed by a check or it is not trusted. */
+/**
+ * No `as` outside decoders, no `any`, no non-null `!`: a value is narrowed by a check or it is not trusted.
+ *
+ * @type {import('eslint').Linter.RulesRecord}
+ */
 const strictTypes = {
   '@typescript-eslint/no-explicit-any': 'error',
   '@typescript-eslint/no-non-null-assertion': 'error',

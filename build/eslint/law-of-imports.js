@@ -63,7 +63,8 @@ function packageBreach(room, from, specifier) {
     .split('/')
     .slice(0, specifier.startsWith('@') ? 2 : 1)
     .join('/')
-  if (name === 'electron' && !ELECTRON_FILES.includes(from)) return 'only app/main.ts and app/preload.ts import electron'
+  if (name === 'electron' && !ELECTRON_FILES.includes(from))
+    return 'only app/main.ts and app/preload.ts import electron'
   if (room === 'core') {
     const adapter = /** @type {Record<string, string>} */ (CORE_PACKAGES)[name]
     if (adapter === undefined) return `core imports only core: ${name} is not on the allow-list`

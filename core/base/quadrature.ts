@@ -19,20 +19,14 @@ export function gaussLegendre(n: number): GaussRule {
   const weights = new Float64Array(n)
   for (let i = 0; i < (n + 1) >> 1; i++) {
     let x = Math.cos((Math.PI * (i + 0.75)) / (n + 0.5))
-    let slope = 0
     for (let iteration = 0; iteration < 60; iteration++) {
-      let p = 1
-      let before = 0
-      for (let k = 1; k <= n; k++) {
-        const next = ((2 * k - 1) * x * p - (k - 1) * before) / k
-        before = p
-        p = next
-      }
-      slope = (n * (x * p - before)) / (x * x - 1)
-      const step = p / slope
+      const { value, slope } = legendre(n, x)
+      const step = value / slope
       x -= step
       if (Math.abs(step) < 1e-15) break
     }
+    // The slope at the final node: that of the step before costs the weight several units of its last digit.
+    const { slope } = legendre(n, x)
     const weight = 2 / ((1 - x * x) * slope * slope)
     nodes[i] = -x
     nodes[n - 1 - i] = x
@@ -40,6 +34,18 @@ export function gaussLegendre(n: number): GaussRule {
     weights[n - 1 - i] = weight
   }
   return { nodes, weights }
+}
+
+/** P_n and its derivative at -1 < x < 1, by the three-term recurrence. */
+function legendre(n: number, x: number): { readonly value: number; readonly slope: number } {
+  let value = 1
+  let before = 0
+  for (let k = 1; k <= n; k++) {
+    const next = ((2 * k - 1) * x * value - (k - 1) * before) / k
+    before = value
+    value = next
+  }
+  return { value, slope: (n * (x * value - before)) / (x * x - 1) }
 }
 
 const KRONROD_NODES = [
@@ -53,7 +59,7 @@ const KRONROD_WEIGHTS = [
   0.204432940075298892414161999234649, 0.209482141084727828012999174891714,
 ] as const
 const GAUSS_WEIGHTS = [
-  0.129484966168869693270611432679082, 0.279705391489276667901467771423780, 0.381830050505118944950369775488975,
+  0.129484966168869693270611432679082, 0.27970539148927666790146777142378, 0.381830050505118944950369775488975,
   0.417959183673469387755102040816327,
 ] as const
 

@@ -10,5 +10,7 @@ export function expectClose(got: number, expected: number, tolerance: number, wh
 /** Absolute comparison that prints got, expected and the error. */
 export function expectNear(got: number, expected: number, tolerance: number, what = 'value'): void {
   const error = Math.abs(got - expected)
-  expect(error <= tolerance, `${what}: got ${got}, expected ${expected}, off by ${error}, allowed ${tolerance}`).toBe(true)
+  expect(error <= tolerance, `${what}: got ${got}, expected ${expected}, off by ${error}, allowed ${tolerance}`).toBe(
+    true,
+  )
 }
