@@ -1,0 +1,22 @@
+import type { PulseResult } from '../pulse'
+import type { WaterProperties } from '../water'
+import type { Plan } from './types'
+
+/** What a caution's trigger may look at. */
+export interface CautionContext {
+  readonly plan: Plan
+  readonly water: WaterProperties | null
+  readonly pulse: PulseResult | null
+}
+
+/** Where a caution belongs: beside a result, a moving machine, a laboratory run, or a vehicle and its bench. */
+export type CautionGroup = 'model' | 'machine' | 'laboratory' | 'vehicle'
+
+export interface CautionDefinition {
+  readonly id: string
+  readonly group: CautionGroup
+  /** A publication, or "common practice". */
+  readonly source: string
+  /** The sentence for this plan, or null where the caution does not hold. */
+  readonly text: (context: CautionContext) => string | null
+}

@@ -1,0 +1,144 @@
+/**
+ * Single values of an unknown document: numbers, texts with a unit, choices. Every refusal goes on one list, so that the
+ * user sees all of them at once.
+ */
+import type { Problem } from '../base'
+import { formatFull, parseQuantity, siUnit } from '../quantity'
+import { CHOICES, fieldDefinition, type ChoicePath, type FieldDefinition, type FieldPath } from './fields'
+import type { JsonObject } from './types'
+
+export type Problems = Problem[]
+
+export function isObject(value: unknown): value is JsonObject {
+  return typeof value === 'object' && value !== null && !Array.isArray(value)
+}
+
+/** A value as it is named in a refusal: short, never the whole document. */
+export function describeValue(value: unknown): string {
+  if (value === undefined) return 'nothing'
+  const text = typeof value === 'string' ? `"${value}"` : JSON.stringify(value)
+  return text.length > 60 ? `${text.slice(0, 57)}…` : text
+}
+
+export function refuse(problems: Problems, field: string, value: unknown, limit: string, message?: string): void {
+  const shown = typeof value === 'string' ? value : describeValue(value)
+  problems.push({
+    field,
+    value: shown,
+    limit,
+    message: message ?? `${field} must be ${limit}, got ${describeValue(value)}.`,
+  })
+}
+
+/** The limits of a field in words with its SI unit: "between 0 and 40 °C". */
+export function limitInWords(definition: FieldDefinition): string {
+  const unit = siUnit(definition.dimension)
+  const show = (value: number): string => formatFull(value, unit)
+  const { min, max, above } = definition
+  if (above !== undefined)
+    return max === undefined ? `above ${show(above)}` : `above ${show(above)} and at most ${show(max)}`
+  if (min !== undefined && max !== undefined) return `between ${show(min)} and ${show(max)}`
+  if (min !== undefined) return `at least ${show(min)}`
+  return max === undefined ? 'a finite number' : `at most ${show(max)}`
+}
+
+/** Whether a finite number keeps to the limits of its field. */
+export function insideLimits(definition: FieldDefinition, value: number): boolean {
+  return (
+    Number.isFinite(value) &&
+    (definition.above === undefined || value > definition.above) &&
+    (definition.min === undefined || value >= definition.min) &&
+    (definition.max === undefined || value <= definition.max)
+  )
+}
+
+/** Check one number against its field and say what is wrong; null when nothing is. */
+export function checkField(path: FieldPath, value: number | null): Problem | null {
+  const definition = fieldDefinition(path)
+  if (value === null) {
+    if (definition.optional === true) return null
+    return {
+      field: path,
+      value: 'nothing',
+      limit: limitInWords(definition),
+      message: `${path} must be given: ${definition.help}`,
+    }
+  }
+  if (insideLimits(definition, value)) return null
+  const unit = siUnit(definition.dimension)
+  const shown = Number.isFinite(value) ? formatFull(value, unit) : 'a value that is not finite'
+  const limit = limitInWords(definition)
+  return { field: path, value: shown, limit, message: `${path} must be ${limit}, got ${shown}.` }
+}
+
+/**
+ * A number of a section: a JSON number in SI, or a text with its unit.
+ *
+ * @param fallback used where the key is absent; undefined: the value is needed
+ */
+export function decodeNumber(
+  section: JsonObject,
+  path: FieldPath,
+  fallback: number | undefined,
+  problems: Problems,
+): number {
+  const value = decodeOptionalNumber(section, path, problems)
+  if (value !== undefined && value !== null) return value
+  if (fallback !== undefined && value === undefined) return fallback
+  const failed = problems.some((problem) => problem.field === path)
+  if (!failed) refuse(problems, path, value, limitInWords(fieldDefinition(path)), checkField(path, null)?.message)
+  return fallback ?? Number.NaN
+}
+
+/** As decodeNumber where null means "not given". */
+export function decodeOptionalNumber(
+  section: JsonObject,
+  path: FieldPath,
+  problems: Problems,
+): number | null | undefined {
+  const definition = fieldDefinition(path)
+  const key = path.slice(path.indexOf('.') + 1)
+  const raw = section[key]
+  if (raw === undefined || raw === null) return raw
+  const value = readQuantity(raw, definition, path, problems)
+  if (value === null) return null
+  const problem = checkField(path, value)
+  if (problem !== null) problems.push(problem)
+  return value
+}
+
+function readQuantity(raw: unknown, definition: FieldDefinition, path: string, problems: Problems): number | null {
+  if (typeof raw === 'number') return raw
+  if (typeof raw !== 'string') {
+    refuse(problems, path, raw, 'a number in SI units or a text such as "30 mm"')
+    return null
+  }
+  const parsed = parseQuantity(raw, definition.dimension, siUnit(definition.dimension), { name: definition.label })
+  if (parsed.ok) return parsed.value
+  refuse(problems, path, raw, limitInWords(definition), `${path}: ${parsed.message}`)
+  return null
+}
+
+/** One of the words a choice allows. */
+export function decodeChoice<P extends ChoicePath>(
+  section: JsonObject,
+  path: P,
+  fallback: keyof (typeof CHOICES)[P] | undefined,
+  problems: Problems,
+): keyof (typeof CHOICES)[P] {
+  const key = path.slice(path.indexOf('.') + 1)
+  const words = Object.keys(CHOICES[path])
+  const raw = section[key]
+  if (typeof raw === 'string' && words.includes(raw)) return raw as keyof (typeof CHOICES)[P]
+  if (raw !== undefined || fallback === undefined) refuse(problems, path, raw, `one of ${words.join(', ')}`)
+  return fallback ?? (words[0] as keyof (typeof CHOICES)[P])
+}
+
+/** A text, '' where absent. */
+export function decodeText(document: JsonObject, key: string, problems: Problems): string {
+  const raw = document[key]
+  if (raw === undefined || raw === null) return ''
+  if (typeof raw === 'string') return raw
+  refuse(problems, key, raw, 'a text')
+  return ''
+}

@@ -1,0 +1,65 @@
+/**
+ * Changes of a plan as pure functions: each returns a new plan, the old one stays what it was.
+ */
+import { withStroke, type ProgrammeRow } from '../pulse'
+import type { ChoicePath, FieldPath } from './fields'
+import type { Plan } from './types'
+
+/** A plan with one section present again after a change in it. */
+function present(plan: Plan, section: string): Plan {
+  return plan.absent.some((name) => name === section)
+    ? { ...plan, absent: plan.absent.filter((name) => name !== section) }
+    : plan
+}
+
+function split(path: string): readonly [string, string] {
+  const dot = path.indexOf('.')
+  return [path.slice(0, dot), path.slice(dot + 1)]
+}
+
+function replace(plan: Plan, section: keyof Plan, key: string, value: number | string | null): Plan {
+  const old = plan[section]
+  if (typeof old !== 'object') return plan
+  return { ...present(plan, section), [section]: { ...old, [key]: value } }
+}
+
+function isSection(name: string): name is 'water' | 'nozzle' | 'programme' | 'ambient' | 'models' {
+  return ['water', 'nozzle', 'programme', 'ambient', 'models'].includes(name)
+}
+
+/**
+ * Set one number of the plan [SI]. The stroke of a table is set by stretching its times.
+ *
+ * The value is not checked here: `validatePlan` tells what the changed plan breaks.
+ */
+export function setField(plan: Plan, path: FieldPath, value: number | null): Plan {
+  if (path === 'programme.stroke' && value !== null)
+    return { ...present(plan, 'programme'), programme: withStroke(plan.programme, value) }
+  const [section, key] = split(path)
+  return isSection(section) ? replace(plan, section, key, value) : plan
+}
+
+/** Set the stroke as a number of exit diameters. */
+export function setStrokeRatio(plan: Plan, ratio: number): Plan {
+  return setField(plan, 'programme.stroke', ratio * plan.nozzle.diameter)
+}
+
+/** Set one choice of the plan; `value` is a key of CHOICES[path]. */
+export function setChoice(plan: Plan, path: ChoicePath, value: string): Plan {
+  const [section, key] = split(path)
+  return isSection(section) ? replace(plan, section, key, value) : plan
+}
+
+/** Make the programme a table of these rows. */
+export function setRows(plan: Plan, rows: readonly ProgrammeRow[]): Plan {
+  return { ...present(plan, 'programme'), programme: { ...plan.programme, shape: 'table', rows } }
+}
+
+export function setTitle(plan: Plan, title: string): Plan {
+  return { ...plan, title }
+}
+
+/** Set the unit a dimension is shown in. */
+export function setUnit(plan: Plan, dimension: string, unit: string): Plan {
+  return { ...plan, view: { ...plan.view, units: { ...plan.view.units, [dimension]: unit } } }
+}

@@ -1,0 +1,93 @@
+/**
+ * A plan becomes its text: two-space indent, stable key order, SI numbers, what this version does not know kept.
+ */
+import { PLAN_FORMAT, PLAN_VERSION, type Json, type JsonObject, type Plan } from './types'
+
+/** Order of the sections in a file, as the contract lists them; unknown ones follow in their own order. */
+const SECTION_ORDER = [
+  'format',
+  'version',
+  'title',
+  'notes',
+  'water',
+  'nozzle',
+  'programme',
+  'ambient',
+  'models',
+  'jet',
+  'train',
+  'wake',
+  'thruster',
+  'tankRun',
+  'readings',
+  'sweep',
+  'spread',
+  'held',
+  'view',
+] as const
+
+/** The document of a plan, as it is saved. */
+export function planDocument(plan: Plan): JsonObject {
+  const known: Record<string, Json | undefined> = {
+    format: PLAN_FORMAT,
+    version: PLAN_VERSION,
+    title: plan.title,
+    notes: plan.notes,
+    water: merged(plan.source['water'], {
+      ...plan.water,
+      density: plan.water.density ?? undefined,
+      kinematicViscosity: plan.water.kinematicViscosity ?? undefined,
+      vapourPressure: plan.water.vapourPressure ?? undefined,
+    }),
+    nozzle: plan.absent.includes('nozzle') ? undefined : merged(plan.source['nozzle'], { ...plan.nozzle }),
+    programme: plan.absent.includes('programme')
+      ? undefined
+      : merged(plan.source['programme'], {
+          ...plan.programme,
+          rows: plan.programme.rows.length === 0 ? undefined : plan.programme.rows.map((row) => ({ ...row })),
+        }),
+    ambient: merged(plan.source['ambient'], { ...plan.ambient }),
+    models: merged(plan.source['models'], { ...plan.models }),
+    view: merged(plan.source['view'], { units: { ...plan.view.units } }),
+  }
+  const all: Record<string, Json | undefined> = { ...plan.source, ...known }
+  const order: readonly string[] = SECTION_ORDER
+  const keys = [...order, ...Object.keys(all).filter((key) => !order.includes(key))]
+  return Object.fromEntries(keys.flatMap((key) => pair(key, all[key])))
+}
+
+function pair(key: string, value: Json | undefined): [string, Json][] {
+  return value === undefined ? [] : [[key, value]]
+}
+
+/** Known values first in their order, then what the section held beyond them. */
+function merged(source: Json | undefined, values: Readonly<Record<string, Json | undefined>>): JsonObject {
+  const kept = typeof source === 'object' && source !== null && !Array.isArray(source) ? Object.entries(source) : []
+  const beyond = kept.filter(([key]) => !(key in values))
+  const known = Object.entries(values).flatMap(([key, value]) => pair(key, value))
+  return Object.fromEntries([...known, ...beyond])
+}
+
+/** The text of a plan file, with its trailing newline. */
+export function writePlan(plan: Plan): string {
+  return `${JSON.stringify(planDocument(plan), null, 2)}\n`
+}
+
+/**
+ * What decides the results of a plan, as one text to be hashed: the document without title, notes and view.
+ * Two plans with the same text compute the same numbers.
+ */
+export function canonicalInput(plan: Plan): string {
+  const beside = new Set(['title', 'notes', 'view', 'held'])
+  return JSON.stringify(Object.fromEntries(Object.entries(planDocument(plan)).filter(([key]) => !beside.has(key))))
+}
+
+/** File name offered for a plan: its title in plain letters, never empty. */
+export function planFileName(title: string): string {
+  const plain = title
+    .normalize('NFKD')
+    .replace(/[^\p{L}\p{N}]+/gu, '-')
+    .replace(/^-+|-+$/g, '')
+    .toLowerCase()
+  return `${plain === '' ? 'plan' : plain.slice(0, 60)}.ringwright.json`
+}

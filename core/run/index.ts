@@ -1,0 +1,5 @@
+/**
+ * A plan in, results out: the one door that window, browser and runner share.
+ */
+export { availableSections, pulseOf, run, type RunRequest } from './run'
+export { SECTIONS, type RunData, type RunResult, type Section } from './types'

@@ -1,0 +1,24 @@
+import type { RunStatus } from '../base'
+import type { Caution } from '../plan'
+import type { PulseResult } from '../pulse'
+import type { WaterProperties } from '../water'
+
+/** Sections of results that this version computes, in the order they depend on one another. */
+export const SECTIONS = ['water', 'pulse'] as const
+export type Section = (typeof SECTIONS)[number]
+
+/** Everything computed from one plan. A section not asked for is null. Frozen; replaced whole. */
+export interface RunData {
+  readonly water: WaterProperties
+  readonly pulse: PulseResult | null
+  readonly cautions: readonly Caution[]
+}
+
+export interface RunResult {
+  readonly status: RunStatus
+  readonly message: string
+  /** Plan path a failure belongs to, where it has one. */
+  readonly field?: string
+  /** What was finished; null where nothing was. */
+  readonly data: RunData | null
+}
