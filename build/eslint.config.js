@@ -15,7 +15,7 @@ const strictTypes = {
 }
 
 export default tseslint.config(
-  { ignores: ['**/node_modules/', '**/dist/', '**/release/', 'out/', '**/.*/**'] },
+  { ignores: ['**/node_modules/', '**/dist/', '**/release/', 'out/', '**/.*/**', 'core/kernel/assembly/'] },
   { linterOptions: { reportUnusedDisableDirectives: 'error' } },
   ...tseslint.configs.recommended,
   ...vue.configs['flat/recommended-error'],

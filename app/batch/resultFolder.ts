@@ -1,0 +1,77 @@
+/**
+ * The folder a run writes into: whose files lie there, what may be replaced, and the writing itself.
+ */
+import { mkdir, open, readFile, readdir, realpath, rename, rm, stat, unlink } from 'node:fs/promises'
+import path from 'node:path'
+import { createSaver } from '../files/atomicSave'
+import { systemCode } from '../files/fileSentence'
+
+export const SUMMARY_NAME = 'summary.json'
+
+/** A folder that may not be written to, with a sentence that says why. */
+export class FolderRefusal extends Error {
+  constructor(message: string) {
+    super(message)
+    this.name = 'FolderRefusal'
+  }
+}
+
+export interface ResultFolder {
+  /** Refuse to touch files that are not an earlier run's. @throws {FolderRefusal} */
+  prepare(names: readonly string[]): Promise<void>
+  /** Write one file under a temporary name and rename it. */
+  write(name: string, content: string): Promise<void>
+  /** Take away a summary that no longer describes what lies beside it. */
+  dropSummary(): Promise<void>
+}
+
+/**
+ * @param folder absolute path
+ * @param shown the folder as the user named it, for sentences
+ * @param summaryFormat `format` of a summary that is ours
+ */
+export function resultFolder(folder: string, shown: string, summaryFormat: string): ResultFolder {
+  let count = 0
+  const save = createSaver(
+    { open, rename, unlink, stat, realpath },
+    { durable: false, syncFolder: false, unique: () => `${process.pid}-${(count += 1)}` },
+  )
+  return {
+    async prepare(names) {
+      const present = await makeOrList(folder, shown)
+      const inTheWay = names.filter((name) => present.includes(name))
+      const [first] = inTheWay
+      if (first === undefined || (await holdsOurSummary(folder, summaryFormat))) return
+      throw new FolderRefusal(
+        `${path.join(shown, first)} exists already and ${shown} holds no summary of an earlier run: name another folder or move the file away.`,
+      )
+    },
+    write: (name, content) => save(path.join(folder, name), content),
+    dropSummary: () => rm(path.join(folder, SUMMARY_NAME), { force: true }),
+  }
+}
+
+async function makeOrList(folder: string, shown: string): Promise<readonly string[]> {
+  try {
+    await mkdir(folder, { recursive: true })
+    return await readdir(folder)
+  } catch (error) {
+    const code = systemCode(error)
+    const why =
+      code === 'EEXIST' || code === 'ENOTDIR'
+        ? 'a part of that path is a file'
+        : code === 'EACCES' || code === 'EPERM'
+          ? 'you may not write there'
+          : `the system reported ${code === '' ? 'a failure' : code}`
+    throw new FolderRefusal(`The folder ${shown} could not be made because ${why}.`)
+  }
+}
+
+async function holdsOurSummary(folder: string, summaryFormat: string): Promise<boolean> {
+  try {
+    const summary: unknown = JSON.parse(await readFile(path.join(folder, SUMMARY_NAME), 'utf8'))
+    return typeof summary === 'object' && summary !== null && 'format' in summary && summary.format === summaryFormat
+  } catch {
+    return false
+  }
+}

@@ -1,0 +1,42 @@
+/**
+ * How the window's page is bundled: relative addresses, so that the app scheme and the loopback server serve the same
+ * files; nothing inline, so that the content security policy holds.
+ */
+import vue from '@vitejs/plugin-vue'
+import { inProject } from './scripts/root.mjs'
+import { constants } from './vite.app.mjs'
+
+/** @returns {import('vite').InlineConfig} */
+export function rendererConfig() {
+  return {
+    configFile: false,
+    root: inProject('renderer'),
+    base: './',
+    logLevel: 'warn',
+    publicDir: false,
+    cacheDir: inProject('node_modules/.vite'),
+    plugins: [vue()],
+    define: { ...constants(), __VUE_OPTIONS_API__: 'false' },
+    worker: { format: 'es' },
+    build: {
+      target: 'es2023',
+      outDir: inProject('dist/renderer'),
+      emptyOutDir: true,
+      assetsDir: 'assets',
+      assetsInlineLimit: 0,
+      modulePreload: { polyfill: false },
+      sourcemap: false,
+      reportCompressedSize: false,
+      chunkSizeWarningLimit: 2000,
+      rolldownOptions: { checks: { bundlerTimings: false } },
+      license: { fileName: 'licences.md' },
+    },
+    server: {
+      host: '127.0.0.1',
+      headers: {
+        'cross-origin-opener-policy': 'same-origin',
+        'cross-origin-embedder-policy': 'require-corp',
+      },
+    },
+  }
+}

@@ -1,0 +1,266 @@
+import { createHash } from 'node:crypto'
+import { mkdir, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
+import path from 'node:path'
+import { afterEach, beforeEach, describe, expect, it } from 'vitest'
+import { runBatch } from '../../../app/batch/runBatch'
+import { canonicalInput, EXAMPLES, readPlan } from '../../../core/plan'
+import { documentOf } from '../../support/plans'
+
+let folder = ''
+beforeEach(async () => {
+  folder = await mkdtemp(path.join(tmpdir(), 'ringwright batch '))
+})
+afterEach(() => rm(folder, { recursive: true, force: true }))
+
+interface Outcome {
+  readonly code: number
+  readonly written: readonly string[]
+  readonly notes: readonly string[]
+}
+
+/** The runner as a caller standing in `folder` sees it. */
+async function batch(list: readonly string[], input = '', signal = new AbortController().signal): Promise<Outcome> {
+  const written: string[] = []
+  const notes: string[] = []
+  const code = await runBatch(list, {
+    folder,
+    signal,
+    readStandardInput: async () => new TextEncoder().encode(input),
+    writtenLine: (text) => written.push(text),
+    note: (text) => notes.push(text),
+  })
+  return { code, written, notes }
+}
+
+async function writePlanFile(parts: Readonly<Record<string, unknown>> = {}, name = 'plan.json'): Promise<void> {
+  await writeFile(path.join(folder, name), JSON.stringify(documentOf(parts)))
+}
+
+async function summary(out = 'out'): Promise<Record<string, unknown>> {
+  return JSON.parse(await readFile(path.join(folder, out, 'summary.json'), 'utf8'))
+}
+
+describe('a run', () => {
+  it('writes pulse.csv, then summary.json, names each on standard output and says nothing else', async () => {
+    await writePlanFile()
+    expect(await batch(['plan.json', '--out', 'out'])).toEqual({
+      code: 0,
+      written: [path.join('out', 'pulse.csv'), path.join('out', 'summary.json')],
+      notes: [],
+    })
+    expect((await readdir(path.join(folder, 'out'))).toSorted()).toEqual(['pulse.csv', 'summary.json'])
+    const table = await readFile(path.join(folder, 'out', 'pulse.csv'), 'utf8')
+    expect(table.split('\r\n')[0]).toBe(
+      'time (s),exit speed (m/s),formation time,circulation (m2/s),impulse (N s),energy (J)',
+    )
+    // 201 equal times at least, the header and the end of the last line.
+    expect(table.split('\r\n').length).toBeGreaterThanOrEqual(203)
+    expect(table).not.toMatch(/NaN|Infinity/)
+  })
+
+  it('says in summary.json what made it, from what, and what it wrote', async () => {
+    await writePlanFile()
+    await batch(['plan.json', '--out', 'out'])
+    const reading = readPlan(JSON.stringify(documentOf()))
+    if (!reading.ok) throw new Error('the plan of the test is refused')
+    expect(await summary()).toMatchObject({
+      format: 'ringwright-summary',
+      version: 1,
+      files: ['pulse.csv', 'summary.json'],
+      program: { name: 'Ringwright', version: expect.stringMatching(/^\d+\.\d+\.\d+$/) },
+      inputHash: createHash('sha256').update(canonicalInput(reading.plan)).digest('hex'),
+      water: { density: expect.any(Number) },
+      pulse: { stroke: 0.096 },
+    })
+  })
+
+  it.each(EXAMPLES.map(({ id, text }) => ({ id, text })))(
+    'computes the example $id from standard input',
+    async ({ text }) => {
+      const { code, written, notes } = await batch(['-', '--out', 'out'], text)
+      expect(notes).toEqual([])
+      expect(code).toBe(0)
+      expect(written).toHaveLength(2)
+    },
+  )
+
+  it('repeats to the byte', async () => {
+    await writePlanFile()
+    await batch(['plan.json', '--out', 'a'])
+    await batch(['plan.json', '--out', 'b'])
+    for (const name of ['pulse.csv', 'summary.json'])
+      expect(await readFile(path.join(folder, 'a', name))).toEqual(await readFile(path.join(folder, 'b', name)))
+  })
+
+  it('writes water alone when asked for water alone', async () => {
+    await writePlanFile()
+    const { written } = await batch(['plan.json', '--out', 'out', '--only', 'water'])
+    expect(written).toEqual([path.join('out', 'summary.json')])
+    const document = await summary()
+    expect(document['files']).toEqual(['summary.json'])
+    expect(document).toHaveProperty('water')
+    expect(document).not.toHaveProperty('pulse')
+  })
+
+  it('takes absolute paths and makes the folder with those above it', async () => {
+    await writePlanFile()
+    const out = path.join(folder, 'deep', 'er', 'out')
+    const { code, written } = await batch([path.join(folder, 'plan.json'), '--out', out])
+    expect(code).toBe(0)
+    expect(written).toContain(path.join(out, 'summary.json'))
+  })
+
+  it('says which sections of the plan this version leaves out', async () => {
+    await writePlanFile({ thruster: { count: 2 }, sweep: { fields: [] } })
+    const { code, notes } = await batch(['plan.json', '--out', 'out'])
+    expect(code).toBe(0)
+    expect(notes).toEqual(['Not computed by this version, and left out: thruster, sweep.'])
+  })
+})
+
+describe('files that are there already', () => {
+  it('are replaced when the folder holds our summary', async () => {
+    await writePlanFile()
+    await batch(['plan.json', '--out', 'out'])
+    const before = await summary()
+    await writePlanFile({ water: { kind: 'fresh', temperatureCelsius: 5 } })
+    expect((await batch(['plan.json', '--out', 'out'])).code).toBe(0)
+    expect((await summary())['inputHash']).not.toBe(before['inputHash'])
+  })
+
+  it.each([
+    ['no summary', null],
+    ['another program’s summary', '{"format":"something-else"}'],
+    ['a summary that is no JSON', 'summary'],
+  ])('are kept, and the run refused, when the folder holds %s', async (_what, text) => {
+    await writePlanFile()
+    await mkdir(path.join(folder, 'out'))
+    await writeFile(path.join(folder, 'out', 'pulse.csv'), 'mine')
+    if (text !== null) await writeFile(path.join(folder, 'out', 'summary.json'), text)
+    const { code, written, notes } = await batch(['plan.json', '--out', 'out'])
+    expect(code).toBe(2)
+    expect(written).toEqual([])
+    expect(notes.join('\n')).toMatch(/pulse\.csv exists already and out holds no summary of an earlier run/)
+    expect(await readFile(path.join(folder, 'out', 'pulse.csv'), 'utf8')).toBe('mine')
+  })
+
+  it('do not matter when the run writes nothing of their names', async () => {
+    await writePlanFile()
+    await mkdir(path.join(folder, 'out'))
+    await writeFile(path.join(folder, 'out', 'notes.txt'), 'mine')
+    expect((await batch(['plan.json', '--out', 'out'])).code).toBe(0)
+    expect(await readFile(path.join(folder, 'out', 'notes.txt'), 'utf8')).toBe('mine')
+  })
+})
+
+describe('a refusal', () => {
+  it('of bad arguments exits 2 and makes no folder', async () => {
+    expect((await batch(['plan.json', '--out', 'out', '--fast'])).code).toBe(2)
+    expect(await readdir(folder)).toEqual([])
+  })
+
+  it('of a file that cannot be read exits 2 and says why', async () => {
+    expect(await batch(['gone.json', '--out', 'out'])).toEqual({
+      code: 2,
+      written: [],
+      notes: ['“gone.json” could not be opened because it, or the folder it should lie in, does not exist.'],
+    })
+  })
+
+  it('of text that is not a plan exits 2', async () => {
+    const { code, notes } = await batch(['-', '--out', 'out'], 'not a plan')
+    expect(code).toBe(2)
+    expect(notes[0]).toMatch(/^standard input: This file is not a plan/)
+    expect(await readdir(folder)).toEqual([])
+  })
+
+  it('of a plan exits 2 and names field, value and limit', async () => {
+    await writePlanFile({ nozzle: { shape: 'tube', diameter: -0.03 } })
+    const { code, notes } = await batch(['plan.json', '--out', 'out'])
+    expect(code).toBe(2)
+    expect(notes.join('\n')).toMatch(/plan\.json: .*nozzle\.diameter.*-0\.03/)
+  })
+
+  it('of a newer plan exits 2 and names both versions', async () => {
+    await writePlanFile({ version: 99 })
+    const { code, notes } = await batch(['plan.json', '--out', 'out'])
+    expect(code).toBe(2)
+    expect(notes.join('\n')).toMatch(/newer version \(99\); this program reads up to 1/)
+  })
+
+  it('of a section this version does not compute exits 2', async () => {
+    await writePlanFile()
+    expect(await batch(['plan.json', '--out', 'out', '--only', 'wake'])).toEqual({
+      code: 2,
+      written: [],
+      notes: ['Section wake is not computed by this version.'],
+    })
+  })
+
+  it('of a section the plan has nothing for exits 2', async () => {
+    const ring = { circulation: 0.01, radius: 0.02, coreRadius: 0.002, core: 'uniform' }
+    const document = { format: 'ringwright-plan', version: 1, water: { kind: 'fresh', temperatureCelsius: 20 } }
+    const text = JSON.stringify({ ...document, wake: { rings: [ring] } })
+    const refused = await batch(['-', '--out', 'out', '--only', 'pulse'], text)
+    expect(refused.code).toBe(2)
+    expect(refused.notes[0]).toMatch(/^Section pulse cannot be computed: the plan has no nozzle and no programme\.$/)
+    const { code, written } = await batch(['-', '--out', 'out'], text)
+    expect(code).toBe(0)
+    expect(written).toEqual([path.join('out', 'summary.json')])
+  })
+
+  it('of a folder that cannot be made exits 2', async () => {
+    await writePlanFile()
+    const { code, notes } = await batch(['plan.json', '--out', path.join('plan.json', 'out')])
+    expect(code).toBe(2)
+    expect(notes[0]).toMatch(/could not be made because a part of that path is a file\.$/)
+  })
+})
+
+describe('a write that fails', () => {
+  it('exits 1, says why and leaves no temporary file', async () => {
+    await writePlanFile()
+    await batch(['plan.json', '--out', 'out'])
+    // A folder in the place of the table: a file cannot be renamed over it.
+    await rm(path.join(folder, 'out', 'pulse.csv'))
+    await mkdir(path.join(folder, 'out', 'pulse.csv', 'inside'), { recursive: true })
+    const { code, written, notes } = await batch(['plan.json', '--out', 'out'])
+    expect(code).toBe(1)
+    expect(written).toEqual([])
+    expect(notes[0]).toMatch(/pulse\.csv” could not be saved because/)
+    expect((await readdir(path.join(folder, 'out'))).filter((name) => name.endsWith('.tmp'))).toEqual([])
+  })
+})
+
+describe('an interrupt', () => {
+  it('exits 130 and replaces nothing', async () => {
+    await writePlanFile()
+    const controller = new AbortController()
+    controller.abort()
+    const { code, written } = await batch(['plan.json', '--out', 'out'], '', controller.signal)
+    expect(code).toBe(130)
+    expect(written).toEqual([])
+  })
+
+  it('between two files keeps the finished one, not an earlier run’s summary, and exits 130', async () => {
+    await writePlanFile({ water: { kind: 'fresh', temperatureCelsius: 5 } })
+    await batch(['plan.json', '--out', 'out'])
+    await writePlanFile()
+    const controller = new AbortController()
+    const written: string[] = []
+    const code = await runBatch(['plan.json', '--out', 'out'], {
+      folder,
+      signal: controller.signal,
+      readStandardInput: async () => new Uint8Array(),
+      writtenLine: (text) => {
+        written.push(text)
+        controller.abort()
+      },
+      note: () => undefined,
+    })
+    expect(code).toBe(130)
+    expect(written).toEqual([path.join('out', 'pulse.csv')])
+    expect(await readdir(path.join(folder, 'out'))).toEqual(['pulse.csv'])
+  })
+})
