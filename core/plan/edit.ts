@@ -1,7 +1,8 @@
 /**
  * Changes of a plan as pure functions: each returns a new plan, the old one stays what it was.
  */
-import { withStroke, type ProgrammeRow } from '../pulse'
+import { DomainError } from '../base'
+import { compileProgramme, withStroke, type ProgrammeInput, type ProgrammeRow } from '../pulse'
 import type { ChoicePath, FieldPath } from './fields'
 import type { Plan } from './types'
 
@@ -33,10 +34,31 @@ function isSection(name: string): name is 'water' | 'nozzle' | 'programme' | 'am
  * The value is not checked here: `validatePlan` tells what the changed plan breaks.
  */
 export function setField(plan: Plan, path: FieldPath, value: number | null): Plan {
-  if (path === 'programme.stroke' && value !== null)
-    return { ...present(plan, 'programme'), programme: withStroke(plan.programme, value) }
+  if (path === 'programme.stroke' && plan.programme.shape === 'table' && value !== null)
+    return { ...plan, programme: stretched(plan.programme, value) }
   const [section, key] = split(path)
   return isSection(section) ? replace(plan, section, key, value) : plan
+}
+
+/** A table stretched to a stroke; left as it is where rows or stroke are unusable, which the decoder then tells. */
+function stretched(programme: ProgrammeInput, stroke: number): ProgrammeInput {
+  return unlessRefused(() => withStroke(programme, stroke)) ?? { ...programme, stroke }
+}
+
+/** A table with the stroke and peak speed its rows give; other shapes, and unusable rows, as they are. */
+function ruledByRows(programme: ProgrammeInput): ProgrammeInput {
+  if (programme.shape !== 'table') return programme
+  const compiled = unlessRefused(() => compileProgramme(programme))
+  return compiled === null ? programme : { ...programme, stroke: compiled.stroke, peakSpeed: compiled.peakSpeed }
+}
+
+function unlessRefused<T>(make: () => T): T | null {
+  try {
+    return make()
+  } catch (error) {
+    if (error instanceof DomainError) return null
+    throw error
+  }
 }
 
 /** Set the stroke as a number of exit diameters. */
@@ -47,12 +69,14 @@ export function setStrokeRatio(plan: Plan, ratio: number): Plan {
 /** Set one choice of the plan; `value` is a key of CHOICES[path]. */
 export function setChoice(plan: Plan, path: ChoicePath, value: string): Plan {
   const [section, key] = split(path)
-  return isSection(section) ? replace(plan, section, key, value) : plan
+  if (!isSection(section)) return plan
+  const changed = replace(plan, section, key, value)
+  return { ...changed, programme: ruledByRows(changed.programme) }
 }
 
 /** Make the programme a table of these rows. */
 export function setRows(plan: Plan, rows: readonly ProgrammeRow[]): Plan {
-  return { ...present(plan, 'programme'), programme: { ...plan.programme, shape: 'table', rows } }
+  return { ...present(plan, 'programme'), programme: ruledByRows({ ...plan.programme, shape: 'table', rows }) }
 }
 
 export function setTitle(plan: Plan, title: string): Plan {

@@ -40,6 +40,8 @@ export function computePulse(input: PulseInput): PulseResult {
   const startFormationTime = (programme.peakSpeed * programme.timeTo95PercentOfPeak) / diameter
   const quickStart = isQuickStart(startFormationTime)
   const strokeRatio = programme.stroke / diameter
+  // Exit over piston area: what leaves the exit the piston has swept.
+  const areaRatio = (diameter / nozzle.pistonDiameter) ** 2
 
   const slugOf = (pulse: WholePulse) => slugInvariants(pulse.moments, density, diameter, factors)
   const totalOf = (pulse: WholePulse, basis: OverPressureBasis) =>
@@ -70,6 +72,8 @@ export function computePulse(input: PulseInput): PulseResult {
     duration: programme.duration,
     peakSpeed: programme.peakSpeed,
     reducedPeak: programme.reducedPeak,
+    pistonTravel: programme.stroke * areaRatio,
+    pistonPeakSpeed: programme.peakSpeed * areaRatio,
     meanSpeed,
     jetReynolds: (meanSpeed * diameter) / kinematicViscosity,
     quickStart,

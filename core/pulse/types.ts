@@ -163,6 +163,10 @@ export interface PulseResult {
   readonly peakSpeed: number
   /** True where a trapezoid's stroke is too short for its ramps, which keep their slopes. */
   readonly reducedPeak: boolean
+  /** Way of the piston, stroke times exit area over piston area [m]. */
+  readonly pistonTravel: number
+  /** Peak speed of the piston, by the same ratio of areas [m/s]. */
+  readonly pistonPeakSpeed: number
   /** stroke / duration. */
   readonly meanSpeed: number
   /** Mean speed times diameter over kinematic viscosity. */

@@ -1,0 +1,43 @@
+/** The working status at a glance: water, jet Reynolds number, how fresh the results are. Pure. */
+import { formatNumber, formatQuantity } from '../../core/quantity'
+import { CHOICES, type Plan } from '../../core/plan'
+import type { ResultsStatus } from './results'
+import type { Units } from './units'
+
+/** `sea water 15 °C`. */
+export function waterInWords(plan: Plan, units: Units): string {
+  if (plan.water.kind === 'given') return 'given liquid'
+  const kind = CHOICES['water.kind'][plan.water.kind]
+  return `${kind} water ${formatQuantity(plan.water.temperatureCelsius, units.temperature)}`
+}
+
+/** `jet Reynolds number 5050`. */
+export function reynoldsInWords(jetReynolds: number): string {
+  return `jet Reynolds number ${formatNumber(jetReynolds, 3)}`
+}
+
+/**
+ * How the results stand to the plan shown.
+ *
+ * @param problems refusals of the plan; while there are any nothing new is computed
+ */
+export function freshnessInWords(status: ResultsStatus, problems: number): string {
+  if (problems > 0) return status === 'none' ? 'not computed' : 'results for the previous plan'
+  switch (status) {
+    case 'current':
+      return 'results current'
+    case 'running':
+      return 'computing'
+    case 'failed':
+      return 'not computed'
+    case 'stale':
+      return 'results for the previous plan'
+    case 'none':
+      return 'no results yet'
+  }
+}
+
+/** `2 cautions`. */
+export function cautionsInWords(count: number): string {
+  return count === 0 ? 'no cautions' : count === 1 ? '1 caution' : `${count} cautions`
+}

@@ -1,0 +1,12 @@
+/** Entry of the module worker. */
+import { decodeRequest } from './decodeMessages'
+import { serve } from './serve'
+
+serve({
+  post: (message) => self.postMessage(message),
+  listen: (listener) =>
+    self.addEventListener('message', (event: MessageEvent<unknown>) => {
+      const request = decodeRequest(event.data)
+      if (request !== null) listener(request)
+    }),
+})

@@ -1,0 +1,24 @@
+/**
+ * What crosses between the window and its worker, and the port it crosses by.
+ */
+import type { Plan } from '../../core/plan'
+import type { Progress } from '../../core/base'
+import type { RunResult, Section } from '../../core/run'
+
+/** To the worker. */
+export type WorkerRequest =
+  | { readonly kind: 'run'; readonly id: number; readonly plan: Plan; readonly sections: readonly Section[] }
+  | { readonly kind: 'cancel'; readonly id: number }
+
+/** From the worker. `crashed`: the core threw, which it does for no valid input. */
+export type WorkerAnswer =
+  | { readonly kind: 'progress'; readonly id: number; readonly progress: Progress }
+  | { readonly kind: 'result'; readonly id: number; readonly result: RunResult }
+  | { readonly kind: 'crashed'; readonly id: number; readonly message: string }
+
+/** The part of a message port both sides use; a Worker, a worker's own scope and a MessagePort all offer it. */
+export interface Port<Sent, Received> {
+  post(message: Sent): void
+  /** The one listener; called with each message in order. */
+  listen(listener: (message: Received) => void): void
+}
