@@ -1,5 +1,5 @@
 /**
- * Writes core/ring/steadyFamilyTable.ts and steadyOutlineTable.ts: solves the steady family anew (some minutes on one core) and
+ * Writes core/ring/steadyFamilyTable.ts and steadyOutlineTable.ts: solves the steady family anew (about half a minute) and
  * prints the rows as they are done.
  *
  * Usage: npm run generate

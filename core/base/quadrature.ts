@@ -66,6 +66,9 @@ const GAUSS_WEIGHTS = [
 /** Depth at which an interval is no longer halved: 2^-40 of the whole. */
 const DEEPEST = 40
 
+/** Below this share of an interval's own sum an error estimate is rounding, and halving would never end (QUADPACK's 50 eps). */
+const ROUNDING = 50 * Number.EPSILON
+
 /**
  * Integral of f from a to b to a relative tolerance, by recursive halving of a 7-15 point Gauss-Kronrod pair.
  *
@@ -115,7 +118,7 @@ function refine(
   const left = kronrod(f, a, middle)
   const right = kronrod(f, middle, b)
   return (
-    refine(f, a, middle, left, Math.max(allowed / 2, 1e-17 * estimate.absolute), depth + 1) +
-    refine(f, middle, b, right, Math.max(allowed / 2, 1e-17 * estimate.absolute), depth + 1)
+    refine(f, a, middle, left, Math.max(allowed / 2, ROUNDING * estimate.absolute), depth + 1) +
+    refine(f, middle, b, right, Math.max(allowed / 2, ROUNDING * estimate.absolute), depth + 1)
   )
 }

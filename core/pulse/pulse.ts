@@ -75,7 +75,7 @@ export function computePulse(input: PulseInput): PulseResult {
     pistonTravel: programme.stroke * areaRatio,
     pistonPeakSpeed: programme.peakSpeed * areaRatio,
     meanSpeed,
-    jetReynolds: (meanSpeed * diameter) / kinematicViscosity,
+    jetReynolds: (programme.peakSpeed * diameter) / kinematicViscosity,
     quickStart,
     startFormationTime,
     slug,

@@ -169,7 +169,7 @@ export interface PulseResult {
   readonly pistonPeakSpeed: number
   /** stroke / duration. */
   readonly meanSpeed: number
-  /** Mean speed times diameter over kinematic viscosity. */
+  /** Peak speed times diameter over kinematic viscosity. */
   readonly jetReynolds: number
   /** True where 95 % of the peak comes within one formation time at peak speed. */
   readonly quickStart: boolean

@@ -1,5 +1,4 @@
 /** Chebyshev series on [-1, 1]: evaluation by Clenshaw's recurrence (Clenshaw 1955, MTAC 9:118). */
-import { read } from './read'
 
 /** Sum of c_k T_k(s). */
 export function chebyshevSum(coefficients: Float64Array, s: number): number {
@@ -7,11 +6,11 @@ export function chebyshevSum(coefficients: Float64Array, s: number): number {
   let b1 = 0
   let b2 = 0
   for (let k = coefficients.length - 1; k > 0; k--) {
-    const b0 = read(coefficients, k) + twice * b1 - b2
+    const b0 = (coefficients[k] ?? NaN) + twice * b1 - b2
     b2 = b1
     b1 = b0
   }
-  return read(coefficients, 0) + s * b1 - b2
+  return (coefficients[0] ?? NaN) + s * b1 - b2
 }
 
 /** Derivative in s of the sum of c_k T_k(s). */
@@ -21,7 +20,7 @@ export function chebyshevSlope(coefficients: Float64Array, s: number): number {
   let b1 = 0
   let b2 = 0
   for (let k = coefficients.length - 1; k > 0; k--) {
-    const b0 = k * read(coefficients, k) + twice * b1 - b2
+    const b0 = k * (coefficients[k] ?? NaN) + twice * b1 - b2
     b2 = b1
     b1 = b0
   }

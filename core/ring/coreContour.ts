@@ -6,7 +6,6 @@
  * t = 0 at the outer equator, t = pi at the inner one, running towards +x first. The outward normal times ds is (-r', x') dt.
  */
 import { at } from '../base'
-import { read } from './read'
 
 export interface CoreContour {
   /** X_0..X_M; X_0 and X_M are 0. */
@@ -86,12 +85,12 @@ export function pointOnContour(
   let xSlope = 0
   let rSlope = 0
   for (let k = 0; k < radial.length; k++) {
-    const c = read(cosines, k)
-    const s = read(sines, k)
-    x += read(axial, k) * s
-    xSlope += k * read(axial, k) * c
-    r += read(radial, k) * c
-    rSlope -= k * read(radial, k) * s
+    const c = cosines[k] ?? NaN
+    const s = sines[k] ?? NaN
+    x += (axial[k] ?? NaN) * s
+    xSlope += k * (axial[k] ?? NaN) * c
+    r += (radial[k] ?? NaN) * c
+    rSlope -= k * (radial[k] ?? NaN) * s
   }
   out.x = x
   out.r = r
@@ -102,7 +101,7 @@ export function pointOnContour(
 /** Value of sum c_k cos kt. */
 export function cosineSum(coefficients: Float64Array, cosines: Float64Array): number {
   let sum = 0
-  for (let k = 0; k < coefficients.length; k++) sum += read(coefficients, k) * read(cosines, k)
+  for (let k = 0; k < coefficients.length; k++) sum += (coefficients[k] ?? NaN) * (cosines[k] ?? NaN)
   return sum
 }
 

@@ -30,7 +30,7 @@ const SMALLEST_PANEL = 1e-6
  * Ends of the panels on one side of a point of the boundary, as distances in t from it, 0 to pi.
  *
  * @param harmonicCount of the contour: panels are short enough for its highest harmonics that matter
- * @param smallest panel; take 1e-10 where the velocity itself is wanted to rounding
+ * @param smallest panel; take less where the velocity itself is wanted to rounding
  */
 export function gradedPanels(harmonicCount: number, smallest = SMALLEST_PANEL): Float64Array {
   const widest = Math.min(Math.PI / 4, 30 / harmonicCount)
@@ -76,7 +76,7 @@ export function boundaryField(
         sum.add(source, dt)
         if (row === undefined || weight === undefined) continue
         const factor = sum.green() * cosineSum(weight, cosines) * dt
-        for (let k = 0; k < size; k++) row[k] = read(row, k) + factor * read(cosines, k)
+        for (let k = 0; k < size; k++) row[k] = (row[k] ?? NaN) + factor * (cosines[k] ?? NaN)
       }
     }
   }

@@ -25,7 +25,7 @@ export function solveLinear(matrix: Float64Array, rightSide: Float64Array): Floa
       const factor = read(matrix, row * n + column) / head
       if (factor === 0) continue
       for (let k = column; k < n; k++)
-        matrix[row * n + k] = read(matrix, row * n + k) - factor * read(matrix, column * n + k)
+        matrix[row * n + k] = (matrix[row * n + k] ?? NaN) - factor * (matrix[column * n + k] ?? NaN)
       rightSide[row] = read(rightSide, row) - factor * read(rightSide, column)
     }
   }

@@ -5,7 +5,6 @@
  * then fix the radius. No steady ring of this family has E_n below that of Hill's vortex.
  */
 import { requireRange } from '../base'
-import { read } from './read'
 import { HILL_DIMENSIONLESS_ENERGY } from './hillVortex'
 import {
   dimensionlessEnergyExcess,
@@ -40,8 +39,8 @@ const FIRST_KNOT = -20
 const KNOT_STEP = 0.1
 const KNOTS = buildKnots()
 /** E_n - Hill at the first knot. Above this the leading terms are exact to rounding. */
-const THIN_EXCESS = Math.exp(-read(KNOTS, 0))
-const LEAST_EXCESS = Math.exp(-read(KNOTS, KNOTS.length - 1))
+const THIN_EXCESS = Math.exp(-(KNOTS[0] ?? NaN))
+const LEAST_EXCESS = Math.exp(-(KNOTS[KNOTS.length - 1] ?? NaN))
 
 /** -ln(E_n - Hill) at w = FIRST_KNOT + i KNOT_STEP: rising. */
 function buildKnots(): Float64Array {
@@ -63,14 +62,14 @@ function placeOfExcess(excess: number): FamilyPlace {
   const target = -Math.log(excess)
   const i = knotBefore(target)
   let w = FIRST_KNOT + KNOT_STEP * (i + inverseCubic(i, target))
-  let slope = (read(KNOTS, i + 1) - read(KNOTS, i)) / KNOT_STEP
+  let slope = ((KNOTS[i + 1] ?? NaN) - (KNOTS[i] ?? NaN)) / KNOT_STEP
   let lastW = Number.NaN
   let lastError = Number.NaN
   // The start is good to about 1e-6; the secant then needs two or three steps.
   for (let n = 0; n < 8; n++) {
     const error = -logExcess(w) - target
     if (Math.abs(w - lastW) > 1e-9) slope = (error - lastError) / (w - lastW)
-    if (Number.isNaN(slope)) slope = (read(KNOTS, i + 1) - read(KNOTS, i)) / KNOT_STEP
+    if (Number.isNaN(slope)) slope = ((KNOTS[i + 1] ?? NaN) - (KNOTS[i] ?? NaN)) / KNOT_STEP
     lastW = w
     lastError = error
     const step = error / slope
@@ -86,7 +85,7 @@ function knotBefore(target: number): number {
   let high = KNOTS.length - 2
   while (high - low > 1) {
     const middle = (low + high) >> 1
-    if (read(KNOTS, middle) <= target) low = middle
+    if ((KNOTS[middle] ?? NaN) <= target) low = middle
     else high = middle
   }
   return low
@@ -98,7 +97,7 @@ function inverseCubic(i: number, target: number): number {
   for (let j = -1; j <= 2; j++) {
     let term = j
     for (let k = -1; k <= 2; k++)
-      if (k !== j) term *= (target - read(KNOTS, i + k)) / (read(KNOTS, i + j) - read(KNOTS, i + k))
+      if (k !== j) term *= (target - (KNOTS[i + k] ?? NaN)) / ((KNOTS[i + j] ?? NaN) - (KNOTS[i + k] ?? NaN))
     sum += term
   }
   return sum

@@ -1,8 +1,8 @@
 /**
- * Element of a Float64Array inside its bounds, for inner loops.
+ * Element of a Float64Array inside its bounds.
  *
- * `at` of core/base serves every kind of list, which costs it the compiler's special code for one kind; this one sees one kind only and
- * becomes a plain load. Outside the bounds it gives NaN, which shows in every sum.
+ * Unlike `at` of core/base it sees one kind of list only. Outside the bounds it gives NaN, which shows in every sum. Innermost loops write
+ * `list[k] ?? NaN` out: a call into another module costs more there than the load.
  */
 export function read(list: Float64Array, index: number): number {
   return list[index] ?? Number.NaN

@@ -16,11 +16,15 @@ export function coreRatioAt(w: number): number {
 /** Above this core ratio a circle is no good start. */
 const CIRCLE_LIMIT = 0.3
 /** Longest step in w. */
-const LONGEST_STEP = 0.8
+const LONGEST_STEP = 0.5
+
+const HARMONICS_ON_THE_WAY = 48
+/** Residual at which a ring on the way is left. */
+const ENOUGH_ON_THE_WAY = 1e-6
 
 /** Harmonics for 1e-11 in the integrals (found by doubling). */
 export function harmonicsFor(coreRatio: number): number {
-  if (coreRatio < 0.3) return 28
+  if (coreRatio < 0.3) return 32
   if (coreRatio < 0.6) return 48
   if (coreRatio < 1) return 80
   return 112
@@ -35,7 +39,7 @@ export function harmonicsFor(coreRatio: number): number {
 export function solveSteadyFamily(coreRatios: readonly number[], visit: (ring: SolvedRing) => void): void {
   let ring: SolvedRing | null = null
   for (const coreRatio of coreRatios) {
-    if (ring === null) ring = circularCore(Math.min(coreRatio, CIRCLE_LIMIT), harmonicsFor(coreRatio))
+    if (ring === null) ring = circularCore(Math.min(coreRatio, CIRCLE_LIMIT), HARMONICS_ON_THE_WAY)
     const from = familyCoordinate(ring.coreRatio)
     const to = familyCoordinate(coreRatio)
     const count = Math.max(1, Math.ceil((to - from) / LONGEST_STEP))
@@ -48,14 +52,19 @@ export function solveSteadyFamily(coreRatios: readonly number[], visit: (ring: S
 }
 
 function solveOne(coreRatio: number, start: SolvedRing, fine: boolean): SolvedRing {
-  // The way is walked with few harmonics; the ring wanted is solved again with its own time as parameter.
-  const rough = solved(coreRatio, byParticleTime(start, Math.min(40, harmonicsFor(coreRatio))))
+  const harmonics = harmonicsFor(coreRatio)
+  const few = HARMONICS_ON_THE_WAY
+  const rough = solved(coreRatio, byParticleTime(start, few), ENOUGH_ON_THE_WAY)
   if (!fine) return rough
-  return solved(coreRatio, byParticleTime(byParticleTime(rough, 40), harmonicsFor(coreRatio)))
+  // The rough ring still has its predecessor's time as parameter, on which its series falls off slowly. Its own time makes it fall fast.
+  const nearly = solved(coreRatio, byParticleTime(rough, few), ENOUGH_ON_THE_WAY)
+  const resolved = solved(coreRatio, byParticleTime(nearly, harmonics))
+  return solved(coreRatio, byParticleTime(resolved, harmonics))
 }
 
-function solved(coreRatio: number, guess: SolvedRing): SolvedRing {
-  const ring = solveSteadyRing(coreRatio, guess)
-  if (ring === null || ring.residual > 1e-10) throw new Error(`no steady ring found at core ratio ${coreRatio}`)
+function solved(coreRatio: number, guess: SolvedRing, enough?: number): SolvedRing {
+  const ring = solveSteadyRing(coreRatio, guess, enough)
+  if (ring === null || ring.residual > (enough ?? 1e-10))
+    throw new Error(`no steady ring found at core ratio ${coreRatio}`)
   return ring
 }

@@ -4,11 +4,13 @@
  * Norbury 1973, J. Fluid Mech. 57:417. Measures: L mean of inner and outer radius, core area pi eps^2 L^2, 0 < eps <= sqrt 2.
  * Values come from series fitted to this project's own solution of the free-boundary problem (steadySolver.ts):
  *
- * - eps from 0.01 to sqrt 2 - 0.001: within 1e-9 relative of the solver;
- * - thinner: second-order law plus what it misses at 0.01, falling as eps^4; error below 1e-8 relative at 0.01 and falling;
- * - fatter: the sphere plus d^2 (b ln d + c), d = sqrt 2 - eps; error below 1e-8 relative; Hill's vortex itself at eps = sqrt 2.
+ * - eps from 0.01 to sqrt 2 - 0.001: within 1e-10 relative of the solver, which itself repeats to 1e-12 with more harmonics;
+ * - thinner: second-order law plus what it misses at 0.01, falling as eps^4; within 1e-9 (what is neglected is the change of
+ *   ln^2 eps in that term);
+ * - fatter: the sphere plus d^2 (b ln d + c), d = sqrt 2 - eps; within 1e-9; Hill's vortex itself at eps = sqrt 2. Next to it
+ *   the inner radius, itself going to 0, is within 1e-6 relative.
  *
- * The volume carried along is within 1e-6 relative everywhere.
+ * The volume carried along is within 1e-7 relative everywhere, also where the carried body opens into a torus (R/a = 86).
  */
 import { requireRange } from '../base'
 import { chebyshevSum } from './chebyshev'

@@ -46,8 +46,8 @@ export function steadyIntegrals(ring: SolvedRing): SteadyIntegrals {
 /** Energy by Green's theorem over the boundary, independent of U, c and the virial identity. */
 export function energyByBoundary(ring: SolvedRing, points: number): number {
   const { contour } = ring
-  // The velocity carries ln d, and the sum below cancels to the core's small area.
-  const panels = gradedPanels(contour.radial.length - 1, 1e-10)
+  // The velocity carries ln d, and the sum below cancels to the core's small area: go as near to the point as rounding of r = 1 allows.
+  const panels = gradedPanels(contour.radial.length - 1, 2e-13 / ring.coreRatio)
   const cosines = new Float64Array(contour.radial.length)
   const sines = new Float64Array(contour.radial.length)
   const point = emptyPoint()

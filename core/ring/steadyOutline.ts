@@ -3,7 +3,8 @@
  *
  * The core boundary is a trigonometric series whose coefficients are series along the family. The carried body is that of the
  * vortex line of equal impulse and speed, found when asked, times a smooth ratio that is 1 for thin rings (error eps^4).
- * Both within 1e-4 of the solver.
+ * Both within 1e-4 L of the solver; for sqrt 2 - eps below 1e-3 the corners of the core, which sharpen to right angles, are up to
+ * 6e-3 L off.
  */
 import { chebyshevSum } from './chebyshev'
 import { bodyRadius, bodyShape, carriedBody, type CarriedBody } from './dividingStreamline'
@@ -47,7 +48,7 @@ const shapeSeries = BODY_SHAPE.map((series) => Float64Array.from(series))
 export function steadyRingOutline(coreRatio: number): SteadyRingOutline {
   const place = placeOf(coreRatio)
   if (place.delta === 0) return hillOutline()
-  // Beyond its ends the table's first and last shapes are kept; they differ by less than a line's width from the limits.
+  // Beyond its ends the table's first and last shapes are kept.
   const s = Math.max(-1, Math.min(1, seriesArgument(place)))
   const { curve, kind } = carriedOutline(place, s)
   return { core: coreOutline(place, s), carried: curve, carriedKind: kind }

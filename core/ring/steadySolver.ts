@@ -64,9 +64,10 @@ export function circularCore(coreRatio: number, harmonicCount: number): SolvedRi
 /**
  * Solve for one core ratio from a near-by ring.
  *
- * @returns the ring, or null where Newton does not converge
+ * @param enough residual to stop at
+ * @returns the best ring found, or null where Newton breaks down at once: look at its residual
  */
-export function solveSteadyRing(coreRatio: number, guess: SolvedRing): SolvedRing | null {
+export function solveSteadyRing(coreRatio: number, guess: SolvedRing, enough = FINISHED): SolvedRing | null {
   const M = guess.contour.radial.length - 1
   const size = M + 3
   const panels = gradedPanels(M)
@@ -125,7 +126,7 @@ export function solveSteadyRing(coreRatio: number, guess: SolvedRing): SolvedRin
     if (best === null || residual < best.residual)
       best = { coreRatio, speed, level, contour, weight, residual, iterations: iteration }
     else if (residual < 1e-10) return best
-    if (residual < FINISHED) return best
+    if (residual < enough) return best
     const step = solveLinear(matrix, rightSide)
     if (step === null) return best
     const eta = new Float64Array(M + 1)
@@ -146,41 +147,50 @@ export function solveSteadyRing(coreRatio: number, guess: SolvedRing): SolvedRin
   return best
 }
 
-/** The same ring with the particle time as parameter, on `harmonicCount` harmonics. */
+/**
+ * The same ring with the particle time as parameter, on `harmonicCount` harmonics.
+ *
+ * The new series are projections from twice as many points: what a coarse step has left in the highest harmonics, a jagged parameter
+ * along an accurate curve, is taken off and not folded back.
+ */
 export function byParticleTime(ring: SolvedRing, harmonicCount: number): SolvedRing {
   const { contour, weight } = ring
   const size = contour.radial.length
   const cosines = new Float64Array(size)
   const sines = new Float64Array(size)
   const mean = read(weight, 0)
-  const x = new Float64Array(harmonicCount + 1)
-  const r = new Float64Array(harmonicCount + 1)
+  const points = 2 * Math.max(harmonicCount, size - 1)
+  const x = new Float64Array(points + 1)
+  const r = new Float64Array(points + 1)
   const point = emptyPoint()
-  for (let i = 0; i <= harmonicCount; i++) {
-    const time = (Math.PI * i) / harmonicCount
+  for (let i = 0; i <= points; i++) {
+    const time = (Math.PI * i) / points
     let t = time
-    for (let iteration = 0; iteration < 50; iteration++) {
+    for (let iteration = 0; iteration < 50 && i > 0 && i < points; iteration++) {
       harmonics(t, cosines, sines)
       let elapsed = t
       let rate = 1
       for (let k = 1; k < size; k++) {
-        elapsed += (read(weight, k) * read(sines, k)) / (k * mean)
-        rate += (read(weight, k) * read(cosines, k)) / mean
+        const share = (weight[k] ?? NaN) / mean
+        elapsed += (share * (sines[k] ?? NaN)) / k
+        rate += share * (cosines[k] ?? NaN)
       }
       const step = (elapsed - time) / Math.max(rate, 0.2)
       t -= step
       if (Math.abs(step) < 1e-15) break
     }
-    if (i === 0) t = 0
-    if (i === harmonicCount) t = Math.PI
     harmonics(t, cosines, sines)
     pointOnContour(point, contour, cosines, sines)
-    x[i] = i === 0 || i === harmonicCount ? 0 : point.x
+    x[i] = i === 0 || i === points ? 0 : point.x
     r[i] = point.r
   }
+  const full = contourThrough(x, r)
   return {
     ...ring,
-    contour: contourThrough(x, r),
+    contour: {
+      axial: full.axial.slice(0, harmonicCount + 1),
+      radial: full.radial.slice(0, harmonicCount + 1),
+    },
     weight: Float64Array.from({ length: harmonicCount + 1 }, (_, k) => (k === 0 ? mean : 0)),
   }
 }

@@ -34,7 +34,7 @@ function requireThinRing(circulation: number, radius: number, coreRadius: number
  *
  * @param circulation Gamma [m2/s], finite; its sign gives the direction
  * @param radius R [m] of the core centre, > 0
- * @param coreRadius a [m], 0 < a <= R. The law is meant for a <= 0.3 R: at 0.3 it is 1.6 % above the steady ring of uniform core
+ * @param coreRadius a [m], 0 < a <= R. The law is meant for a <= 0.3 R: at 0.3 it is 2.2 % above the steady ring of the same core area
  * @param model spread of vorticity, default uniform
  * @returns U [m/s]; relative error O((a/R)^2 ln(R/a))
  * @throws {DomainError} for an argument outside its range
