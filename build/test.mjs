@@ -58,7 +58,8 @@ async function runTests(chromium) {
         '--reporter=json',
         `--outputFile.json=${report}`,
       ],
-      { show: true, env: { ...process.env, CHROMIUM_PATH: chromium ?? '' } },
+      // A build in this process leaves NODE_ENV at production, under which components are tested without what tests read.
+      { show: true, env: { ...process.env, NODE_ENV: 'test', CHROMIUM_PATH: chromium ?? '' } },
     )
     const tally = tallyOf(readText(report)) ?? { passed: 0, failed: 1, skipped: 0 }
     // The runner may fail for a reason that is no test's: an error outside any of them, or nothing to run.

@@ -33,9 +33,9 @@ const density: ExplanationMaker = (context) => ({
 const jetReynolds: ExplanationMaker = (context) => ({
   title: 'Jet Reynolds number',
   mathml: formula('Re =', over(row('U D'), 'ν')),
-  formula: 'Mean exit speed x exit diameter / kinematic viscosity.',
+  formula: 'Peak exit speed x exit diameter / kinematic viscosity.',
   values: [
-    { name: 'mean exit speed', value: context.pulse.meanSpeed, unit: 'm/s' },
+    { name: 'peak exit speed', value: context.pulse.peakSpeed, unit: 'm/s' },
     { name: 'exit diameter', value: context.plan.nozzle.diameter, unit: 'm' },
     { name: 'kinematic viscosity', value: context.water.kinematicViscosity, unit: 'm²/s' },
   ],

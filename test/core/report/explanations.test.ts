@@ -11,18 +11,21 @@ async function contextOf(id: string) {
 }
 
 describe('explain', () => {
-  it.each(EXAMPLES.map((example) => example.id))('answers every found value of %s with formula, source, range and verdict', async (example) => {
-    const context = await contextOf(example)
-    for (const id of EXPLANATION_IDS) {
-      const answer = explain(id, context)
-      expect(answer.formula.length, id).toBeGreaterThan(10)
-      expect(answer.source.length, id).toBeGreaterThan(5)
-      expect(answer.range.length, id).toBeGreaterThan(5)
-      expect(answer.verdict, id).toMatch(/\.$/)
-      expect(answer.verdict, id).not.toMatch(/NaN|undefined|null/)
-      for (const { name, value } of answer.values) expect(Number.isFinite(value), `${id}: ${name}`).toBe(true)
-    }
-  })
+  it.each(EXAMPLES.map((example) => example.id))(
+    'answers every found value of %s with formula, source, range and verdict',
+    async (example) => {
+      const context = await contextOf(example)
+      for (const id of EXPLANATION_IDS) {
+        const answer = explain(id, context)
+        expect(answer.formula.length, id).toBeGreaterThan(10)
+        expect(answer.source.length, id).toBeGreaterThan(5)
+        expect(answer.range.length, id).toBeGreaterThan(5)
+        expect(answer.verdict, id).toMatch(/\.$/)
+        expect(answer.verdict, id).not.toMatch(/NaN|undefined|null/)
+        for (const { name, value } of answer.values) expect(Number.isFinite(value), `${id}: ${name}`).toBe(true)
+      }
+    },
+  )
 
   it('writes formulas as balanced MathML', async () => {
     const context = await contextOf('bench-generator')

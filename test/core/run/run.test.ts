@@ -50,8 +50,15 @@ describe('run', () => {
   })
 
   it('asks no pulse of a plan that has only rings', async () => {
-    const plan = planOf({ nozzle: undefined, programme: undefined, wake: { rings: [{}] } })
-    expect(availableSections(plan)).toEqual(['water'])
+    const plan = planOf({
+      nozzle: undefined,
+      programme: undefined,
+      wake: { rings: [{ circulation: 0.01, radius: 0.02, coreRadius: 0.004 }], duration: 0.1 },
+    })
+    expect(availableSections(plan)).toEqual(['water', 'wake'])
+    const wake = await run(plan, { sections: ['wake'] })
+    expect(wake.status).toBe('done')
+    expect(wake.data?.wake?.wake.trajectories.length).toBe(1)
     const result = await run(plan, { sections: ['pulse'] })
     expect(result.status).toBe('failed')
     expect(result.message).toMatch(/no nozzle and no programme/)
@@ -59,18 +66,21 @@ describe('run', () => {
 })
 
 describe('examples', () => {
-  it.each(EXAMPLES.map((example) => [example.id, example.purpose] as const))('%s computes and has a purpose in one line', async (id, purpose) => {
-    const { data, status } = await run(examplePlan(id), { sections: ['pulse'] })
-    expect(status).toBe('done')
-    expect(data?.pulse?.slug.circulation).toBeGreaterThan(0)
-    expect(purpose.length).toBeLessThan(100)
-  })
+  it.each(EXAMPLES.map((example) => [example.id, example.purpose] as const))(
+    '%s computes and has a purpose in one line',
+    async (id, purpose) => {
+      const { data, status } = await run(examplePlan(id), { sections: ['pulse'] })
+      expect(status).toBe('done')
+      expect(data?.pulse?.slug.circulation).toBeGreaterThan(0)
+      expect(purpose.length).toBeLessThan(100)
+    },
+  )
 
   it('show a laboratory ring, a thruster, low Reynolds number, pinch-off and an orifice', async () => {
     const pulse = async (id: string) => (await run(examplePlan(id), { sections: ['pulse'] })).data?.pulse
     expect((await pulse('bench-generator'))?.pinchedOff).toBe(false)
     expect((await pulse('inspection-thruster'))?.jetReynolds).toBeGreaterThan(4000)
-    expect((await pulse('millimetre-nozzle'))?.jetReynolds).toBeLessThan(150)
+    expect((await pulse('millimetre-nozzle'))?.jetReynolds).toBeLessThan(200)
     expect((await pulse('past-pinch-off'))?.pinchedOff).toBe(true)
     const adopted = (await pulse('sharp-orifice'))?.formationNumber.adopted
     expect(adopted).toBeLessThan(2.5)
@@ -97,11 +107,33 @@ describe('tables written out', () => {
     const { data } = await run(planOf(), { sections: ['pulse'] })
     if (data === null) throw new Error('no data')
     const summary: unknown = JSON.parse(
-      summaryText({ ...data, title: 'x', files: ['pulse.csv'], program: { name: 'ringwright', version: '0' }, inputHash: 'h' }),
+      summaryText({
+        ...data,
+        title: 'x',
+        files: ['pulse.csv'],
+        program: { name: 'ringwright', version: '0' },
+        inputHash: 'h',
+      }),
     )
     expect(summary).toMatchObject({ format: 'ringwright-summary', version: 1, files: ['pulse.csv'], inputHash: 'h' })
     expect(Object.keys((summary as { pulse: object }).pulse)).toEqual(
-      expect.arrayContaining(['stroke', 'strokeRatio', 'duration', 'peakSpeed', 'meanSpeed', 'quickStart', 'slug', 'overPressure', 'total', 'dimensionlessEnergy', 'formationNumber', 'pinchedOff', 'ring', 'ringWithOverPressure', 'trailingJet']),
+      expect.arrayContaining([
+        'stroke',
+        'strokeRatio',
+        'duration',
+        'peakSpeed',
+        'meanSpeed',
+        'quickStart',
+        'slug',
+        'overPressure',
+        'total',
+        'dimensionlessEnergy',
+        'formationNumber',
+        'pinchedOff',
+        'ring',
+        'ringWithOverPressure',
+        'trailingJet',
+      ]),
     )
     expect((summary as { pulse: object }).pulse).not.toHaveProperty('history')
   })
