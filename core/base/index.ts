@@ -14,5 +14,13 @@ export {
   type RunStatus,
 } from './errors'
 export { evaluateCubic, monotoneCubic, type CubicCurve } from './interpolation'
+export { march, type Crossing, type EventFunctions, type MarchOptions, type MarchResult } from './march'
 export { gaussLegendre, integrate, type GaussRule } from './quadrature'
 export { bracketedRoot } from './root'
+export {
+  RungeKuttaStepper,
+  type Derivative,
+  type StepCounters,
+  type StepOutcome,
+  type StepperOptions,
+} from './rungeKutta'

@@ -1,0 +1,21 @@
+/**
+ * Rings on one axis: induction, walls, tubes, march in time, events; trains of pulses.
+ */
+export { checkMarch, MOST_OUTPUTS, MOST_RINGS } from './checkInput'
+export { marchCoaxialRings } from './marchCoaxial'
+export { THIN_CORE_LIMIT } from './ringEvents'
+export { deltaOverCore } from './ringFlow'
+export { LARGEST_TUBE_SHARE, RoundTube, tubeSlowing } from './roundTube'
+export { tankSlowing, type TankSection } from './tankImages'
+export { fallsOnOutput, outputTimesInside } from './trajectoryWriter'
+export { trainRings, type TrainInput, type TrainRings } from './train'
+export type {
+  CoaxialLaw,
+  CoaxialOptions,
+  CoaxialRing,
+  CoaxialTrajectory,
+  CoaxialWake,
+  CoaxialWakeInput,
+  WakeAgeing,
+} from './types'
+export type { WakeCounters, WakeDrift, WakeEvent, WakeEventKind, WakeOutcome } from './wakeTypes'
