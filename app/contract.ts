@@ -19,7 +19,7 @@ export interface SavedFile {
   readonly name: string
 }
 
-export type ExportKind = 'csv' | 'svg' | 'png'
+export type ExportKind = 'csv' | 'svg' | 'png' | 'vtp' | 'gltf'
 
 /** Appearance the window follows. */
 export type Theme = 'system' | 'light' | 'dark'

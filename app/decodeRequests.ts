@@ -22,7 +22,7 @@ export const DECODERS: Decoders = {
     }),
   'export:save': (input) => {
     const decoded = fields<Requests['export:save']['in']>(input, {
-      kind: oneOf('kind', ['csv', 'svg', 'png']),
+      kind: oneOf('kind', ['csv', 'svg', 'png', 'vtp', 'gltf']),
       name: text('name', MAXIMUM_NAME),
       text: nullable(content('text', MAXIMUM_FILE_BYTES)),
       base64: nullable(base64('base64')),

@@ -20,6 +20,8 @@ const KINDS: Readonly<Record<FileKind, { readonly filter: FileFilter; readonly e
   csv: { filter: { name: 'Comma-separated values', extensions: ['csv'] }, ending: '.csv' },
   svg: { filter: { name: 'Vector drawing', extensions: ['svg'] }, ending: '.svg' },
   png: { filter: { name: 'Picture', extensions: ['png'] }, ending: '.png' },
+  vtp: { filter: { name: 'Polygonal data (XML)', extensions: ['vtp'] }, ending: '.vtp' },
+  gltf: { filter: { name: 'Three-dimensional scene', extensions: ['gltf'] }, ending: '.gltf' },
 }
 
 export function filtersOf(kind: FileKind): FileFilter[] {

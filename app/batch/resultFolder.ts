@@ -21,6 +21,8 @@ export interface ResultFolder {
   prepare(names: readonly string[]): Promise<void>
   /** Write one file under a temporary name and rename it. */
   write(name: string, content: string): Promise<void>
+  /** Take away files that an earlier run's summary lists and this run does not write. */
+  dropEarlier(keep: readonly string[]): Promise<void>
   /** Take away a summary that no longer describes what lies beside it. */
   dropSummary(): Promise<void>
 }
@@ -46,7 +48,16 @@ export function resultFolder(folder: string, shown: string, summaryFormat: strin
         `${path.join(shown, first)} exists already and ${shown} holds no summary of an earlier run: name another folder or move the file away.`,
       )
     },
-    write: (name, content) => save(path.join(folder, name), content),
+    async write(name, content) {
+      const target = path.join(folder, name)
+      if (path.dirname(name) !== '.') await mkdir(path.dirname(target), { recursive: true })
+      await save(target, content)
+    },
+    async dropEarlier(keep) {
+      const kept = new Set(keep)
+      for (const name of await earlierFiles(folder, summaryFormat))
+        if (!kept.has(name) && isInside(name)) await rm(path.join(folder, name), { force: true })
+    },
     dropSummary: () => rm(path.join(folder, SUMMARY_NAME), { force: true }),
   }
 }
@@ -68,10 +79,27 @@ async function makeOrList(folder: string, shown: string): Promise<readonly strin
 }
 
 async function holdsOurSummary(folder: string, summaryFormat: string): Promise<boolean> {
+  return (await earlierSummary(folder, summaryFormat)) !== null
+}
+
+/** The summary of an earlier run; null where there is none of ours. */
+async function earlierSummary(folder: string, summaryFormat: string): Promise<object | null> {
   try {
     const summary: unknown = JSON.parse(await readFile(path.join(folder, SUMMARY_NAME), 'utf8'))
-    return typeof summary === 'object' && summary !== null && 'format' in summary && summary.format === summaryFormat
+    if (typeof summary !== 'object' || summary === null) return null
+    return 'format' in summary && summary.format === summaryFormat ? summary : null
   } catch {
-    return false
+    return null
   }
+}
+
+async function earlierFiles(folder: string, summaryFormat: string): Promise<readonly string[]> {
+  const summary = await earlierSummary(folder, summaryFormat)
+  if (summary === null || !('files' in summary) || !Array.isArray(summary.files)) return []
+  return summary.files.filter((name: unknown): name is string => typeof name === 'string')
+}
+
+/** Names as this program writes them: in the folder or in its folder `wake`, nowhere else. */
+function isInside(name: string): boolean {
+  return /^(wake\/)?[a-z0-9][a-z0-9.-]*$/.test(name) && !name.includes('..')
 }

@@ -4,7 +4,19 @@
 import { createHash } from 'node:crypto'
 import path from 'node:path'
 import type { Problem } from '../../core/base'
-import { canonicalInput, pulseTable, readPlan, SUMMARY_FORMAT, summaryText, type Plan } from '../../core/plan'
+import {
+  canonicalInput,
+  eventTable,
+  pulseTable,
+  readPlan,
+  SUMMARY_FORMAT,
+  summaryText,
+  trajectoryTable,
+  wakeFile,
+  wakeFileName,
+  wakeTimesTable,
+  type Plan,
+} from '../../core/plan'
 import { availableSections, run, SECTIONS, type RunData, type Section } from '../../core/run'
 import { fileSentence } from '../files/fileSentence'
 import { decodeText, readText } from '../files/readText'
@@ -19,6 +31,8 @@ export interface BatchEnvironment {
   /** Folder that paths on the command line are relative to. */
   readonly folder: string
   readonly signal: AbortSignal
+  /** Lets an interrupt in between the steps of a long computation. */
+  readonly pause: () => Promise<void>
   readStandardInput(): Promise<Uint8Array>
   /** One line per file written. */
   writtenLine(text: string): void
@@ -68,13 +82,17 @@ async function runOnce(list: readonly string[], environment: BatchEnvironment): 
   await folder.prepare([...fileNames(sections), SUMMARY_NAME])
   stopWhenInterrupted(environment)
 
-  const result = await run(plan, { sections }, { signal: environment.signal })
+  const result = await run(plan, { sections }, { signal: environment.signal, pause: environment.pause })
   if (result.status === 'cancelled') throw new Stop(EXIT.interrupted, 'The run was interrupted.')
-  if (result.status === 'failed' || result.data === null) {
-    const code = result.field === undefined ? EXIT.failed : EXIT.refused
-    throw new Stop(code, `${request.plan}: ${result.message}`)
+  if (result.status === 'done' && result.data !== null) {
+    await writeResults(folder, request.out, plan, wanted(result.data, sections), environment)
+    return
   }
-  await writeResults(folder, request.out, plan, result.data, environment)
+  const refused = result.field !== undefined
+  // What was finished before a failure is kept, without a summary: that comes last and tells of a whole run.
+  if (!refused && result.data !== null)
+    await writeTables(folder, request.out, wanted(result.data, sections), environment)
+  throw new Stop(refused ? EXIT.refused : EXIT.failed, `${request.plan}: ${result.message}`)
 }
 
 async function readInput(given: string, environment: BatchEnvironment): Promise<string> {
@@ -106,23 +124,80 @@ function sectionsOf(plan: Plan, only: readonly string[] | null): readonly Sectio
     const section = SECTIONS.find((known) => known === name)
     if (section === undefined) throw new Stop(EXIT.refused, `Section ${name} is not computed by this version.`)
     if (!available.includes(section))
-      throw new Stop(
-        EXIT.refused,
-        `Section ${name} cannot be computed: the plan has no ${plan.absent.join(' and no ')}.`,
-      )
+      throw new Stop(EXIT.refused, `Section ${name} cannot be computed: the plan has no ${missing(plan, section)}.`)
     return section
   })
 }
 
+function missing(plan: Plan, section: Section): string {
+  return section === 'pulse' ? plan.absent.join(' and no ') : section
+}
+
+/** What was asked for: a section computed only because another needs it is not written. */
+function wanted(data: RunData, sections: readonly Section[]): RunData {
+  return sections.includes('pulse') ? data : { ...data, pulse: null }
+}
+
 /** Sections a plan may hold that later versions compute: said, so that their absence is no surprise. */
 function noteUncomputed(plan: Plan, environment: BatchEnvironment): void {
-  const later = ['wake', 'thruster', 'tankRun', 'readings', 'sweep', 'spread']
+  const later = ['thruster', 'tankRun', 'readings', 'sweep', 'spread']
   const held = later.filter((name) => typeof plan.source[name] === 'object' && plan.source[name] !== null)
   if (held.length > 0) environment.note(`Not computed by this version, and left out: ${held.join(', ')}.`)
 }
 
 function fileNames(sections: readonly Section[]): readonly string[] {
-  return sections.includes('pulse') ? ['pulse.csv'] : []
+  return [
+    ...(sections.includes('pulse') ? ['pulse.csv'] : []),
+    ...(sections.includes('wake') ? ['trajectory.csv', 'events.csv', 'wake', 'wake-times.csv'] : []),
+  ]
+}
+
+/** Tables of the finished sections in the order they are written, each made when its turn comes. */
+function* tablesOf({ pulse, wake }: RunData): Generator<readonly [name: string, content: string]> {
+  if (pulse !== null) yield ['pulse.csv', pulseTable(pulse)]
+  if (wake === null) return
+  yield ['trajectory.csv', trajectoryTable(wake.wake)]
+  yield ['events.csv', eventTable(wake.wake)]
+  for (let index = 0; index < wake.wake.outputTimes.length; index++)
+    yield [`wake/${wakeFileName(index)}`, wakeFile(wake.wake, index)]
+  yield ['wake-times.csv', wakeTimesTable(wake.wake)]
+}
+
+/** Write the tables of what was finished. @returns their names */
+async function writeTables(
+  folder: ResultFolder,
+  shown: string,
+  data: RunData,
+  environment: BatchEnvironment,
+): Promise<readonly string[]> {
+  const files: string[] = []
+  try {
+    for (const [name, content] of tablesOf(data)) {
+      await writeFile(folder, shown, name, content, environment)
+      files.push(name)
+    }
+    return files
+  } catch (error) {
+    // What was finished stays, but an earlier run's summary does not describe it.
+    if (files.length > 0) await folder.dropSummary().catch(() => undefined)
+    throw error
+  }
+}
+
+async function writeFile(
+  folder: ResultFolder,
+  shown: string,
+  name: string,
+  content: string,
+  environment: BatchEnvironment,
+): Promise<void> {
+  stopWhenInterrupted(environment)
+  try {
+    await folder.write(name, content)
+  } catch (error) {
+    throw new Stop(EXIT.failed, fileSentence('save', path.join(shown, name), error))
+  }
+  environment.writtenLine(path.join(shown, name))
 }
 
 async function writeResults(
@@ -132,33 +207,20 @@ async function writeResults(
   data: RunData,
   environment: BatchEnvironment,
 ): Promise<void> {
-  const files: string[] = []
-  const write = async (name: string, content: string): Promise<void> => {
-    stopWhenInterrupted(environment)
-    try {
-      await folder.write(name, content)
-    } catch (error) {
-      throw new Stop(EXIT.failed, fileSentence('save', path.join(shown, name), error))
-    }
-    files.push(name)
-    environment.writtenLine(path.join(shown, name))
-  }
-  const { water, pulse, cautions } = data
+  const tables = await writeTables(folder, shown, data, environment)
+  const files = [...tables, SUMMARY_NAME]
+  await folder.dropEarlier(files)
+  const summary = summaryText({
+    ...data,
+    title: plan.title,
+    files,
+    program: PROGRAM,
+    inputHash: createHash('sha256').update(canonicalInput(plan)).digest('hex'),
+  })
   try {
-    if (pulse !== null) await write('pulse.csv', pulseTable(pulse))
-    const summary = summaryText({
-      water,
-      pulse,
-      cautions,
-      title: plan.title,
-      files: [...files, SUMMARY_NAME],
-      program: PROGRAM,
-      inputHash: createHash('sha256').update(canonicalInput(plan)).digest('hex'),
-    })
-    await write(SUMMARY_NAME, summary)
+    await writeFile(folder, shown, SUMMARY_NAME, summary, environment)
   } catch (error) {
-    // What was finished stays, but an earlier run's summary does not describe it.
-    if (files.length > 0) await folder.dropSummary().catch(() => undefined)
+    if (tables.length > 0) await folder.dropSummary().catch(() => undefined)
     throw error
   }
 }

@@ -1,3 +1,4 @@
+import type { Wake } from '../filament'
 import type { PulseResult } from '../pulse'
 import type { WaterProperties } from '../water'
 import type { Plan } from './types'
@@ -7,6 +8,9 @@ export interface CautionContext {
   readonly plan: Plan
   readonly water: WaterProperties | null
   readonly pulse: PulseResult | null
+  readonly wake: Wake | null
+  /** What had to be said about where the rings of the wake come from. */
+  readonly wakeNotes: readonly string[]
 }
 
 /** Where a caution belongs: beside a result, a moving machine, a laboratory run, or a vehicle and its bench. */

@@ -3,7 +3,7 @@
  * user sees all of them at once.
  */
 import type { Problem } from '../base'
-import { formatFull, parseQuantity, siUnit } from '../quantity'
+import { describeDimension, formatFull, parseQuantity, siUnit, type Dimension } from '../quantity'
 import { CHOICES, fieldDefinition, type ChoicePath, type FieldDefinition, type FieldPath } from './fields'
 import type { JsonObject } from './types'
 
@@ -117,6 +117,29 @@ function readQuantity(raw: unknown, definition: FieldDefinition, path: string, p
   if (parsed.ok) return parsed.value
   refuse(problems, path, raw, limitInWords(definition), `${path}: ${parsed.message}`)
   return null
+}
+
+/** One quantity outside the table of fields, as a number in SI or a text with its unit; null where it is refused. */
+export function decodeQuantity(raw: unknown, field: string, dimension: Dimension, problems: Problems): number | null {
+  if (typeof raw === 'number' && Number.isFinite(raw)) return raw
+  if (typeof raw === 'string') {
+    const parsed = parseQuantity(raw, dimension, siUnit(dimension), { name: field })
+    if (parsed.ok) return parsed.value
+    refuse(problems, field, raw, 'a number in SI units or a text with its unit', `${field}: ${parsed.message}`)
+    return null
+  }
+  const limit = `${describeDimension(dimension)}, as a number in SI units or a text with its unit`
+  const missing = raw === undefined || raw === null
+  refuse(problems, field, raw, limit, missing ? `${field} must be given: ${limit}.` : undefined)
+  return null
+}
+
+/** True or false. */
+export function decodeFlag(section: JsonObject, path: string, fallback: boolean, problems: Problems): boolean {
+  const raw = section[path.slice(path.indexOf('.') + 1)]
+  if (typeof raw === 'boolean') return raw
+  if (raw !== undefined) refuse(problems, path, raw, 'true or false')
+  return fallback
 }
 
 /** One of the words a choice allows. */

@@ -8,12 +8,14 @@ import {
   decodeChoice,
   decodeNumber,
   decodeOptionalNumber,
+  decodeQuantity,
   decodeText,
   describeValue,
   isObject,
   refuse,
   type Problems,
 } from './decodeFields'
+import { decodeTrain, decodeWake } from './decodeWake'
 import { migrate } from './migrations'
 import { PLAN_FORMAT, PLAN_VERSION, type JsonObject, type Plan, type PlanReading } from './types'
 
@@ -114,6 +116,8 @@ function decodeSections(document: JsonObject, problems: Problems): Plan {
   const programme = section(document, 'programme', problems, !wakeOfRings)
   const ambient = section(document, 'ambient', problems, false) ?? {}
   const models = section(document, 'models', problems, false) ?? {}
+  const train = section(document, 'train', problems, false)
+  const wake = section(document, 'wake', problems, false)
   return {
     title: decodeText(document, 'title', problems),
     notes: decodeText(document, 'notes', problems),
@@ -125,6 +129,8 @@ function decodeSections(document: JsonObject, problems: Problems): Plan {
       overPressure: decodeChoice(models, 'models.overPressure', 'off', problems),
       formationNumber: decodeChoice(models, 'models.formationNumber', 'energyLimit', problems),
     },
+    train: train === null ? null : decodeTrain(train, problems),
+    wake: wake === null ? null : decodeWake(wake, problems),
     view: { units: decodeUnits(document['view']) },
     absent: [
       ...(nozzle === null ? (['nozzle'] as const) : []),
@@ -256,23 +262,25 @@ function decodeRows(raw: unknown, problems: Problems): ProgrammeRow[] {
   }
   const rows: ProgrammeRow[] = []
   for (const [index, row] of raw.entries()) {
-    const decoded = decodeRow(row)
-    if (decoded === null) {
-      refuse(problems, `programme.rows.${index}`, row, 'a row { time, speed } or { time, position } of finite numbers')
-      break
-    }
+    const decoded = decodeRow(row, `programme.rows.${index}`, problems)
+    if (decoded === null) break
     rows.push(decoded)
   }
   return rows
 }
 
-function decodeRow(row: unknown): ProgrammeRow | null {
-  if (!isObject(row)) return null
-  const { time, speed, position } = row
-  if (typeof time !== 'number' || !Number.isFinite(time)) return null
-  if (typeof speed === 'number' && Number.isFinite(speed)) return { time, speed }
-  if (typeof position === 'number' && Number.isFinite(position)) return { time, position }
-  return null
+function decodeRow(row: unknown, field: string, problems: Problems): ProgrammeRow | null {
+  if (!isObject(row)) {
+    refuse(problems, field, row, 'a row { time, speed } or { time, position }')
+    return null
+  }
+  const time = decodeQuantity(row['time'], `${field}.time`, 'time', problems)
+  const bySpeed = row['speed'] !== undefined || row['position'] === undefined
+  const value = bySpeed
+    ? decodeQuantity(row['speed'], `${field}.speed`, 'speed', problems)
+    : decodeQuantity(row['position'], `${field}.position`, 'length', problems)
+  if (time === null || value === null) return null
+  return bySpeed ? { time, speed: value } : { time, position: value }
 }
 
 /** Shown units: texts only; anything else is not a unit and falls back to the default. */

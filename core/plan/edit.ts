@@ -4,7 +4,8 @@
 import { DomainError } from '../base'
 import { compileProgramme, withStroke, type ProgrammeInput, type ProgrammeRow } from '../pulse'
 import type { ChoicePath, FieldPath } from './fields'
-import type { Plan } from './types'
+import { WAKE_DEFAULTS } from './decodeWake'
+import type { Plan, TrainSection, WakeSection } from './types'
 
 /** A plan with one section present again after a change in it. */
 function present(plan: Plan, section: string): Plan {
@@ -18,14 +19,22 @@ function split(path: string): readonly [string, string] {
   return [path.slice(0, dot), path.slice(dot + 1)]
 }
 
-function replace(plan: Plan, section: keyof Plan, key: string, value: number | string | null): Plan {
-  const old = plan[section]
+/** What an absent section starts from when one of its values is set. */
+const EMPTY: Partial<Record<EditedSection, TrainSection | WakeSection>> = {
+  train: { pulses: 1, period: 1 },
+  wake: WAKE_DEFAULTS,
+}
+
+function replace(plan: Plan, section: EditedSection, key: string, value: number | string | null): Plan {
+  const old = plan[section] ?? EMPTY[section]
   if (typeof old !== 'object') return plan
   return { ...present(plan, section), [section]: { ...old, [key]: value } }
 }
 
-function isSection(name: string): name is 'water' | 'nozzle' | 'programme' | 'ambient' | 'models' {
-  return ['water', 'nozzle', 'programme', 'ambient', 'models'].includes(name)
+type EditedSection = 'water' | 'nozzle' | 'programme' | 'ambient' | 'models' | 'train' | 'wake'
+
+function isSection(name: string): name is EditedSection {
+  return ['water', 'nozzle', 'programme', 'ambient', 'models', 'train', 'wake'].includes(name)
 }
 
 /**
@@ -86,4 +95,14 @@ export function setTitle(plan: Plan, title: string): Plan {
 /** Set the unit a dimension is shown in. */
 export function setUnit(plan: Plan, dimension: string, unit: string): Plan {
   return { ...plan, view: { ...plan.view, units: { ...plan.view.units, [dimension]: unit } } }
+}
+
+/** Set parts of the wake section, which is added where it was absent: rings, nozzles, wall, stations, viscous. */
+export function setWake(plan: Plan, change: Partial<WakeSection>): Plan {
+  return { ...plan, wake: { ...(plan.wake ?? WAKE_DEFAULTS), ...change } }
+}
+
+/** Set the train, or take it out with null: one pulse. */
+export function setTrain(plan: Plan, train: TrainSection | null): Plan {
+  return { ...plan, train }
 }

@@ -151,6 +151,49 @@ export const FIELDS = {
     max: 100,
     help: 'Flow past the nozzle along the jet: positive with the jet, negative against it.',
   },
+  'train.pulses': {
+    label: 'Pulses',
+    dimension: 'number',
+    min: 1,
+    max: 1000,
+    help: 'How many pulses follow one another.',
+  },
+  'train.period': {
+    label: 'Period',
+    dimension: 'time',
+    above: 0,
+    max: 100000,
+    help: 'From the start of one pulse to the start of the next.',
+  },
+  'wake.duration': {
+    label: 'Duration',
+    dimension: 'time',
+    above: 0,
+    max: 100000,
+    help: 'How long the rings are followed.',
+  },
+  'wake.outputStep': {
+    label: 'Output step',
+    dimension: 'time',
+    above: 0,
+    max: 10000,
+    help: 'Time between the rows of the trajectories and the pictures.',
+  },
+  'wake.tolerance': {
+    label: 'Tolerance',
+    dimension: 'number',
+    min: 1e-13,
+    max: 1e-2,
+    help: 'Error allowed in one step of the march, relative to the size of a ring.',
+  },
+  'wake.tube': {
+    label: 'Tube radius',
+    dimension: 'length',
+    above: 0,
+    max: 1000,
+    optional: true,
+    help: 'Radius of a round tube about the axis; empty: none.',
+  },
 } as const satisfies Readonly<Record<string, FieldDefinition>>
 
 export type FieldPath = keyof typeof FIELDS
@@ -181,5 +224,8 @@ export const CHOICES = {
     published: 'published band',
     computed: 'computed jet',
   },
+  'wake.model': { auto: 'by the rings', coaxial: 'rings on one axis', filament: 'rings in space' },
+  'wake.law': { thin: 'thin core', regularised: 'regularised' },
+  'wake.ageing': { auto: 'by Reynolds number', laminar: 'laminar', turbulent: 'turbulent' },
 } as const
 export type ChoicePath = keyof typeof CHOICES

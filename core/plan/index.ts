@@ -3,15 +3,40 @@
  */
 export { CAUTIONS, cautionsFor } from './cautions'
 export type { CautionContext, CautionDefinition, CautionGroup } from './cautionTypes'
-export { readProgrammeCsv, type ProgrammeReading } from './csvReader'
 export { writeCsv, type Cell } from './csvWriter'
 export { checkField } from './decodeFields'
 export { decodePlan, LARGEST_PLAN, readPlan } from './decodePlan'
-export { setChoice, setField, setRows, setStrokeRatio, setTitle, setUnit } from './edit'
-export { defaultPlan, examplePlan, EXAMPLES, type Example } from './examples'
+export { WAKE_DEFAULTS } from './decodeWake'
+export { setChoice, setField, setRows, setStrokeRatio, setTitle, setTrain, setUnit, setWake } from './edit'
+export { defaultPlan, examplePlan, EXAMPLES } from './examples'
+export type { Example } from './exampleTypes'
 export { CHOICES, fieldDefinition, FIELDS, type ChoicePath, type FieldDefinition, type FieldPath } from './fields'
 export { migrate, MIGRATIONS, type Migration } from './migrations'
-export { PULSE_COLUMNS, pulseTable, SUMMARY_FORMAT, SUMMARY_VERSION, summaryText, type SummaryInput } from './tables'
+export { readProgrammeCsv, type ProgrammeReading } from './programmeCsv'
+export { readRingTable, type RingReading, type SkippedRow } from './ringCsv'
+export {
+  RING_TABLE_KEYS,
+  ringHeading,
+  ringTable,
+  ringValue,
+  SI_RING_UNITS,
+  withRingValue,
+  type RingTableKey,
+  type RingTableUnits,
+} from './ringTable'
+export {
+  eventTable,
+  PULSE_COLUMNS,
+  pulseTable,
+  SUMMARY_FORMAT,
+  SUMMARY_VERSION,
+  summaryText,
+  trajectoryTable,
+  wakeFile,
+  wakeFileName,
+  wakeTimesTable,
+  type SummaryInput,
+} from './tables'
 export {
   PLAN_FORMAT,
   PLAN_VERSION,
@@ -21,7 +46,10 @@ export {
   type ModelsInput,
   type Plan,
   type PlanReading,
+  type TrainSection,
   type ViewInput,
+  type WakeSection,
 } from './types'
 export { validatePlan } from './validate'
+export { CORE_WORDS, RING_COLUMNS, type RingColumn, type RingColumnKey } from './wakeFields'
 export { canonicalInput, planDocument, planFileName, writePlan } from './writePlan'

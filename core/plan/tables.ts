@@ -2,6 +2,16 @@
  * Results written out as the contract's tables and summary. The window's exports and the headless runner both call these.
  */
 import { at } from '../base'
+import {
+  EVENT_COLUMNS,
+  eventRows,
+  TRAJECTORY_COLUMNS,
+  trajectoryRows,
+  wakeFrame,
+  wakePolyData,
+  wakeSummary,
+  type Wake,
+} from '../filament'
 import type { PulseResult } from '../pulse'
 import type { WaterProperties } from '../water'
 import { writeCsv } from './csvWriter'
@@ -30,12 +40,47 @@ export function pulseTable(pulse: PulseResult): string {
   return writeCsv(PULSE_COLUMNS, rows)
 }
 
+/** trajectory.csv: every ring at every output time of its life. */
+export function trajectoryTable(wake: Wake): string {
+  return writeCsv(TRAJECTORY_COLUMNS, trajectoryRows(wake))
+}
+
+/** events.csv; `end` is always last. */
+export function eventTable(wake: Wake): string {
+  return writeCsv(EVENT_COLUMNS, eventRows(wake))
+}
+
+/** Name of the file with the rings at one output time, from 0. */
+export function wakeFileName(index: number): string {
+  return `${String(index).padStart(6, '0')}.vtp`
+}
+
+/** The rings at one output time as a PolyData file. */
+export function wakeFile(wake: Wake, index: number): string {
+  return wakePolyData(wakeFrame(wake, index), at(wake.outputTimes, index))
+}
+
+/** wake-times.csv: which file holds which time. */
+export function wakeTimesTable(wake: Wake): string {
+  return writeCsv(
+    ['time (s)', 'file'],
+    Array.from(wake.outputTimes, (time, index) => [time, `wake/${wakeFileName(index)}`]),
+  )
+}
+
 export const SUMMARY_FORMAT = 'ringwright-summary'
 export const SUMMARY_VERSION = 1
 
 export interface SummaryInput {
   readonly water: WaterProperties
   readonly pulse: PulseResult | null
+  /** The wake with what belongs beside it; null where it was not computed. */
+  readonly wake: {
+    readonly wake: Wake
+    readonly ageing: string
+    readonly arrivals: readonly object[]
+    readonly notes: readonly string[]
+  } | null
   readonly cautions: readonly Caution[]
   readonly title: string
   readonly files: readonly string[]
@@ -62,6 +107,7 @@ export function summaryText(input: SummaryInput): string {
       notes: water.notes,
     },
     pulse: pulse === null ? undefined : pulseSummary(pulse),
+    wake: input.wake === null ? undefined : wakeSection(input.wake),
     cautions: input.cautions,
   }
   return `${JSON.stringify(document, null, 2)}\n`
@@ -71,4 +117,19 @@ export function summaryText(input: SummaryInput): string {
 function pulseSummary(pulse: PulseResult): object {
   const { history, ...rest } = pulse
   return { ...rest, samples: history.time.length }
+}
+
+function wakeSection({ wake, ageing, arrivals, notes }: NonNullable<SummaryInput['wake']>): object {
+  const { status, message, time, counters, modelReason } = wake
+  return {
+    ...wakeSummary(wake),
+    modelReason,
+    ageing,
+    arrivals,
+    status,
+    message,
+    time,
+    counters,
+    notes: [...notes, ...wake.notes],
+  }
 }

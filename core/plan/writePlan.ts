@@ -1,7 +1,7 @@
 /**
  * A plan becomes its text: two-space indent, stable key order, SI numbers, what this version does not know kept.
  */
-import { PLAN_FORMAT, PLAN_VERSION, type Json, type JsonObject, type Plan } from './types'
+import { PLAN_FORMAT, PLAN_VERSION, type Json, type JsonObject, type Plan, type WakeSection } from './types'
 
 /** Order of the sections in a file, as the contract lists them; unknown ones follow in their own order. */
 const SECTION_ORDER = [
@@ -48,12 +48,28 @@ export function planDocument(plan: Plan): JsonObject {
         }),
     ambient: merged(plan.source['ambient'], { ...plan.ambient }),
     models: merged(plan.source['models'], { ...plan.models }),
+    train: plan.train === null ? undefined : merged(plan.source['train'], { ...plan.train }),
+    wake: plan.wake === null ? undefined : merged(plan.source['wake'], wakeDocument(plan.wake)),
     view: merged(plan.source['view'], { units: { ...plan.view.units } }),
   }
   const all: Record<string, Json | undefined> = { ...plan.source, ...known }
   const order: readonly string[] = SECTION_ORDER
   const keys = [...order, ...Object.keys(all).filter((key) => !order.includes(key))]
   return Object.fromEntries(keys.flatMap((key) => pair(key, all[key])))
+}
+
+function wakeDocument(wake: WakeSection): Readonly<Record<string, Json>> {
+  const { rings, nozzles, wall, ...rest } = wake
+  return {
+    ...rest,
+    rings: rings.map(({ curve, ...ring }) => (curve === undefined ? { ...ring } : { ...ring, curve: nodesOf(curve) })),
+    nozzles: nozzles.map((nozzle) => ({ ...nozzle })),
+    wall: wall === null ? null : { ...wall },
+  }
+}
+
+function nodesOf(curve: Float64Array): number[][] {
+  return Array.from({ length: curve.length / 3 }, (_, i) => [...curve.subarray(3 * i, 3 * i + 3)])
 }
 
 function pair(key: string, value: Json | undefined): [string, Json][] {

@@ -3,3 +3,4 @@
  */
 export { availableSections, pulseOf, run, type RunRequest } from './run'
 export { SECTIONS, type RunData, type RunResult, type Section } from './types'
+export type { WakeArrival, WakeData, WakeRunOptions } from './wake'

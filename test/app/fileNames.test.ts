@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { filtersOf, safeFileName, withEnding, type FileKind } from '../../app/fileNames'
 
-const KINDS: readonly FileKind[] = ['plan', 'table', 'csv', 'svg', 'png']
+const KINDS: readonly FileKind[] = ['plan', 'table', 'csv', 'svg', 'png', 'vtp', 'gltf']
 
 describe('safeFileName', () => {
   it.each([
@@ -17,6 +17,8 @@ describe('safeFileName', () => {
     ['plan', 'Wirbelring Ø 30', 'Wirbelring Ø 30.ringwright.json'],
     ['csv', 'pulse.csv', 'pulse.csv'],
     ['png', 'C:\\x\\y', 'C x y.png'],
+    ['vtp', 'rings at 1.5 s', 'rings at 1.5 s.vtp'],
+    ['gltf', 'rings.gltf', 'rings.gltf'],
   ] as const)('%s %j becomes %j', (kind, suggested, name) => {
     expect(safeFileName(kind, suggested)).toBe(name)
   })

@@ -26,6 +26,7 @@ async function batch(list: readonly string[], input = '', signal = new AbortCont
   const code = await runBatch(list, {
     folder,
     signal,
+    pause: () => new Promise((resolve) => setImmediate(resolve)),
     readStandardInput: async () => new TextEncoder().encode(input),
     writtenLine: (text) => written.push(text),
     note: (text) => notes.push(text),
@@ -81,7 +82,9 @@ describe('a run', () => {
       const { code, written, notes } = await batch(['-', '--out', 'out'], text)
       expect(notes).toEqual([])
       expect(code).toBe(0)
-      expect(written).toHaveLength(2)
+      const names = written.map((name) => path.relative('out', name)).filter((name) => path.dirname(name) === '.')
+      const wake = text.includes('"wake"') ? ['trajectory.csv', 'events.csv', 'wake-times.csv'] : []
+      expect(names).toEqual(['pulse.csv', ...wake, 'summary.json'])
     },
   )
 
@@ -191,10 +194,10 @@ describe('a refusal', () => {
 
   it('of a section this version does not compute exits 2', async () => {
     await writePlanFile()
-    expect(await batch(['plan.json', '--out', 'out', '--only', 'wake'])).toEqual({
+    expect(await batch(['plan.json', '--out', 'out', '--only', 'thruster'])).toEqual({
       code: 2,
       written: [],
-      notes: ['Section wake is not computed by this version.'],
+      notes: ['Section thruster is not computed by this version.'],
     })
   })
 
@@ -207,7 +210,8 @@ describe('a refusal', () => {
     expect(refused.notes[0]).toMatch(/^Section pulse cannot be computed: the plan has no nozzle and no programme\.$/)
     const { code, written } = await batch(['-', '--out', 'out'], text)
     expect(code).toBe(0)
-    expect(written).toEqual([path.join('out', 'summary.json')])
+    expect(written).not.toContain(path.join('out', 'pulse.csv'))
+    expect(written).toContain(path.join('out', 'trajectory.csv'))
   })
 
   it('of a folder that cannot be made exits 2', async () => {
@@ -252,6 +256,7 @@ describe('an interrupt', () => {
     const code = await runBatch(['plan.json', '--out', 'out'], {
       folder,
       signal: controller.signal,
+      pause: async () => undefined,
       readStandardInput: async () => new Uint8Array(),
       writtenLine: (text) => {
         written.push(text)
@@ -262,5 +267,78 @@ describe('an interrupt', () => {
     expect(code).toBe(130)
     expect(written).toEqual([path.join('out', 'pulse.csv')])
     expect(await readdir(path.join(folder, 'out'))).toEqual(['pulse.csv'])
+  })
+})
+
+describe('a wake', () => {
+  const ring = { circulation: 0.01, radius: 0.02, coreRadius: 0.004 }
+  const wake = {
+    rings: [ring, { ...ring, centre: [0.02, 0, 0] }],
+    duration: 1,
+    outputStep: 0.25,
+    viscous: false,
+    stations: [0.05],
+  }
+  const read = (name: string) => readFile(path.join(folder, 'out', name), 'utf8')
+
+  it('is written as trajectories, events, one PolyData file a time and the table of their times', async () => {
+    await writePlanFile({ wake })
+    const { code, written, notes } = await batch(['plan.json', '--out', 'out', '--only', 'wake'])
+    expect({ code, notes }).toEqual({ code: 0, notes: [] })
+    const frames = ['000000', '000001', '000002', '000003', '000004'].map((name) => path.join('wake', `${name}.vtp`))
+    expect(written).toEqual(
+      ['trajectory.csv', 'events.csv', ...frames, 'wake-times.csv', 'summary.json'].map((name) =>
+        path.join('out', name),
+      ),
+    )
+    const trajectory = (await read('trajectory.csv')).trimEnd().split('\r\n')
+    expect(trajectory[0]).toBe(
+      'time (s),ring,x (m),y (m),z (m),radius (m),core radius (m),circulation (m2/s),speed (m/s),direction x,direction y,direction z',
+    )
+    expect(trajectory.length).toBe(1 + 2 * 5)
+    const events = (await read('events.csv')).trimEnd().split('\r\n')
+    expect(events[0]).toBe('time (s),event,rings,x (m),detail')
+    expect(events.at(-1)).toMatch(/^1,end,/)
+    expect(events.some((line) => line.includes(',arrival,'))).toBe(true)
+    expect(await read('wake-times.csv')).toMatch(
+      /^time \(s\),file\r\n0,wake\/000000\.vtp\r\n0\.25,wake\/000001\.vtp\r\n/,
+    )
+    expect(await summary()).toMatchObject({
+      wake: { model: 'coaxial', status: 'done', rings: [{ ring: 1 }, { ring: 2 }] },
+    })
+  })
+
+  it('of a shorter second run leaves none of the first one’s files behind', async () => {
+    await writePlanFile({ wake })
+    await batch(['plan.json', '--out', 'out', '--only', 'wake'])
+    await writePlanFile({ wake: { ...wake, duration: 0.5 } })
+    expect((await batch(['plan.json', '--out', 'out', '--only', 'wake'])).code).toBe(0)
+    expect((await readdir(path.join(folder, 'out', 'wake'))).toSorted()).toEqual([
+      '000000.vtp',
+      '000001.vtp',
+      '000002.vtp',
+    ])
+  })
+
+  it('that breaks a limit is refused with its field, and nothing is written', async () => {
+    await writePlanFile({ wake: { ...wake, rings: [ring, ring] } })
+    const { code, written, notes } = await batch(['plan.json', '--out', 'out'])
+    expect(code).toBe(2)
+    expect(written).toEqual([])
+    expect(notes.join(' ')).toMatch(/rings 1 and 2 must not coincide/)
+  })
+
+  it('does without a pulse', async () => {
+    const document = { ...documentOf({ wake }), nozzle: undefined, programme: undefined }
+    const { code } = await batch(['-', '--out', 'out'], JSON.stringify(document))
+    expect(code).toBe(0)
+    expect(await summary()).not.toHaveProperty('pulse')
+  })
+
+  it('ends with 130 when it is interrupted', async () => {
+    await writePlanFile({ wake: { ...wake, duration: 5000, outputStep: 1, tolerance: 1e-12 } })
+    const controller = new AbortController()
+    setTimeout(() => controller.abort(), 50)
+    expect((await batch(['plan.json', '--out', 'out', '--only', 'wake'], '', controller.signal)).code).toBe(130)
   })
 })

@@ -4,12 +4,15 @@ import { run } from '../../../core/run'
 import { planOf } from '../../support/plans'
 
 async function idsOf(parts: Readonly<Record<string, unknown>>): Promise<readonly string[]> {
-  const result = await run(planOf(parts), { sections: ['pulse'] })
+  const plan = planOf(parts)
+  const result = await run(plan, { sections: plan.wake === null ? ['pulse'] : ['pulse', 'wake'] })
   if (result.data === null) throw new Error(result.message)
   return result.data.cautions.map((caution) => caution.id)
 }
 
 const quick = (stroke: number, more: object = {}): object => ({ shape: 'rectangular', stroke, peakSpeed: 0.2, ...more })
+
+const RING = { circulation: 0.01, radius: 0.02, coreRadius: 0.004 }
 
 /** A plan that fires each caution of the model group. */
 const TRIGGERS: Readonly<Record<string, Readonly<Record<string, unknown>>>> = {
@@ -45,6 +48,16 @@ const TRIGGERS: Readonly<Record<string, Readonly<Record<string, unknown>>>> = {
   'parallel-jet-assumed': { nozzle: { shape: 'converging', diameter: 0.03, pistonDiameter: 0.06 } },
   'no-matching-ring': { programme: quick(0.03 * 0.002) },
   'thin-core': { programme: quick(0.03 * 0.3) },
+  'cores-touch': {
+    wake: { rings: [RING, { ...RING, circulation: -0.01, centre: [0.1, 0, 0] }], duration: 20, outputStep: 0.5 },
+  },
+  'near-wall': {
+    wake: { rings: [RING], wall: { point: [0.1, 0, 0], normal: [1, 0, 0] }, duration: 3, outputStep: 0.1 },
+  },
+  'wake-rings': { programme: quick(0.03 * 6), wake: { duration: 0.1 } },
+  'wake-valid-until': {
+    wake: { rings: [RING], wall: { point: [0.1, 0, 0], normal: [1, 0, 0] }, duration: 3, outputStep: 0.1 },
+  },
   'given-water': { water: { kind: 'given', density: 1000, kinematicViscosity: 1e-6, vapourPressure: 2300 } },
 }
 
@@ -78,7 +91,7 @@ describe('cautions', () => {
   })
 
   it('every hazard leaves the decision to local rules and qualified people', () => {
-    const context = { plan: planOf({ tankRun: {}, thruster: {} }), water: null, pulse: null }
+    const context = { plan: planOf({ tankRun: {}, thruster: {} }), water: null, pulse: null, wake: null, wakeNotes: [] }
     const hazards = [
       ...cautionsFor(context, 'laboratory'),
       ...cautionsFor(context, 'machine'),

@@ -137,7 +137,7 @@ describe('readPlan', () => {
       format: 'ringwright-plan',
       version: 1,
       water: { kind: 'fresh' },
-      wake: { rings: [{}] },
+      wake: { rings: [{ circulation: 0.01, radius: 0.02, coreRadius: 0.004 }], duration: 0.1 },
     })
     if (!reading.ok) throw new Error('refused')
     expect(reading.plan.absent).toEqual(['nozzle', 'programme'])

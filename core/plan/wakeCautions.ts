@@ -1,0 +1,53 @@
+/**
+ * Cautions about rings in motion: where the model ends, what a wall does, what was left out.
+ */
+import type { WakeEventKind } from '../coaxial'
+import type { CautionContext, CautionDefinition } from './cautionTypes'
+
+/** First event of a kind, or undefined. */
+function first({ wake }: CautionContext, kind: WakeEventKind) {
+  return wake?.events.find(({ event }) => event === kind)
+}
+
+const seconds = (time: number): string => `${Number(time.toPrecision(3))} s`
+
+export const WAKE_CAUTIONS: readonly CautionDefinition[] = [
+  {
+    id: 'cores-touch',
+    group: 'model',
+    source: 'reconnection and merging are not modelled',
+    text: (context) => {
+      const event = first(context, 'cores-touch')
+      if (event === undefined) return null
+      return `The cores of rings ${event.rings.join(' and ')} touch at ${seconds(event.time)}: merging and reconnection are not modelled, and the run ends there.`
+    },
+  },
+  {
+    id: 'near-wall',
+    group: 'model',
+    source: 'Walker et al. 1987; Orlandi & Verzicco 1993 (recalled, not re-read)',
+    text: (context) => {
+      const event = first(context, 'near-wall')
+      if (event === undefined) return null
+      return `Ring ${event.rings.join(', ')} comes within about a radius of a wall at ${seconds(event.time)}: a real wall sheds vorticity of its own and the ring rebounds; after that time the path is not to be relied on.`
+    },
+  },
+  {
+    id: 'wake-rings',
+    group: 'model',
+    source: 'Saffman 1970; definitions of a train',
+    text: ({ wake, wakeNotes }) => {
+      const notes = [...wakeNotes, ...(wake?.notes ?? [])]
+      return notes.length === 0 ? null : notes.join(' ')
+    },
+  },
+  {
+    id: 'wake-valid-until',
+    group: 'model',
+    source: 'limits of the ring models',
+    text: ({ wake }) =>
+      wake !== null && wake.status === 'done' && wake.validUntil < wake.time
+        ? `The path of the rings holds until ${seconds(wake.validUntil)}: ${wake.reason}`
+        : null,
+  },
+]

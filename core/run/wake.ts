@@ -1,0 +1,143 @@
+/**
+ * The wake of a plan: its train or its explicit rings, marched by the engine that suits them, under both ageing laws where the
+ * ring Reynolds number does not say which.
+ */
+import { DomainError, type RunOptions } from '../base'
+import { trainRings, type WakeAgeing } from '../coaxial'
+import { marchWake, ringsOfNozzles, type Wake, type WakeInput, type WakeRing } from '../filament'
+import { loadKernel, type Kernel } from '../kernel'
+import type { Plan, WakeSection } from '../plan'
+import type { PulseResult } from '../pulse'
+import { ageingRegime } from '../ring'
+import type { WaterProperties } from '../water'
+
+/** One ring at one station, with the range between the ageing laws where both were run. */
+export interface WakeArrival {
+  readonly station: number
+  readonly ring: number
+  readonly time: number
+  readonly timeLow: number
+  readonly timeHigh: number
+}
+
+export interface WakeData {
+  /** The rings the march began with. */
+  readonly rings: readonly WakeRing[]
+  readonly wake: Wake
+  readonly ageing: WakeAgeing
+  /** The same rings under the turbulent law, where both laws apply; null else. */
+  readonly turbulent: Wake | null
+  readonly arrivals: readonly WakeArrival[]
+  /** Where the rings come from, and what that left out. */
+  readonly notes: readonly string[]
+}
+
+export interface WakeRunOptions extends RunOptions {
+  /** The hot sums; loaded where it is not given. */
+  readonly kernel?: Kernel
+  /** Lets messages in between steps, so that a cancellation can arrive. */
+  readonly pause?: () => Promise<void>
+}
+
+/**
+ * March the wake of a plan.
+ *
+ * @param pulse the pulse of the plan; read where the wake has no rings of its own
+ * @throws {DomainError} with the plan path that breaks a limit
+ */
+export async function wakeOf(
+  plan: Plan,
+  section: WakeSection,
+  water: WaterProperties,
+  pulse: PulseResult | null,
+  options: WakeRunOptions,
+): Promise<WakeData> {
+  const { rings, notes } = ringsOfPlan(plan, section, water, pulse)
+  const laws = ageingLaws(section, rings, water.kinematicViscosity)
+  const kernel = options.kernel ?? (await loadKernel())
+  const march = (ageing: WakeAgeing, from: number, share: number): Promise<Wake> =>
+    marchWake(inputOf(plan, section, water, rings, ageing), {
+      kernel,
+      ...(options.pause === undefined ? {} : { pause: options.pause }),
+      ...(options.signal === undefined ? {} : { signal: options.signal }),
+      onProgress: ({ share: done, what }) => options.onProgress?.({ share: from + share * done, what }),
+    })
+  const [ageing] = laws
+  const both = laws.length === 2
+  const wake = await march(ageing, 0, both ? 0.5 : 1)
+  // Rings in space know no turbulent law, so a second run would only repeat the first.
+  const second = both && wake.model === 'coaxial' && wake.status === 'done'
+  const turbulent = second ? await march('turbulent', 0.5, 0.5) : null
+  return { rings, wake, ageing, turbulent, arrivals: arrivalsOf(wake, turbulent), notes }
+}
+
+function ringsOfPlan(
+  plan: Plan,
+  section: WakeSection,
+  water: WaterProperties,
+  pulse: PulseResult | null,
+): { readonly rings: readonly WakeRing[]; readonly notes: readonly string[] } {
+  if (section.rings.length > 0) return { rings: section.rings, notes: [] }
+  const ring = pulse?.ring ?? null
+  if (pulse === null || ring === null)
+    throw new DomainError('wake.rings', 'wake.rings must be given where the pulse makes no ring to follow, got none')
+  const train = plan.train ?? { pulses: 1, period: 1 }
+  const made = trainRings({ density: water.density, ring, duration: pulse.duration, ...train })
+  const notes: string[] = []
+  if (pulse.pinchedOff === true)
+    notes.push('The trailing jet behind each ring is left out: only the rings are followed.')
+  return { rings: ringsOfNozzles(made.rings, section.nozzles, plan.nozzle.axisRatio), notes }
+}
+
+function inputOf(
+  plan: Plan,
+  section: WakeSection,
+  water: WaterProperties,
+  rings: readonly WakeRing[],
+  ageing: WakeAgeing,
+): WakeInput {
+  return {
+    model: section.model,
+    law: section.law,
+    rings,
+    kinematicViscosity: water.kinematicViscosity,
+    viscous: section.viscous,
+    ageing,
+    axialFlow: plan.ambient.axialFlow,
+    wall: section.wall,
+    tube: section.tube,
+    stations: section.stations,
+    duration: section.duration,
+    outputStep: section.outputStep,
+    tolerance: section.tolerance,
+  }
+}
+
+/** The laws to run: one, or laminar then turbulent where the strongest ring lies between. */
+function ageingLaws(
+  section: WakeSection,
+  rings: readonly WakeRing[],
+  viscosity: number,
+): readonly ['laminar', 'turbulent'] | readonly [WakeAgeing] {
+  if (!section.viscous) return ['laminar']
+  if (section.ageing !== 'auto') return [section.ageing]
+  const strongest = Math.max(0, ...rings.map((ring) => Math.abs(ring.circulation)))
+  const regime = ageingRegime(strongest, viscosity)
+  return regime === 'between' ? ['laminar', 'turbulent'] : [regime]
+}
+
+/** The place of an arrival: its station, read from where it happened. */
+function arrivalsOf(wake: Wake, other: Wake | null): WakeArrival[] {
+  const key = (rings: readonly number[], x: number | null): string => `${rings.join(' ')} at ${(x ?? 0).toPrecision(6)}`
+  const others = new Map(
+    (other?.events ?? []).flatMap((event) =>
+      event.event === 'arrival' ? [[key(event.rings, event.x), event.time] as const] : [],
+    ),
+  )
+  return wake.events.flatMap(({ event, rings, x, time }) => {
+    const ring = rings[0]
+    if (event !== 'arrival' || ring === undefined || x === null) return []
+    const second = others.get(key(rings, x)) ?? time
+    return [{ station: x, ring, time, timeLow: Math.min(time, second), timeHigh: Math.max(time, second) }]
+  })
+}
