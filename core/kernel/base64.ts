@@ -6,19 +6,33 @@ export function base64Bytes(text: string): Uint8Array<ArrayBuffer> {
   for (let i = 0; i < DIGITS.length; i++) values[DIGITS.charCodeAt(i)] = i
   const padding = text.endsWith('==') ? 2 : text.endsWith('=') ? 1 : 0
   const bytes = new Uint8Array((text.length / 4) * 3 - padding)
-  const digit = (i: number): number => values[text.charCodeAt(i) & 127] ?? 0
-  for (let i = 0, out = 0; i < text.length; i += 4, out += 3) {
-    const word = (digit(i) << 18) | (digit(i + 1) << 12) | (digit(i + 2) << 6) | digit(i + 3)
-    bytes[out] = word >> 16
+  const length = text.length
+  for (let i = 0, out = 0; i < length; i += 4, out += 3) {
+    const high = ((values[text.charCodeAt(i) & 127] ?? 0) << 6) | (values[text.charCodeAt(i + 1) & 127] ?? 0)
+    const low = ((values[text.charCodeAt(i + 2) & 127] ?? 0) << 6) | (values[text.charCodeAt(i + 3) & 127] ?? 0)
+    bytes[out] = high >> 4
     // Writes past the end of a typed array are ignored: that drops the padding.
-    bytes[out + 1] = (word >> 8) & 255
-    bytes[out + 2] = word & 255
+    bytes[out + 1] = ((high & 15) << 4) | (low >> 8)
+    bytes[out + 2] = low & 255
   }
   return bytes
 }
 
-/** Doubles from base64 of their little-endian bytes. */
-export function base64Doubles(text: string): Float64Array<ArrayBuffer> {
-  const view = new DataView(base64Bytes(text).buffer)
-  return Float64Array.from({ length: view.byteLength / 8 }, (_, i) => view.getFloat64(i * 8, true))
+/**
+ * Doubles from base64 of their bytes in planes: the lowest byte of every double first, coefficient by coefficient.
+ *
+ * @param width coefficients an interval; the doubles come back interval by interval
+ */
+export function base64Doubles(text: string, width: number): Float64Array<ArrayBuffer> {
+  const bytes = base64Bytes(text)
+  const count = bytes.length / 8
+  const intervals = count / width
+  const doubles = new Float64Array(count)
+  const view = new DataView(new ArrayBuffer(8))
+  for (let i = 0; i < count; i++) {
+    const place = (i % width) * intervals + Math.floor(i / width)
+    for (let plane = 0; plane < 8; plane++) view.setUint8(plane, bytes[plane * count + place] ?? 0)
+    doubles[i] = view.getFloat64(0, true)
+  }
+  return doubles
 }

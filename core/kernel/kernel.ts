@@ -66,6 +66,7 @@ export interface TreeReport {
  * Nothing is refused here: the rooms above check their input. NaN or infinity in a source gives NaN (or infinity) at every
  * target, in the components it enters, in a target at that target only; a target that lies on a source whose delta is 0 gives infinity or NaN.
  * A target's value does not depend on which other targets are in the call, so targets can be split freely.
+ * A kernel's memory grows with the largest call and is kept; where the engine has none left, a call throws RangeError.
  */
 export interface Kernel {
   readonly name: 'wasm' | 'typescript'

@@ -22,6 +22,6 @@ let decoded: KernelTables | undefined
 
 /** The tables, decoded on first use. */
 export function kernelTables(): KernelTables {
-  decoded ??= { velocity: base64Doubles(VELOCITY_TABLE), stream: base64Doubles(STREAM_TABLE) }
+  decoded ??= { velocity: base64Doubles(VELOCITY_TABLE, 16), stream: base64Doubles(STREAM_TABLE, 8) }
   return decoded
 }

@@ -1,11 +1,13 @@
 /** Every figure of the performance list this version can measure. */
 import { commandFigures } from './commands'
 import { coreFigures } from './core'
+import { kernelBench } from './kernel'
 import type { Figure } from './measure'
 
 /** Groups by name, so that one can be asked for alone: `npm run bench -- core`. */
 export const GROUPS: Readonly<Record<string, () => Promise<readonly Figure[]>>> = {
   core: async () => coreFigures(),
+  kernel: kernelBench,
   commands: commandFigures,
 }
 

@@ -2,7 +2,6 @@ import { execFileSync } from 'node:child_process'
 import { mkdtempSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
-import { fileURLToPath } from 'node:url'
 
 /** What the C program says: seconds of processor time a pair, and the sum of all velocities. */
 export interface LimitRun {
@@ -27,27 +26,24 @@ const WIDTHS = {
 export type Width = keyof typeof WIDTHS
 
 /** Compiles kernel.c with gcc at both widths and hands the programs to `use`; null where gcc is missing or refuses. */
-export async function withLimits<T>(
-  use: (limits: Readonly<Record<Width, KernelLimit>> | null) => Promise<T>,
-): Promise<T> {
+export function withLimits<T>(source: string, use: (limits: Readonly<Record<Width, KernelLimit>> | null) => T): T {
   const folder = mkdtempSync(path.join(tmpdir(), 'ringwright-bench-'))
   try {
-    return await use(compiled(folder))
+    return use(compiled(source, folder))
   } finally {
     rmSync(folder, { recursive: true, force: true })
   }
 }
 
-function compiled(folder: string): Readonly<Record<Width, KernelLimit>> | null {
+function compiled(source: string, folder: string): Readonly<Record<Width, KernelLimit>> | null {
   try {
-    return { '128 bits': compile(folder, '128 bits'), AVX2: compile(folder, 'AVX2') }
+    return { '128 bits': compile(source, folder, '128 bits'), AVX2: compile(source, folder, 'AVX2') }
   } catch {
     return null
   }
 }
 
-function compile(folder: string, width: Width): KernelLimit {
-  const source = fileURLToPath(new URL('./kernel.c', import.meta.url))
+function compile(source: string, folder: string, width: Width): KernelLimit {
   const program = path.join(folder, width.replace(' ', '-'))
   const flags = ['-O3', '-march=native', '-ffast-math', ...WIDTHS[width]]
   execFileSync('gcc', [...flags, source, '-o', program, '-lm'], { stdio: 'ignore' })

@@ -18,16 +18,17 @@ export function wallTime(): number {
 }
 
 /**
- * Median seconds a call of each job, the jobs taking turns, so that a slow spell of the machine falls on all.
+ * Seconds a call of each job, the jobs taking turns, so that a slow spell of the machine falls on all.
  *
  * @param clock processorTime or wallTime.
+ * @returns by name, the median of the rounds or what `of` makes of them.
  */
 export function interleaved<Name extends string>(
   jobs: Readonly<Record<Name, Job>>,
   rounds: number,
   clock: () => number,
   warmUpCalls = WARM_UP_CALLS,
-): (name: Name) => number {
+): (name: Name, of?: (rounds: readonly number[]) => number) => number {
   const entries = Object.entries<Job>(jobs).map(([name, job]) => ({ name, job, seconds: [] as number[] }))
   for (const { job } of entries) for (let call = 0; call < warmUpCalls; call++) job()
   for (let round = 0; round < rounds; round++) {
@@ -37,5 +38,5 @@ export function interleaved<Name extends string>(
       seconds.push(typeof own === 'number' ? own : clock() - start)
     }
   }
-  return (name) => median(entries.find((entry) => entry.name === name)?.seconds ?? [])
+  return (name, of = median) => of(entries.find((entry) => entry.name === name)?.seconds ?? [])
 }

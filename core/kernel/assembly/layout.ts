@@ -1,6 +1,6 @@
 /*
- * The module's memory: the tables first, at fixed places, then what the caller puts there (see memory.ts one folder up).
- * The numbers are those of core/kernel/memoryLayout.ts.
+ * The module's memory: the tables first, at fixed places, then what the caller puts there (kernelMemory.ts one folder up).
+ * The numbers are those of that file.
  */
 
 /** Rings of a block, and where their intermediate results stand: 64 bytes a ring. */
