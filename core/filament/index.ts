@@ -17,3 +17,6 @@ export {
   wakeSummary,
   type WakeSummary,
 } from './wakeTables'
+export { carryDye, MOST_DYE, MOST_DYE_OUTPUTS, type DyeInput } from './dye'
+export { fieldPlane, isOnJetAxis, MOST_FIELD_OUTPUTS, type FieldPlane, type FieldQuantity } from './fieldPlane'
+export { WakeFlow, type FlowSurroundings } from './wakeFlow'
