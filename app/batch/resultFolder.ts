@@ -50,7 +50,7 @@ export function resultFolder(folder: string, shown: string, summaryFormat: strin
     },
     async write(name, content) {
       const target = path.join(folder, name)
-      if (path.dirname(name) !== '.') await mkdir(path.dirname(target), { recursive: true })
+      if (path.dirname(name) !== '.') await makeFolders(path.dirname(target))
       await save(target, content)
     },
     async dropEarlier(keep) {
@@ -64,7 +64,7 @@ export function resultFolder(folder: string, shown: string, summaryFormat: strin
 
 async function makeOrList(folder: string, shown: string): Promise<readonly string[]> {
   try {
-    await mkdir(folder, { recursive: true })
+    await makeFolders(folder)
     return await readdir(folder)
   } catch (error) {
     const code = systemCode(error)
@@ -76,6 +76,29 @@ async function makeOrList(folder: string, shown: string): Promise<readonly strin
           : `the system reported ${code === '' ? 'a failure' : code}`
     throw new FolderRefusal(`The folder ${shown} could not be made because ${why}.`)
   }
+}
+
+/**
+ * Make a folder and those above it, one after another: where the system refuses a folder whose parent stands, Node's own recursive
+ * form goes round for ever.
+ */
+async function makeFolders(folder: string): Promise<void> {
+  try {
+    await mkdir(folder)
+  } catch (error) {
+    const parent = path.dirname(folder)
+    if (systemCode(error) === 'EEXIST' && (await stat(folder)).isDirectory()) return
+    if (systemCode(error) !== 'ENOENT' || parent === folder || (await isFolder(parent))) throw error
+    await makeFolders(parent)
+    await mkdir(folder)
+  }
+}
+
+async function isFolder(folder: string): Promise<boolean> {
+  return stat(folder).then(
+    (found) => found.isDirectory(),
+    () => false,
+  )
 }
 
 async function holdsOurSummary(folder: string, summaryFormat: string): Promise<boolean> {

@@ -12,6 +12,7 @@ import {
   SUMMARY_FORMAT,
   summaryText,
   trajectoryTable,
+  unknownKeysInWords,
   wakeFile,
   wakeFileName,
   wakeTimesTable,
@@ -75,6 +76,8 @@ async function runOnce(list: readonly string[], environment: BatchEnvironment): 
   if (!reading.ok) throw new Stop(EXIT.refused, reading.message)
   const { request } = reading
   const plan = planOf(await readInput(request.plan, environment), request.plan)
+  const unknown = unknownKeysInWords(plan)
+  if (unknown !== null) environment.note(`${inputName(request.plan)}: ${unknown}`)
   const sections = sectionsOf(plan, request.only)
   if (request.only === null) noteUncomputed(plan, environment)
 
@@ -111,9 +114,13 @@ function planOf(text: string, given: string): Plan {
   return reading.plan
 }
 
+function inputName(given: string): string {
+  return given === '-' ? 'standard input' : given
+}
+
 /** One line per problem: the file, then field, value and limit in a sentence. */
 function refusalText(given: string, problems: readonly Problem[]): string {
-  const name = given === '-' ? 'standard input' : given
+  const name = inputName(given)
   return problems.map(({ message }) => `${name}: ${message}`).join('\n')
 }
 

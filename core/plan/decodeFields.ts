@@ -66,7 +66,7 @@ export function checkField(path: FieldPath, value: number | null): Problem | nul
   }
   if (insideLimits(definition, value)) return null
   const unit = siUnit(definition.dimension)
-  const shown = Number.isFinite(value) ? formatFull(value, unit) : 'a value that is not finite'
+  const shown = Number.isFinite(value) ? formatFull(Number(value.toPrecision(12)), unit) : 'a value that is not finite'
   const limit = limitInWords(definition)
   return { field: path, value: shown, limit, message: `${path} must be ${limit}, got ${shown}.` }
 }

@@ -47,7 +47,7 @@ export function readPlan(text: string): PlanReading {
       '',
       'text that is not JSON',
       'a JSON document',
-      `This file is not a plan: it must be JSON, but ${why}.`,
+      `This file is not a plan: it is not valid JSON (${why}).`,
     )
   }
   return decodePlan(document)

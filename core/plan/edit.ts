@@ -4,6 +4,7 @@
 import { DomainError } from '../base'
 import { compileProgramme, withStroke, type ProgrammeInput, type ProgrammeRow } from '../pulse'
 import type { ChoicePath, FieldPath } from './fields'
+import { waterProperties, type WaterInput } from '../water'
 import { WAKE_DEFAULTS } from './decodeWake'
 import type { Plan, TrainSection, WakeSection } from './types'
 
@@ -80,7 +81,21 @@ export function setChoice(plan: Plan, path: ChoicePath, value: string): Plan {
   const [section, key] = split(path)
   if (!isSection(section)) return plan
   const changed = replace(plan, section, key, value)
+  if (path === 'water.kind' && value === 'given') return { ...changed, water: givenFrom(plan.water) }
   return { ...changed, programme: ruledByRows(changed.programme) }
+}
+
+/** Given water that starts from what the water was, so that nothing jumps and there is something to change. */
+function givenFrom(water: WaterInput): WaterInput {
+  const found = unlessRefused(() => waterProperties(water))
+  if (found === null) return { ...water, kind: 'given' }
+  return {
+    ...water,
+    kind: 'given',
+    density: water.density ?? found.density,
+    kinematicViscosity: water.kinematicViscosity ?? found.kinematicViscosity,
+    vapourPressure: water.vapourPressure ?? found.vapourPressure,
+  }
 }
 
 /** Make the programme a table of these rows. */

@@ -50,6 +50,7 @@ export {
   type ViewInput,
   type WakeSection,
 } from './types'
+export { unknownKeys, unknownKeysInWords } from './unknownKeys'
 export { validatePlan } from './validate'
 export { CORE_WORDS, RING_COLUMNS, type RingColumn, type RingColumnKey } from './wakeFields'
 export { canonicalInput, planDocument, planFileName, writePlan } from './writePlan'

@@ -11,12 +11,9 @@ const LOW_JET_REYNOLDS = 500
 /** Tube boundary layer that quickens the core flow by this share is worth a note: common practice. */
 const BOUNDARY_LAYER_SHARE = 1.25
 
-/** Above this axial flow over peak speed the co-flow curve is held, not measured (Zhu, Zhang, Gao & Yu 2023). */
-const HIGHEST_MEASURED_FLOW = 0.5
-const LOWEST_MEASURED_FLOW = -0.4
-
-const two = (value: number): string => value.toFixed(2)
-const whole = (value: number): string => String(Math.round(value))
+const two = (value: number): string => (Math.abs(value) < 1000 ? value.toFixed(2) : value.toPrecision(3))
+/** Three figures, as the results are shown. */
+const whole = (value: number): string => String(Number(value.toPrecision(3)))
 
 /** Ring Reynolds numbers of both ends of the range, rising. */
 function reynoldsRange(pulse: PulseResult): readonly number[] {
@@ -62,6 +59,8 @@ const PULSE_NOTE_SOURCES: Readonly<Record<PulseNote['id'], string>> = {
   'no-matching-ring': 'Norbury 1973, J. Fluid Mech. 57:417',
   'thin-core': 'diffusion of a line vortex; textbook law',
   'no-steady-ring': 'Hill 1894; Norbury 1973, J. Fluid Mech. 57:417',
+  'elliptic-exit': 'Dhanak & de Bernardinis 1981, J. Fluid Mech. 109:189',
+  'stream-left-out': 'limits of the slug model',
 }
 
 const PULSE_NOTE_CAUTIONS: readonly CautionDefinition[] = Object.entries(PULSE_NOTE_SOURCES).map(([id, source]) => ({
@@ -119,26 +118,12 @@ export const MODEL_CAUTIONS: readonly CautionDefinition[] = [
         : null,
   },
   {
-    id: 'no-ring-in-counter-flow',
-    group: 'model',
-    source: 'Zhu, Zhang, Gao & Yu 2023, J. Fluid Mech.',
-    text: ({ plan, pulse }) => {
-      if (pulse === null) return null
-      const ratio = plan.ambient.axialFlow / pulse.peakSpeed
-      if (ratio < LOWEST_MEASURED_FLOW)
-        return `Counter-flow of ${two(-ratio)} times the peak speed: beyond 0.4 no ring was found to pinch off, and no formation number is given.`
-      if (ratio > HIGHEST_MEASURED_FLOW)
-        return `Co-flow of ${two(ratio)} times the peak speed is beyond the measured 0.5: the formation numbers are held at their values there.`
-      return null
-    },
-  },
-  {
     id: 'slow-start',
     group: 'model',
     source: 'definition of a quick start: peak speed x time to 95 % of it / D at most 1',
     text: ({ pulse }) =>
       pulse !== null && !pulse.quickStart
-        ? `The speed takes ${two(pulse.startFormationTime)} formation times to reach 95 % of its peak: estimates made for quick starts (carried volume, speed match, published band) do not apply, and no over-pressure is added.`
+        ? `The speed takes ${two(pulse.startFormationTime)} formation times to reach 95 % of its peak: carried volume and speed match hold for quick starts only and are left out, the published band was measured for quick starts and is shown for orientation, and no over-pressure is added.`
         : null,
   },
   {

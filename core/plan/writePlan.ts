@@ -102,6 +102,7 @@ export function canonicalInput(plan: Plan): string {
 export function planFileName(title: string): string {
   const plain = title
     .normalize('NFKD')
+    .replace(/\p{M}+/gu, '')
     .replace(/[^\p{L}\p{N}]+/gu, '-')
     .replace(/^-+|-+$/g, '')
     .toLowerCase()

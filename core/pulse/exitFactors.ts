@@ -95,3 +95,8 @@ export function requireNozzle(nozzle: NozzleInput): void {
 function multiply(a: Invariants, b: Invariants): Invariants {
   return { circulation: a.circulation * b.circulation, impulse: a.impulse * b.impulse, energy: a.energy * b.energy }
 }
+
+/** Piston area over exit area: how far the slug moves while the piston moves one. */
+export function exitPerPiston({ diameter, pistonDiameter }: NozzleInput): number {
+  return (pistonDiameter / diameter) ** 2
+}

@@ -93,10 +93,10 @@ function ellipticBand(axisRatio: number): { low: number; centre: number; high: n
 
 function modifierNotes(nozzle: NozzleInput, streamRatio: number, ringExpected: boolean): string[] {
   const notes: string[] = []
-  const ratio = streamRatio.toFixed(2)
+  const ratio = streamRatio.toFixed(2).replace('-', '−')
   if (!ringExpected)
     notes.push(
-      `No ring is expected: the counter-flow is ${ratio} of the peak exit speed, and rings were seen down to -0.40 (Zhu et al. 2023).`,
+      `No ring is expected: the counter-flow is ${ratio} of the peak exit speed, and rings were seen down to −0.40 (Zhu et al. 2023).`,
     )
   else if (streamRatio > STRONGEST_CO_FLOW + ROUNDING)
     notes.push(
@@ -104,7 +104,7 @@ function modifierNotes(nozzle: NozzleInput, streamRatio: number, ringExpected: b
     )
   else if (streamRatio !== 0)
     notes.push(
-      `The stream, ${ratio} of the peak exit speed, is in every estimate, by a curve between the published values at -0.40 and 0.50 (Zhu et al. 2023).`,
+      `The stream, ${ratio} of the peak exit speed, is in every estimate, by a curve between the published values at −0.40 and 0.50 (Zhu et al. 2023).`,
     )
   if (nozzle.exitProfile === 'parabolic')
     notes.push(
@@ -113,8 +113,8 @@ function modifierNotes(nozzle: NozzleInput, streamRatio: number, ringExpected: b
   if (nozzle.axisRatio > 1)
     notes.push(
       nozzle.axisRatio > ELLIPTIC_TO
-        ? `Elliptic nozzles were measured at axis ratios 2 and 4: 3..4 on the equal-area diameter (O'Farrell & Dabiri 2014); this one, ${nozzle.axisRatio.toPrecision(3)}, is held at that.`
-        : `Elliptic nozzles of axis ratio 2 and 4 gave 3..4 on the equal-area diameter (O'Farrell & Dabiri 2014); every estimate is scaled by the centre of that band.`,
+        ? `Elliptic nozzles were measured at axis ratios 2 and 4: 3 to 4 on the equal-area diameter (O'Farrell & Dabiri 2014); this one, ${nozzle.axisRatio.toPrecision(3)}, is held at that.`
+        : `Elliptic nozzles of axis ratio 2 and 4 gave 3 to 4 on the equal-area diameter (O'Farrell & Dabiri 2014); every estimate is scaled by the centre of that band.`,
     )
   if (nozzle.shape === 'orifice') notes.push(...orificeNotes(nozzle))
   if (nozzle.shape !== 'orifice' && nozzle.radialRatio > 0)
@@ -126,7 +126,7 @@ function modifierNotes(nozzle: NozzleInput, streamRatio: number, ringExpected: b
 
 function orificeNotes(nozzle: NozzleInput): string[] {
   const notes = [
-    `Every estimate is multiplied by contraction^1.5 with a contraction of ${contraction(nozzle).toFixed(3)} (Limbourg & Nedic 2021)${
+    `Every estimate is multiplied by the contraction to the power 1.5, here ${contraction(nozzle).toFixed(3)} (Limbourg & Nedic 2021)${
       nozzle.contraction === null ? ', estimated from the area ratio' : ''
     }.`,
   ]

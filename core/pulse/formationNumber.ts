@@ -11,7 +11,7 @@ import { formationModifiers, type FormationModifiers } from './formationModifier
 import { formationNotes } from './formationNotes'
 import { dimensionlessEnergy, slugInvariants } from './invariants'
 import type { SpeedProgramme } from './programme'
-import type { FormationBasis, FormationNumbers, Invariants, PulseInput } from './types'
+import type { FormationBasis, FormationNumbers, Invariants, PulseInput, StrokeMargin } from './types'
 
 /** Dimensionless energy at which rings stop taking more: Gharib, Rambod & Shariff 1998 (recalled, not re-read). */
 export const LIMITING_ENERGY = 0.33
@@ -93,6 +93,20 @@ export function formationNumbers(input: PulseInput, programme: SpeedProgramme): 
       notes: formationNotes({ estimates, adopted, startFormationTime, quick, modifiers }),
     },
     ringMatches: search.matches,
+  }
+}
+
+/** Stroke left, over every estimate shown and the published band. @param strokeRatio of the plan's own stroke */
+export function strokeMargin(numbers: FormationNumbers, strokeRatio: number): StrokeMargin | null {
+  const { energyLimit, carriedVolume, speedMatch, computed, published, low, high, adopted } = numbers
+  if (published === null || low === null || high === null) return null
+  const ends = [energyLimit, carriedVolume, speedMatch, computed, ...published, low, high].filter(
+    (value) => value !== null,
+  )
+  return {
+    low: Math.min(...ends) - strokeRatio,
+    high: Math.max(...ends) - strokeRatio,
+    adopted: adopted === null ? null : adopted - strokeRatio,
   }
 }
 

@@ -7,7 +7,7 @@
  * withStroke          the same programme at another stroke
  * programmeRowProblems  what is wrong with the rows of a table
  */
-export { contraction, exitFactors, LARGEST_RADIAL_RATIO } from './exitFactors'
+export { contraction, exitFactors, exitPerPiston, LARGEST_RADIAL_RATIO } from './exitFactors'
 export { PUBLISHED_BAND } from './formationModifiers'
 export { isQuickStart, LIMITING_ENERGY } from './formationNumber'
 export { HISTORY_TIMES } from './history'
@@ -35,5 +35,6 @@ export type {
   PulseNote,
   PulseResult,
   PulseRing,
+  StrokeMargin,
 } from './types'
 export { wholeClosedPulse, type WholePulse } from './wholePulse'

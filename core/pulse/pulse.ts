@@ -6,8 +6,8 @@
  */
 import { DomainError, requireRange } from '../base'
 import { corePressureDrop, mostUnstableWaveNumber } from '../ring'
-import { exitFactors, requireNozzle } from './exitFactors'
-import { formationNumbers, isQuickStart } from './formationNumber'
+import { exitFactors, exitPerPiston, requireNozzle } from './exitFactors'
+import { formationNumbers, isQuickStart, strokeMargin } from './formationNumber'
 import { pulseHistory } from './history'
 import {
   NOTHING,
@@ -40,8 +40,8 @@ export function computePulse(input: PulseInput): PulseResult {
   const startFormationTime = (programme.peakSpeed * programme.timeTo95PercentOfPeak) / diameter
   const quickStart = isQuickStart(startFormationTime)
   const strokeRatio = programme.stroke / diameter
-  // Exit over piston area: what leaves the exit the piston has swept.
-  const areaRatio = (diameter / nozzle.pistonDiameter) ** 2
+  // What leaves the exit the piston has swept.
+  const areaRatio = 1 / exitPerPiston(nozzle)
 
   const slugOf = (pulse: WholePulse) => slugInvariants(pulse.moments, density, diameter, factors)
   const totalOf = (pulse: WholePulse, basis: OverPressureBasis) =>
@@ -83,6 +83,7 @@ export function computePulse(input: PulseInput): PulseResult {
     total,
     dimensionlessEnergy: dimensionlessEnergy(slug, density),
     formationNumber: formation.numbers,
+    margin: strokeMargin(formation.numbers, strokeRatio),
     pinchedOff,
     ring,
     ringFromSlug,

@@ -34,7 +34,7 @@ export function pulseNotes(
   if (nozzle.shape !== 'tube' && nozzle.radialRatio === 0)
     say(
       'parallel-jet-assumed',
-      `Circulation, impulse and energy are those of a parallel jet; ${nozzle.shape === 'orifice' ? 'an orifice' : 'a converging exit'} makes more of each, by the radial speed ratio once it is given.`,
+      `Circulation, impulse and energy are those of a parallel jet; ${nozzle.shape === 'orifice' ? 'an orifice' : 'a converging exit'} makes more of each. The radial speed ratio, here 0, brings that in.`,
     )
   if (nozzle.radialRatio > 0)
     say(
@@ -46,12 +46,27 @@ export function pulseNotes(
   if (ring !== null && ring.meanCoreRadius < found.viscousCore)
     say(
       'thin-core',
-      'The matched core is thinner than viscosity alone would make it during the stroke, sqrt(4 nu t): the real ring is thicker and slower than the match, and core pressure and wave number are taken at sqrt(4 nu t).',
+      'The matched core is thinner than viscosity alone would make it during the stroke, √(4νt): the real ring is thicker and slower than the match, and core pressure and wave number are taken at √(4νt).',
     )
   if (ring?.model === 'hill limit')
     say(
       'no-steady-ring',
       "No steady ring has this little energy for its circulation and impulse: the ring is held at Hill's vortex with impulse and energy kept, and the circulation it cannot hold is counted to the trailing jet.",
     )
+  if (nozzle.axisRatio > 1)
+    say(
+      'elliptic-exit',
+      'Ring and drawing are those of the round exit of equal area; a ring from an elliptic exit is not steady and exchanges its axes as it goes.',
+    )
+  if (input.axialFlow !== 0) say('stream-left-out', streamSentence(input.axialFlow / programme.peakSpeed))
   return notes
+}
+
+/** What the flow past the nozzle does not enter. */
+function streamSentence(ratio: number): string {
+  const left =
+    'The flow past the nozzle is in the formation number only: circulation, impulse, energy and speed of the ring are those in still water, its speed relative to the water around it.'
+  return ratio >= 1
+    ? `${left} The water outside is as fast as the jet or faster, so the layer that leaves the lip turns the other way: do not expect this ring.`
+    : left
 }

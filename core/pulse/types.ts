@@ -101,6 +101,17 @@ export interface FormationNumbers {
   readonly notes: readonly { readonly estimate: keyof FormationNumbers | 'modifier'; readonly text: string }[]
 }
 
+/**
+ * Stroke left before pinch-off, in exit diameters; negative past it. From the lowest to the highest of all that stands beside it: every
+ * estimate that has a value, and the published band.
+ */
+export interface StrokeMargin {
+  readonly low: number
+  readonly high: number
+  /** By the adopted estimate; null where it has no value. */
+  readonly adopted: number | null
+}
+
 /** The ring of a pulse, matched to the steady family. */
 export interface PulseRing extends Invariants {
   /** Mean of inner and outer core radius, L_r [m]. */
@@ -151,6 +162,8 @@ export interface PulseNote {
     | 'no-matching-ring'
     | 'thin-core'
     | 'no-steady-ring'
+    | 'elliptic-exit'
+    | 'stream-left-out'
   readonly text: string
 }
 
@@ -184,6 +197,8 @@ export interface PulseResult {
   /** Of the slug: E / (rho^1/2 I^1/2 Gamma^3/2). */
   readonly dimensionlessEnergy: number
   readonly formationNumber: FormationNumbers
+  /** null where no ring is expected. */
+  readonly margin: StrokeMargin | null
   /** strokeRatio > adopted; null where there is no adopted value. */
   readonly pinchedOff: boolean | null
   /** Ring by the adopted basis. Null where no ring is expected. */

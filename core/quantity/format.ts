@@ -66,6 +66,9 @@ function fullDecimal(value: number, unit: string): Decimal {
   return decimal
 }
 
+/** An end of a range below this share of the other is rounding. */
+const ROUNDING_SHARE = 1e-12
+
 /**
  * Two ends of a range with one number of decimals: `93 to 112`.
  *
@@ -75,8 +78,10 @@ function fullDecimal(value: number, unit: string): Decimal {
  * @param low in the base unit, in either order with high
  */
 export function formatRange(low: number, high: number, unit: string, digits = 3): { text: string; unit: string } {
-  const [from = low, to = high] = [fromBase(low, unit), fromBase(high, unit)].sort((a, b) => a - b)
-  const largest = Math.max(Math.abs(from), Math.abs(to))
+  const both = [fromBase(low, unit), fromBase(high, unit)].sort((a, b) => a - b)
+  const largest = Math.max(...both.map(Math.abs))
+  // What is left of a difference that should have been nothing is shown as nothing.
+  const [from = low, to = high] = both.map((end) => (Math.abs(end) < ROUNDING_SHARE * largest ? 0 : end))
   if (!Number.isFinite(largest) || largest === 0) return { text: joined(formatNumber(from), formatNumber(to)), unit }
   const order = Number(largest.toExponential(heldDigits(digits) - 1).split('e')[1])
   const plain = order >= LOWEST_PLAIN_ORDER && order <= HIGHEST_PLAIN_ORDER

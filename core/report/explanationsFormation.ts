@@ -30,18 +30,19 @@ function verdict(
 }
 
 const margin: ExplanationMaker = (context) => {
-  const { adopted, low, high } = context.pulse.formationNumber
+  const { adopted } = context.pulse.formationNumber
+  const margin = context.pulse.margin
   return {
     title: 'Stroke left before pinch-off',
     mathml: formula('F −', over('L', 'D')),
     formula:
-      'Formation number less stroke ratio, over the range from the lowest to the highest of published band, energy limit and computed jet.',
+      'Formation number less stroke ratio, from the lowest to the highest of every estimate that has a value and the published band.',
     values: [
       ...values(context),
       ...[
         { name: 'adopted formation number', value: adopted },
-        { name: 'lowest', value: low },
-        { name: 'highest', value: high },
+        { name: 'lowest margin', value: margin?.low ?? null },
+        { name: 'highest margin', value: margin?.high ?? null },
       ].flatMap(({ name, value }) => (value === null ? [] : [{ name, value, unit: '' }])),
     ],
     source:
@@ -122,7 +123,13 @@ const dimensionlessEnergy: ExplanationMaker = (context) => ({
   title: 'Dimensionless energy',
   mathml: formula(sub('E', 'n'), '=', over('E', row(root('ρ I'), power('Γ', '3/2')))),
   formula: 'Energy over density^(1/2) impulse^(1/2) circulation^(3/2) of the slug; sqrt(pi/2) D/L at a steady speed.',
-  values: values(context),
+  values: [
+    ...values(context),
+    { name: 'slug energy E', value: context.pulse.slug.energy, unit: 'J' },
+    { name: 'slug impulse I', value: context.pulse.slug.impulse, unit: 'N s' },
+    { name: 'slug circulation Γ', value: context.pulse.slug.circulation, unit: 'm²/s' },
+    { name: 'density ρ', value: context.water.density, unit: 'kg/m³' },
+  ],
   source: 'Definition after Gharib, Rambod & Shariff 1998 (recalled, not re-read); slug identity.',
   mark: 'identity',
   range: 'Any programme; no steady ring exists below 0.160 (Hill’s vortex).',

@@ -17,6 +17,10 @@ function slugValues({ plan, water, pulse }: ExplanationContext): Values {
     { name: 'exit diameter D', value: plan.nozzle.diameter, unit: 'm' },
     { name: 'stroke L', value: pulse.stroke, unit: 'm' },
     { name: 'peak exit speed U', value: pulse.peakSpeed, unit: 'm/s' },
+    { name: 'duration of the pulse', value: pulse.duration, unit: 's' },
+    { name: 'slug circulation', value: pulse.slug.circulation, unit: 'm²/s' },
+    { name: 'slug impulse', value: pulse.slug.impulse, unit: 'N s' },
+    { name: 'slug energy', value: pulse.slug.energy, unit: 'J' },
   ]
 }
 
@@ -102,7 +106,7 @@ const speed: ExplanationMaker = (context) => ({
   mathml: formula(
     sub('U', 'ring'),
     '=',
-    over('Γ', row('4 π', sub('L', 'r'))),
+    over('Γ', row('4 π', 'R')),
     'u ( ε ) ,',
     sub('E', 'n'),
     '( ε ) =',
@@ -121,9 +125,9 @@ const speed: ExplanationMaker = (context) => ({
 const radius: ExplanationMaker = (context) => ({
   ...speed(context),
   title: 'Radius and core of the ring',
-  mathml: formula('I = ρ π Γ', power(sub('L', 'r'), '2'), 'i ( ε )'),
+  mathml: formula('I = ρ π Γ', power('R', '2'), 'i ( ε )'),
   formula:
-    'Radius L_r, mean of the core’s inner and outer radius, from the impulse of the matched steady ring; the core radius is that of a circle of the core’s area.',
+    'Radius R, the mean of the core’s inner and outer radius, from the impulse of the matched steady ring; the core radius is that of a circle of the core’s area.',
 })
 
 const corePressure: ExplanationMaker = (context) => ({
@@ -144,7 +148,7 @@ const corePressure: ExplanationMaker = (context) => ({
 
 const waveNumber: ExplanationMaker = (context) => ({
   title: 'Most unstable number of waves',
-  mathml: formula('n ≈', over(row('2.5', sub('L', 'r')), 'a')),
+  mathml: formula('n ≈', over(row('2.5', 'R'), 'a')),
   formula: 'About 2.5 ring radii over core radii waves around the ring grow fastest (uniform core).',
   values: matchValues(context),
   source: 'Widnall, Bliss & Tsai 1974 (recalled, not re-read).',

@@ -25,7 +25,7 @@ const density: ExplanationMaker = (context) => ({
     { name: 'density', value: context.water.density, unit: 'kg/m³' },
     { name: 'kinematic viscosity', value: context.water.kinematicViscosity, unit: 'm²/s' },
   ],
-  source: context.water.sources.join('; '),
+  source: context.water.sources.join(' '),
   mark: 'published',
   ...rangeOfWater(context),
 })

@@ -113,6 +113,14 @@ function energyPlot(pulse: PulseResult): PlotModel {
       },
     ],
     bands: band === null ? [] : [{ axis: 'x', from: band[0], to: band[1], label: 'published band' }],
-    lines: [{ axis: 'y', value: LIMITING_ENERGY, label: `limit ${LIMITING_ENERGY}`, kind: 'limit' }],
+    lines: [{ axis: 'y', value: LIMITING_ENERGY, label: limitLabel(pulse), kind: 'limit' }],
   }
+}
+
+/** The limit as it crosses the slug's energy: modifiers of nozzle and stream move the estimate, not this curve. */
+function limitLabel({ formationNumber }: PulseResult): string {
+  const { energyLimit, unmodified } = formationNumber
+  const moved =
+    energyLimit !== null && unmodified.energyLimit !== null && Math.abs(energyLimit - unmodified.energyLimit) > 1e-9
+  return moved ? `limit ${LIMITING_ENERGY}, before modifiers` : `limit ${LIMITING_ENERGY}`
 }

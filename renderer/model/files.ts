@@ -8,12 +8,14 @@ import {
   readPlan,
   readProgrammeCsv,
   setRows,
+  unknownKeysInWords,
   validatePlan,
   writePlan,
   type Plan,
 } from '../../core/plan'
 import { isFailure, type Host, type PlanFile } from '../host/types'
 import type { PlanDocument } from './document'
+import { exitPerPiston } from '../../core/pulse'
 import type { Notices } from './notices'
 
 export type LeaveAnswer = 'save' | 'discard' | 'cancel'
@@ -79,12 +81,14 @@ export function createFiles({ host, document, notices, askToLeave }: FilesContex
     if (!(await mayLeave())) return
     notices.clear()
     document.replace(reading.plan, file)
+    const unknown = unknownKeysInWords(reading.plan)
+    if (unknown !== null) notices.fail(`${name}: ${unknown}`)
     if (reading.migratedFrom !== null)
       notices.tell(`${name} was made by version ${reading.migratedFrom}; saving it writes the present version.`)
   }
 
   function readTable(name: string, text: string): void {
-    const reading = readProgrammeCsv(text)
+    const reading = readProgrammeCsv(text, exitPerPiston(document.content.value.nozzle))
     if (!reading.ok) {
       notices.fail(`${name} was not read: ${reading.message}`)
       return
@@ -96,6 +100,7 @@ export function createFiles({ host, document, notices, askToLeave }: FilesContex
       return
     }
     document.change('table', next)
+    notices.clear()
     notices.tell(`Read ${reading.rows.length} rows from ${name}. ${reading.notes.join(' ')}`)
   }
 

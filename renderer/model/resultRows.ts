@@ -90,9 +90,7 @@ export function ringRows(plan: Plan, pulse: PulseResult, units: Units): readonly
     row('ring.speed', 'Ring speed', 'speed', units.ringSpeed, [`${pair(share)} of the peak exit speed`]),
     row('ring.radius', 'Radius', 'radius', units.length, [`core ${pair(ends.map((end) => end.coreRatio))} of it`]),
     row('ring.impulse', 'Impulse', 'impulse', units.impulse, [
-      plan.models.overPressure === 'computed'
-        ? 'with the computed jet'
-        : 'computed jet not run yet: it would narrow this',
+      pulse.ringWithOverPressure === null ? 'of the slug' : 'how much the over-pressure adds is disputed',
     ]),
     row('ring.energy', 'Energy', 'energy', units.energy, []),
   ]
@@ -100,11 +98,11 @@ export function ringRows(plan: Plan, pulse: PulseResult, units: Units): readonly
 
 /** The stroke left before the ring is full, in exit diameters; null where no estimate has an end. */
 export function marginRow(plan: Plan, pulse: PulseResult, units: Units): ResultRow | null {
-  const { adopted, low, high } = pulse.formationNumber
-  if (low === null || high === null) return null
-  const figure = range([low - pulse.strokeRatio, high - pulse.strokeRatio], '', 2)
+  const { margin } = pulse
+  if (margin === null) return null
+  const figure = range([margin.low, margin.high], '', 2)
   const basis = adoptedBasisInWords(plan).formationNumber
-  if (adopted === null)
+  if (margin.adopted === null)
     return {
       id: 'margin',
       label: 'Margin',
@@ -112,14 +110,14 @@ export function marginRow(plan: Plan, pulse: PulseResult, units: Units): ResultR
       unit: 'D',
       notes: [`${basis}, adopted: none for this plan`],
     }
-  const left = adopted - pulse.strokeRatio
+  const left = margin.adopted
   const length = formatQuantity(left * plan.nozzle.diameter, units.length, 2)
   return {
     id: 'margin',
     label: 'Margin',
     figure: figure.text,
     unit: 'D',
-    notes: [`${basis}, adopted: ${formatNumber(left, 2)} D, ${length}`],
+    notes: ['over every estimate and the published band', `${basis}, adopted: ${formatNumber(left, 2)} D, ${length}`],
   }
 }
 
@@ -213,7 +211,7 @@ export function furtherRows(data: RunData, pulse: PulseResult, units: Units): re
     label: 'Jet Reynolds number',
     figure: formatNumber(pulse.jetReynolds, 3),
     unit: '',
-    notes: ['mean exit speed and exit diameter'],
+    notes: ['peak exit speed and exit diameter'],
   })
   if (pulse.unstableWaveNumber !== null)
     rows.push({

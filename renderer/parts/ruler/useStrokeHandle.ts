@@ -40,6 +40,7 @@ export function useStrokeHandle(document: PlanDocument, scale: () => HandleScale
   function set(ratio: number, burst: { readonly id: string; readonly pause: number }): void {
     const held = Math.min(scale().end, Math.max(SHORTEST_RATIO, ratio))
     if (held === planStrokeRatio(document.content.value)) return
+    moved = true
     document.change('stroke', setStrokeRatio(document.content.value, held), burst)
   }
 
@@ -65,7 +66,6 @@ export function useStrokeHandle(document: PlanDocument, scale: () => HandleScale
       // Whole hundredths, or coarser where a pixel is more: the hand cannot do better and the numbers stay round.
       const grain = Math.max(0.01, 10 ** Math.floor(Math.log10(scale().perPixel)))
       const ratio = Math.round((scale().ratioAt(event.clientX) + offset) / grain) * grain
-      moved = true
       set(Number(ratio.toFixed(6)), { id: gesture, pause: Infinity })
     },
     release(event) {

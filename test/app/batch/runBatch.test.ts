@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto'
+import { existsSync } from 'node:fs'
 import { mkdir, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
@@ -87,6 +88,13 @@ describe('a run', () => {
       expect(names).toEqual(['pulse.csv', ...wake, 'summary.json'])
     },
   )
+
+  it('names a field it does not know, and computes all the same', async () => {
+    await writePlanFile({ programme: { shape: 'rectangular', stroke: 0.06, peakSpeed: 0.2, riseTme: 1 } })
+    const { code, notes } = await batch(['plan.json', '--out', 'out'])
+    expect(code).toBe(0)
+    expect(notes).toEqual(['plan.json: Not known to this version, kept and not read: programme.riseTme.'])
+  })
 
   it('repeats to the byte', async () => {
     await writePlanFile()
@@ -212,6 +220,14 @@ describe('a refusal', () => {
     expect(code).toBe(0)
     expect(written).not.toContain(path.join('out', 'pulse.csv'))
     expect(written).toContain(path.join('out', 'trajectory.csv'))
+  })
+
+  // Node's recursive mkdir goes round for ever where a folder's parent stands and the system still says there is none.
+  it.runIf(existsSync('/proc/self'))('of a folder the system will not make exits 2 and does not hang', async () => {
+    await writePlanFile()
+    const { code, notes } = await batch(['plan.json', '--out', '/proc/nope/deeper'])
+    expect(code).toBe(2)
+    expect(notes[0]).toMatch(/could not be made/)
   })
 
   it('of a folder that cannot be made exits 2', async () => {

@@ -25,7 +25,8 @@ const TRIGGERS: Readonly<Record<string, Readonly<Record<string, unknown>>>> = {
     programme: { shape: 'linear-ramp', stroke: 0.3, peakSpeed: 0.2 },
     models: { formationNumber: 'carriedVolume' },
   },
-  'no-ring-in-counter-flow': { ambient: { axialFlow: -0.1 } },
+  'elliptic-exit': { nozzle: { diameter: 0.03, axisRatio: 2 } },
+  'stream-left-out': { ambient: { axialFlow: 0.02 } },
   'slow-start': { programme: { shape: 'linear-ramp', stroke: 0.06, peakSpeed: 0.2 } },
   'reduced-peak': { programme: { shape: 'trapezoid', stroke: 0.001, peakSpeed: 0.2, riseTime: 0.05, fallTime: 0.05 } },
   'modified-formation-number': { nozzle: { shape: 'orifice', diameter: 0.03, pistonDiameter: 0.06 } },
@@ -70,6 +71,11 @@ describe('cautions', () => {
       expect(await idsOf(trigger)).toContain(id)
     },
   )
+
+  it('a stream faster than the jet is told to make no such ring', async () => {
+    const { data } = await run(planOf({ ambient: { axialFlow: 0.25 } }), { sections: ['pulse'] })
+    expect(data?.cautions.find(({ id }) => id === 'stream-left-out')?.text).toMatch(/do not expect this ring/)
+  })
 
   it('a calm pulse in fresh water has none of them', async () => {
     expect(

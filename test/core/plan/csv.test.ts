@@ -65,6 +65,16 @@ describe('readProgrammeCsv', () => {
     expect(reading.notes.join(' ')).toMatch(/Delimiter .* decimal/)
   })
 
+  it('carries the piston’s own column to the exit by the ratio of areas, and says so', () => {
+    const reading = readProgrammeCsv('time (s),piston position (mm)\n0,0\n1,5\n2,10\n', 4)
+    if (!reading.ok) throw new Error(reading.message)
+    expect(reading.rows.at(-1)).toEqual({ time: 2, position: 0.04 })
+    expect(reading.notes.join(' ')).toMatch(/position of the piston in mm, times 4 for the exit/)
+    const exit = readProgrammeCsv('time (s),exit speed (m/s)\n0,0\n1,5\n2,0\n', 4)
+    expect(exit.ok && exit.rows[1]).toEqual({ time: 1, speed: 5 })
+    expect(exit.ok && exit.notes.join(' ')).toMatch(/speed at the exit/)
+  })
+
   it('reads positions', () => {
     const reading = readProgrammeCsv('time (s),position (cm)\n0,0\n1,2\n2,3\n')
     expect(reading.ok && reading.rows).toEqual([

@@ -1,6 +1,16 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { decodePlan, planDocument, readPlan, validatePlan, writePlan } from '../../../core/plan'
+import {
+  EXAMPLES,
+  examplePlan,
+  unknownKeys,
+  unknownKeysInWords,
+  decodePlan,
+  planDocument,
+  readPlan,
+  validatePlan,
+  writePlan,
+} from '../../../core/plan'
 import { documentOf, planOf } from '../../support/plans'
 
 function messagesOf(document: unknown): string {
@@ -179,6 +189,27 @@ describe('readPlan', () => {
     const reading = readPlan(text)
     expect(reading.ok).toBe(true)
     expect(Object.prototype).not.toHaveProperty('polluted')
+  })
+})
+
+describe('unknownKeys', () => {
+  it('names misspelt fields and sections nobody knows, and none of a plan this version knows or later ones will', () => {
+    const plan = planOf({
+      programme: { shape: 'trapezoid', stroke: 0.096, peakSpeed: 0.2, riseTme: 5 },
+      water: { kind: 'given', density: 1000, kinematicViscosity: 1e-6, vapourPressure: 2000, colour: 'green' },
+      nozle: {},
+      thruster: { count: 1 },
+      wake: { duration: 1, steps: 3 },
+    })
+    expect(unknownKeys(plan)).toEqual(['nozle', 'water.colour', 'programme.riseTme', 'wake.steps'])
+    expect(unknownKeysInWords(plan)).toMatch(
+      /kept and not read: nozle, water\.colour, programme\.riseTme, wake\.steps\./,
+    )
+    expect(unknownKeysInWords(planOf())).toBeNull()
+  })
+
+  it('finds none in any example', () => {
+    for (const { id } of EXAMPLES) expect(unknownKeys(examplePlan(id)), id).toEqual([])
   })
 })
 

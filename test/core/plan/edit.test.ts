@@ -73,6 +73,13 @@ describe('edits of a plan', () => {
     expectClose(back.programme.stroke, 0.03, 1e-15, 'stroke of the rows')
   })
 
+  it('start given water from what the water was', () => {
+    const given = setChoice(planOf(), 'water.kind', 'given').water
+    expect(given.density).toBeCloseTo(998.2, 1)
+    expect(given.kinematicViscosity).toBeCloseTo(1.003e-6, 8)
+    expect(validatePlan(setChoice(planOf(), 'water.kind', 'given'))).toEqual([])
+  })
+
   it('remember a shown unit', () => {
     expect(setUnit(planOf(), 'length', 'cm').view.units).toEqual({ length: 'cm' })
   })

@@ -260,3 +260,21 @@ describe('refusals', () => {
     expect(refused).toThrow(expect.objectContaining({ field }))
   })
 })
+
+describe('the stroke left before pinch-off', () => {
+  it('spans every estimate that has a value and the published band, and holds the adopted one', () => {
+    for (const formationBasis of ['energyLimit', 'carriedVolume', 'speedMatch', 'published'] as const) {
+      const { margin, formationNumber, strokeRatio } = computePulse({ ...atStrokeRatio(3.2), formationBasis })
+      if (margin === null || margin.adopted === null) throw new Error('no margin')
+      expectNear(margin.low, (formationNumber.speedMatch ?? NaN) - strokeRatio, 1e-12, 'lowest')
+      expectNear(margin.high, 4.5 - strokeRatio, 1e-12, 'highest')
+      expect(margin.adopted).toBeGreaterThanOrEqual(margin.low)
+      expect(margin.adopted).toBeLessThanOrEqual(margin.high)
+    }
+  })
+
+  it('is absent where no ring is expected', () => {
+    const pulse = computePulse({ ...atStrokeRatio(2), axialFlow: -10 })
+    expect(pulse.margin).toBeNull()
+  })
+})

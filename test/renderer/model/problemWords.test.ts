@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { defaultPlan, setChoice, validatePlan } from '../../../core/plan'
+import { defaultPlan, setChoice, setField, validatePlan } from '../../../core/plan'
 import { problemInWords } from '../../../renderer/model/problemWords'
 
 describe('problemInWords', () => {
@@ -13,8 +13,24 @@ describe('problemInWords', () => {
     )
   })
 
+  it('counts what stands in the lists of a wake from 1, and names it as its table does', () => {
+    expect(problemInWords('wake.rings.1.coreRadius must be at most 0.03 m, got 0.04 m')).toBe(
+      'Core radius of ring 2 must be at most 0.03 m, got 0.04 m',
+    )
+    expect(problemInWords('wake.nozzles.0.direction.2 must be a finite number, got Infinity')).toBe(
+      'Direction z of nozzle 1 must be a finite number, got Infinity',
+    )
+    expect(problemInWords('wake.stations.0 must be a length')).toBe('Station 1 must be a length')
+    expect(problemInWords('wake.wall must not stand across the stream: ambient.axialFlow must be 0 with it')).toBe(
+      'The wall must not stand across the stream: flow past it must be 0 with it',
+    )
+    expect(problemInWords('wake.wall.normal.0 must be a number')).toBe('Normal x of the wall must be a number')
+    expect(problemInWords('wake.model must be auto or filament for these rings')).toMatch(/^The engine must be/)
+    expect(problemInWords('train.pulses must be at least 1, got 0')).toBe('Pulses must be at least 1, got 0')
+  })
+
   it('leaves no path in what a plan with missing values is told', () => {
-    const problems = validatePlan(setChoice(defaultPlan(), 'water.kind', 'given'))
+    const problems = validatePlan(setField(setChoice(defaultPlan(), 'water.kind', 'given'), 'water.density', null))
     expect(problems.length).toBeGreaterThan(0)
     for (const problem of problems) expect(problemInWords(problem.message)).not.toMatch(/\w\.\w/u)
   })

@@ -39,14 +39,14 @@ describe('result rows', () => {
     expect(row?.notes[0]).toContain('too slow')
   })
 
-  it('has the margin as the range of the ends less the stroke, and the adopted one in a note', async () => {
+  it('has the margin over every estimate, and the adopted one in a note', async () => {
     const { plan, pulse, units } = await compute(setStrokeRatio(defaultPlan(), 2))
-    const { low, high, adopted } = pulse.formationNumber
+    const { speedMatch, published } = pulse.formationNumber
     const row = marginRow(plan, pulse, units)
-    expect(low).not.toBeNull()
-    expect(row?.figure).toBe(`${((low ?? 0) - 2).toFixed(1)} to ${((high ?? 0) - 2).toFixed(1)}`)
-    expect(adopted).not.toBeNull()
-    expect(row?.notes[0]).toMatch(/^energy limit, adopted: 1\.\d D, \d+\u00A0mm$/u)
+    // The lowest of them is the speed match, the highest the end of the published band.
+    expect(row?.figure).toBe(`${((speedMatch ?? 0) - 2).toFixed(1)} to ${((published?.[1] ?? 0) - 2).toFixed(1)}`)
+    expect(row?.notes[0]).toBe('over every estimate and the published band')
+    expect(row?.notes[1]).toMatch(/^energy limit, adopted: 1\.\d D, \d+\u00A0mm$/u)
   })
 
   it('has no margin and no ring in a counter-flow that lets none form', async () => {

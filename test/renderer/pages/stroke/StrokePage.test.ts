@@ -1,7 +1,7 @@
 import { flushPromises } from '@vue/test-utils'
 import { nextTick } from 'vue'
 import { afterEach, describe, expect, it } from 'vitest'
-import { examplePlan, setChoice } from '../../../../core/plan'
+import { examplePlan, setChoice, setField } from '../../../../core/plan'
 import { formatRange } from '../../../../core/quantity'
 import StrokeInputs from '../../../../renderer/pages/stroke/StrokeInputs.vue'
 import StrokeResults from '../../../../renderer/pages/stroke/StrokeResults.vue'
@@ -45,12 +45,12 @@ describe('StrokeInputs', () => {
     expect(workspace.document.undoName.value).toBe('exit diameter')
   })
 
-  it('shows contraction for an orifice and the radial ratio for a converging exit only', async () => {
+  it('shows the contraction for an orifice, and the radial ratio for every exit that is no tube', async () => {
     const { wrapper, workspace } = inputs()
     const has = (path: string) => wrapper.find(`[data-path="${path}"]`).exists()
     expect([has('nozzle.contraction'), has('nozzle.radialRatio')]).toEqual([false, false])
     await wrapper.findAll('select')[0]?.setValue('orifice')
-    expect([has('nozzle.contraction'), has('nozzle.radialRatio')]).toEqual([true, false])
+    expect([has('nozzle.contraction'), has('nozzle.radialRatio')]).toEqual([true, true])
     expect(workspace.document.content.value.nozzle.shape).toBe('orifice')
     await wrapper.findAll('select')[0]?.setValue('converging')
     expect([has('nozzle.contraction'), has('nozzle.radialRatio')]).toEqual([false, true])
@@ -58,7 +58,8 @@ describe('StrokeInputs', () => {
 
   it('asks for what a given liquid needs and says so at the field', async () => {
     const { wrapper, workspace } = inputs()
-    workspace.document.change('kind', setChoice(workspace.document.content.value, 'water.kind', 'given'))
+    const given = setChoice(workspace.document.content.value, 'water.kind', 'given')
+    workspace.document.change('kind', setField(given, 'water.density', null))
     await nextTick()
     expect(wrapper.get('[data-path="water.density"] .refusal').text()).not.toBe('')
     expect(wrapper.find('[data-path="water.temperatureCelsius"]').exists()).toBe(false)
@@ -120,7 +121,8 @@ describe('StrokeResults', () => {
   it('keeps old results and says why there are no newer ones', async () => {
     const { wrapper, workspace } = await resultsOf()
     const before = wrapper.findAll('.result').length
-    workspace.document.change('kind', setChoice(workspace.document.content.value, 'water.kind', 'given'))
+    const given = setChoice(workspace.document.content.value, 'water.kind', 'given')
+    workspace.document.change('kind', setField(given, 'water.density', null))
     await nextTick()
     expect(wrapper.get('[role=alert]').text()).toContain('Density must be given')
     expect(wrapper.get('[role=alert]').text()).toContain('before this change')

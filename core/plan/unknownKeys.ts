@@ -1,0 +1,46 @@
+/**
+ * Keys of a plan that this version does not know. They are kept and written back, but a misspelt field would be among them, so
+ * whoever reads a plan tells them.
+ */
+import { planDocument } from './writePlan'
+import { isObject } from './decodeFields'
+import type { JsonObject, Plan } from './types'
+
+/** Sections whose every key this version knows; others belong to later capabilities and are not looked into. */
+const KNOWN_SECTIONS = ['water', 'nozzle', 'programme', 'ambient', 'models', 'train', 'wake', 'view'] as const
+
+/** Sections the contract names, whether or not this version reads them. */
+const LATER_SECTIONS = ['jet', 'thruster', 'tankRun', 'readings', 'sweep', 'spread', 'held'] as const
+
+/** Dotted paths of the keys this version does not know, in their order; empty for a plan it knows whole. */
+export function unknownKeys(plan: Plan): readonly string[] {
+  const known = planDocument({ ...plan, source: {} })
+  const later: readonly string[] = LATER_SECTIONS
+  const top = Object.keys(plan.source).filter((key) => !(key in OPTIONAL) && !(key in known) && !later.includes(key))
+  const inside = KNOWN_SECTIONS.flatMap((section) => {
+    const given = plan.source[section]
+    const taken = known[section]
+    if (!isObject(given) || !isObject(taken)) return []
+    return Object.keys(given)
+      .filter((key) => !(key in taken) && !isOptional(section, key))
+      .map((key) => `${section}.${key}`)
+  })
+  return [...top, ...inside]
+}
+
+/** Known keys that a saved plan may leave out. */
+const OPTIONAL: JsonObject = { notes: '', title: '' }
+function isOptional(section: string, key: string): boolean {
+  return (
+    (section === 'water' && ['density', 'kinematicViscosity', 'vapourPressure'].includes(key)) ||
+    (section === 'programme' && key === 'rows')
+  )
+}
+
+/** The keys in a sentence; null where there are none. */
+export function unknownKeysInWords(plan: Plan): string | null {
+  const keys = unknownKeys(plan)
+  if (keys.length === 0) return null
+  const list = keys.slice(0, 6).join(', ') + (keys.length > 6 ? ` and ${keys.length - 6} more` : '')
+  return `Not known to this version, kept and not read: ${list}.`
+}
