@@ -4,6 +4,32 @@
 export { checkMarch, MOST_OUTPUTS, MOST_RINGS } from './checkInput'
 export { marchCoaxialRings } from './marchCoaxial'
 export { THIN_CORE_LIMIT } from './ringEvents'
+export {
+  ENSEMBLE_DELTAS,
+  ensembleDeltas,
+  SHORT_STROKE,
+  SHORT_STROKE_DELTA,
+  SHOWN_DELTA,
+  startingJetEnsemble,
+  type JetByDelta,
+  type JetEnsemble,
+  type JetEnsembleInput,
+} from './jet/ensemble'
+export { LARGEST_DELTA, LEAST_DELTA } from './jet/checkJetInput'
+export { FORMATION_STROKE, FORMATION_STROKE_FROM, formationInput } from './jet/formationInput'
+export { LIP_AVERAGE } from './jet/shedding'
+export { startingJet } from './jet/startingJet'
+export type {
+  JetCounters,
+  JetHistory,
+  JetOptions,
+  JetPinchOff,
+  JetRing,
+  JetRun,
+  JetSettings,
+  JetSnapshot,
+  StartingJetInput,
+} from './jet/types'
 export { deltaOverCore } from './ringFlow'
 export { LARGEST_TUBE_SHARE, RoundTube, tubeSlowing } from './roundTube'
 export { tankSlowing, type TankSection } from './tankImages'

@@ -1,6 +1,7 @@
 /** Every figure of the performance list this version can measure. */
 import { commandFigures } from './commands'
 import { coreFigures } from './core'
+import { jetFigures } from './jet'
 import { kernelBench } from './kernel'
 import type { Figure } from './measure'
 
@@ -8,6 +9,7 @@ import type { Figure } from './measure'
 export const GROUPS: Readonly<Record<string, () => Promise<readonly Figure[]>>> = {
   core: async () => coreFigures(),
   kernel: kernelBench,
+  jet: jetFigures,
   commands: commandFigures,
 }
 
