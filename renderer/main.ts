@@ -15,6 +15,7 @@ import './style/ruler.css'
 import './style/fields.css'
 import './style/results.css'
 import './style/dialogs.css'
+import './style/wake.css'
 
 /** Storage the page may not have, for instance where the browser keeps nothing. */
 function storage(): Storage | null {
@@ -37,6 +38,14 @@ const workspace = effectScope(true).run(() => {
     },
     (choice) => host.setTheme(choice),
   )
-  return createWorkspace({ host, client: createWorkerClient(spawnWorker), theme, plan: defaultPlan(), storage: kept })
+  return createWorkspace({
+    host,
+    client: createWorkerClient(spawnWorker),
+    wakeClient: createWorkerClient(spawnWorker),
+    pictureClient: createWorkerClient(spawnWorker),
+    theme,
+    plan: defaultPlan(),
+    storage: kept,
+  })
 })
 if (workspace !== undefined) createApp(App, { workspace }).mount('#app')

@@ -19,7 +19,11 @@ export const WAKE_CAUTIONS: readonly CautionDefinition[] = [
     text: (context) => {
       const event = first(context, 'cores-touch')
       if (event === undefined) return null
-      return `The cores of rings ${event.rings.join(' and ')} touch at ${seconds(event.time)}: merging and reconnection are not modelled, and the run ends there.`
+      const what =
+        event.rings.length > 1
+          ? `The cores of rings ${event.rings.join(' and ')} touch`
+          : `The core of ring ${event.rings.join()} reaches the wall`
+      return `${what} at ${seconds(event.time)}: what follows is not modelled, and the run ends there.`
     },
   },
   {

@@ -47,8 +47,8 @@ export function fieldColour(map: FieldMap, share: number): Paint {
 }
 
 /**
- * Colour of rings that turn against the main ones: Okabe and Ito's reddish purple, darkened on light ground until it stands out 4.5 to 1.
+ * Colour of rings that turn against the main ones: Okabe and Ito's reddish purple, darkened on light ground so that it keeps its hue under the light of the drawing.
  */
 export function counterColour(dark: boolean): string {
-  return dark ? '#D98DB7' : '#8F3F73'
+  return dark ? '#D98DB7' : '#7A3B66'
 }

@@ -35,7 +35,33 @@ export type {
 } from './sceneTypes'
 export { swirlArc } from './swirlArc'
 export { textWidth } from './textWidth'
+export { thinPlot } from './thinPlot'
 export { niceTicks, tickLabel, tickStep } from './ticks'
 export type { Explanation, PlotAxis, PlotBand, PlotLine, PlotModel, PlotSeries, SeriesRole } from './types'
+export { MOST_LINES, MOST_PAIRS, wakePlots, type WakePlotOptions, type WakePlotUnits } from './wakePlots'
+export {
+  nearestPair,
+  neighbourSeparations,
+  pathIndex,
+  pathOffsets,
+  totalImpulse,
+  type NeighbourSeparation,
+  type WakeSeries,
+} from './wakeSeries'
 export { adoptedBasisInWords, explain, EXPLANATION_IDS, type ExplanationId } from './explanations'
 export type { ExplanationContext } from './explanationTypes'
+export { counterColour, fieldColour, type FieldMap, type Paint } from './fieldColours'
+export { wakeSceneToSvg, type WakeSvgChoice } from './wakeSceneSvg'
+export { wakeScene, type WakeSceneData, type WakeSceneUnits } from './wakeScene'
+export type {
+  WakeSceneDatum,
+  WakeSceneDye,
+  WakeSceneLine,
+  WakeSceneModel,
+  WakeSceneNozzle,
+  WakeScenePlane,
+  WakeSceneRing,
+  WakeSceneStation,
+  WakeSceneTube,
+  WakeSceneWall,
+} from './wakeSceneTypes'

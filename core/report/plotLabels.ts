@@ -31,7 +31,7 @@ export function plotLabels(
     for (const part of parts) points.push(...pointsAlong(part, 4))
     const longest = parts.at(-1)
     // A lone series is named by the title of its plot.
-    if (model.series.length < 2 || longest === undefined) return
+    if (model.series.length < 2 || longest === undefined || series.unnamed === true) return
     const places = placesAtEnd(longest, measure(series.name), lineHeight)
     wanted.push({ request: { id: `series-${index}`, places }, text: series.name, wears: series.role })
   })

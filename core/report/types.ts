@@ -21,6 +21,8 @@ export interface PlotSeries {
   readonly line: 'solid' | 'dashed' | 'dotted'
   /** Area down to zero shaded. */
   readonly filled: boolean
+  /** True where its name is left off the drawing: one of many lines. */
+  readonly unnamed?: boolean
 }
 
 /** A shaded interval, for instance where published experiments put pinch-off. */

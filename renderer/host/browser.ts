@@ -19,6 +19,8 @@ const EXPORT_TYPES: Readonly<Record<ExportKind, string>> = {
   csv: 'text/csv',
   svg: 'image/svg+xml',
   png: 'image/png',
+  vtp: 'application/xml',
+  gltf: 'model/gltf+json',
 }
 
 /** Time for the browser to take a download over before its content is let go [ms]. */

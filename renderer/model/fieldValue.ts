@@ -3,6 +3,8 @@ import type { ChoicePath, FieldPath, Plan } from '../../core/plan'
 
 /** The number at a path, null where it is not given. */
 export function fieldValue(plan: Plan, path: FieldPath): number | null {
+  // No train means one pulse.
+  if (plan.train === null && (path === 'train.pulses' || path === 'train.period')) return 1
   const value = valueAt(plan, path)
   return typeof value === 'number' ? value : null
 }

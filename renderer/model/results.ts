@@ -46,7 +46,9 @@ export function createResults(client: WorkerClient, onCrash: (sentence: string) 
   const running = shallowRef<{ readonly plan: Plan; readonly job: Job } | null>(null)
 
   function start(plan: Plan): void {
-    const job = client.run(plan, ['water', 'pulse'], (step) => {
+    // A wake of explicit rings may come without nozzle and programme: then there is only the water.
+    const sections = plan.absent.length === 0 ? (['water', 'pulse'] as const) : (['water'] as const)
+    const job = client.run(plan, sections, (step) => {
       if (running.value?.job === job) progress.value = step
     })
     running.value = { plan, job }

@@ -3,6 +3,7 @@ import { formatNumber, formatQuantity } from '../../core/quantity'
 import { CHOICES, type Plan } from '../../core/plan'
 import type { ResultsStatus } from './results'
 import type { Units } from './units'
+import type { WakeStatus } from './wakeJob'
 
 /** `sea water 15 °C`. */
 export function waterInWords(plan: Plan, units: Units): string {
@@ -35,6 +36,19 @@ export function freshnessInWords(status: ResultsStatus, problems: number): strin
     case 'none':
       return 'no results yet'
   }
+}
+
+/** How the rings in motion stand to the plan shown. */
+export function wakeFreshnessInWords(status: WakeStatus): string {
+  const words: Readonly<Record<WakeStatus, string>> = {
+    current: 'results current',
+    partial: 'part of the results',
+    running: 'computing',
+    stale: 'results for the previous plan',
+    failed: 'not computed',
+    none: 'no results yet',
+  }
+  return words[status]
 }
 
 /** `2 cautions`. */

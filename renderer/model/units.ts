@@ -17,6 +17,7 @@ export const UNIT_GROUPS = {
   length: { label: 'Lengths of nozzle, stroke and ring', dimension: 'length' },
   depth: { label: 'Depth of water', dimension: 'length', usual: 'm' },
   time: { label: 'Duration of the stroke', dimension: 'time' },
+  wakeTime: { label: 'Times of the wake', dimension: 'time', usual: 's' },
   rampTime: { label: 'Rise and fall times', dimension: 'time', usual: 'ms' },
   speed: { label: 'Exit speed and flow', dimension: 'speed' },
   ringSpeed: { label: 'Ring speed', dimension: 'speed', usual: 'mm/s' },
@@ -41,6 +42,7 @@ export const UNIT_KEYS: readonly UnitKey[] = [
   'depth',
   'time',
   'rampTime',
+  'wakeTime',
   'speed',
   'ringSpeed',
   'circulation',
@@ -63,6 +65,9 @@ const FIELD_GROUPS: Partial<Record<FieldPath, UnitKey>> = {
   'water.depth': 'depth',
   'programme.riseTime': 'rampTime',
   'programme.fallTime': 'rampTime',
+  'train.period': 'wakeTime',
+  'wake.duration': 'wakeTime',
+  'wake.outputStep': 'wakeTime',
 }
 
 /** Group of a field of the plan. */
@@ -114,6 +119,7 @@ export function shownUnits(choices: Readonly<Record<string, string>>, magnitudes
     depth: unit('depth'),
     time: unit('time'),
     rampTime: unit('rampTime'),
+    wakeTime: unit('wakeTime'),
     speed: unit('speed'),
     ringSpeed: unit('ringSpeed'),
     circulation: unit('circulation'),

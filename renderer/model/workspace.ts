@@ -22,11 +22,14 @@ import { createDocument, type PlanDocument } from './document'
 import { createFiles, type Files, type LeaveAnswer } from './files'
 import { createNotices, type Notices } from './notices'
 import type { PageId } from './pages'
+import { problemInWords } from './problemWords'
 import { createRecovery, type Recovery, type RecoveryStorage } from './recovery'
 import { magnitudesOf } from './resultRows'
 import { createResults, type Results } from './results'
 import type { ThemeStore } from './theme'
 import { shownUnits, type Units } from './units'
+import { createWakeJob, type WakeJob } from './wakeJob'
+import { createWakePictures, type WakePictures } from './wakePictures'
 
 export type DialogId = 'examples' | 'units' | 'export' | 'keys'
 
@@ -39,9 +42,15 @@ export interface Workspace {
   readonly host: Host
   readonly document: PlanDocument
   readonly results: Results
+  /** The rings of the open plan in motion. */
+  readonly wake: WakeJob
+  /** Dye and field for the picture of the rings. */
+  readonly wakePictures: WakePictures
   readonly units: ComputedRef<Units>
   /** What the open plan breaks; nothing is computed while there is any. */
   readonly problems: ComputedRef<readonly Problem[]>
+  /** What a field of the plan breaks, in words, from the plan's own check or from the last wake; null for nothing. */
+  refusalOf(field: string): string | null
   readonly theme: ThemeStore
   readonly notices: Notices
   readonly files: Files
@@ -51,15 +60,29 @@ export interface Workspace {
   readonly leaving: Ref<LeaveQuestion | null>
   /** Takes the picture shown as a PNG; null where none is shown. */
   readonly picture: ShallowRef<(() => Promise<Uint8Array | null>) | null>
+  /** The wake as it is shown, for its exports; null while it is not. */
+  readonly shownWake: ShallowRef<ShownWake | null>
   /** Compute the open plan again. */
   refresh(): void
   /** What a menu entry, a key or a button asks for. */
   perform(command: CommandId): void
 }
 
+/** What is on the screen of the wake. */
+export interface ShownWake {
+  /** Number of the output shown. */
+  readonly index: () => number
+  /** The scene at that time as glTF text. */
+  readonly toGltf: () => Promise<string | null>
+}
+
 export interface WorkspaceOptions {
   readonly host: Host
   readonly client: WorkerClient
+  /** Marches wakes; its own worker, so that a long run keeps nothing waiting. */
+  readonly wakeClient?: WorkerClient
+  /** Computes dye and fields of finished wakes. */
+  readonly pictureClient?: WorkerClient
   readonly theme: ThemeStore
   readonly plan: Plan
   /** Where a copy of unsaved changes is kept; null keeps none. */
@@ -69,10 +92,17 @@ export interface WorkspaceOptions {
 
 const KEY: InjectionKey<Workspace> = Symbol('workspace')
 
-export function createWorkspace({ host, client, theme, plan, storage, now }: WorkspaceOptions): Workspace {
+export function createWorkspace(options: WorkspaceOptions): Workspace {
+  const { host, client, wakeClient = client, pictureClient = wakeClient, theme, plan, storage, now } = options
   const notices = createNotices()
   const document = createDocument(plan, now)
   const results = createResults(client, (sentence) => notices.fail(sentence))
+  const wake = createWakeJob(
+    wakeClient,
+    () => document.content.value,
+    (sentence) => notices.fail(sentence),
+  )
+  const wakePictures = createWakePictures(pictureClient, (sentence) => notices.fail(sentence))
   const page = ref<PageId>('stroke')
   const dialog = ref<DialogId | null>(null)
   const leaving = shallowRef<LeaveQuestion | null>(null)
@@ -99,6 +129,20 @@ export function createWorkspace({ host, client, theme, plan, storage, now }: Wor
   }
   watch(document.content, refresh, { immediate: true, flush: 'sync' })
 
+  /** Compute what the page shows. */
+  function run(): void {
+    refresh()
+    const shown = document.content.value
+    if (page.value === 'wake' && shown.wake !== null && problems.value.length === 0) wake.run()
+  }
+
+  function refusalOf(field: string): string | null {
+    const found = problems.value.find((candidate) => candidate.field === field)
+    if (found !== undefined) return problemInWords(found.message)
+    const failure = wake.failure.value
+    return failure !== null && failure.field === field ? problemInWords(failure.message) : null
+  }
+
   function perform(command: CommandId): void {
     const actions: Readonly<Record<CommandId, () => unknown>> = {
       'file.new': files.newPlan,
@@ -109,7 +153,7 @@ export function createWorkspace({ host, client, theme, plan, storage, now }: Wor
       'file.examples': () => (dialog.value = 'examples'),
       'edit.undo': document.undo,
       'edit.redo': document.redo,
-      'run.refresh': refresh,
+      'run.refresh': run,
       'view.stroke': () => (page.value = 'stroke'),
       'view.thrust': () => (page.value = 'thrust'),
       'view.wake': () => (page.value = 'wake'),
@@ -125,11 +169,14 @@ export function createWorkspace({ host, client, theme, plan, storage, now }: Wor
     host,
     document,
     results,
+    wake,
+    wakePictures,
     units: computed(() => {
       const pulse = results.finished.value?.data.pulse ?? null
       return shownUnits(document.units.value, pulse === null ? {} : magnitudesOf(pulse))
     }),
     problems,
+    refusalOf,
     theme,
     notices,
     files,
@@ -138,6 +185,7 @@ export function createWorkspace({ host, client, theme, plan, storage, now }: Wor
     dialog,
     leaving,
     picture: shallowRef(null),
+    shownWake: shallowRef(null),
     refresh,
     perform,
   }

@@ -29,6 +29,7 @@ export function useCommands(workspace: Workspace): void {
     if (event.defaultPrevented) return
     if (event.key === 'Escape') {
       workspace.results.cancel()
+      workspace.wake.cancel()
       return
     }
     const command = commandOf(event, workspace.host.kind, mac)

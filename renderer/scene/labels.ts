@@ -6,12 +6,12 @@ import {
   pointsAlong,
   type Box,
   type Pixel,
-  type Place,
   type PulseSceneModel,
   type SceneBar,
   type SceneCallout,
   type ScenePoint,
 } from '../../core/report'
+import { leaderOf, placesAround, type Side, type Spots } from './labelPlaces'
 import { scaleBarEnds, sceneStrokes, seenAlongAxis, shownCallouts } from './strokes'
 import { add, type Vector } from './vectors'
 import { basisOf, inSpace, project, type Basis, type Size, type View } from './view'
@@ -30,26 +30,18 @@ export interface SceneLabel {
   readonly leader: readonly [Pixel, Pixel] | null
 }
 
-type Side = 'above' | 'below' | 'left' | 'right'
-
-interface Wanted {
+interface Wanted extends Spots {
   readonly id: string
   readonly text: string
   readonly path: SceneCallout['path'] | null
   readonly quiet: boolean
   /** May be left out where there is no free place. */
   readonly spare: boolean
-  /** Where the word may stand: beside which pixel, best first. */
-  readonly spots: readonly (readonly [Side, Pixel])[]
-  readonly gap: number
-  /** What a leader points at when the word stands away from it. */
-  readonly target: Pixel
 }
 
-/** Room that editable words need to be hit, in pixels. */
-const TARGET_HEIGHT = 24
-const LINE_HEIGHT = 17
 const NOZZLE_SLICES = 6
+/** Points along lines that words keep off, in pixels apart: half the height of a word. */
+const LINE_GAP = 8
 /** Below this size only dimensions, speed and scale are named. */
 const SMALL = { width: 460, height: 260 }
 
@@ -74,10 +66,13 @@ export function sceneLabels(
   const points = sceneStrokes(model, basis, 1 / view.scale).flatMap((stroke) =>
     pointsAlong(
       stroke.points.map((point) => project(point, basis, view, size)),
-      6,
+      LINE_GAP,
     ),
   )
-  const requests = wanted.map((label) => ({ id: label.id, places: placesAround(label, measure(label.text)) }))
+  const requests = wanted.map((label) => ({
+    id: label.id,
+    places: placesAround(label, measure(label.text), label.path !== null),
+  }))
   return placeLabels(requests, { bounds, boxes: bodies(model, basis, view, size), points }).flatMap(
     ({ id, place, overlap }) => {
       const label = wanted.find((candidate) => candidate.id === id)
@@ -165,38 +160,6 @@ function bodyLabels(model: PulseSceneModel, basis: Basis, view: View, size: Size
     wanted.push(words('jet', trailingJet.label, anchor, ['above', 'below'], true))
   }
   return wanted
-}
-
-/** Distances tried, in pixels: beside it first, then further away with a leader. */
-const AWAY = [0, 10, 22, 38, 60, 90]
-const ALONG = [0, -30, 30, -60, 60]
-
-function placesAround(label: Wanted, textWidth: number): Place[] {
-  const height = label.path === null ? LINE_HEIGHT : TARGET_HEIGHT
-  const width = textWidth + (label.path === null ? 4 : 12)
-  const place = (left: number, top: number): Place => ({ left, top, width, height, vertical: false })
-  const beside = (side: Side, anchor: Pixel, away: number, along: number): Place => {
-    const gap = label.gap + away
-    if (side === 'above') return place(anchor.x - width / 2 + along, anchor.y - gap - height)
-    if (side === 'below') return place(anchor.x - width / 2 + along, anchor.y + gap)
-    if (side === 'left') return place(anchor.x - width - gap, anchor.y - height / 2 + along / 2)
-    return place(anchor.x + gap, anchor.y - height / 2 + along / 2)
-  }
-  return AWAY.flatMap((away) =>
-    ALONG.flatMap((along) => label.spots.map(([side, anchor]) => beside(side, anchor, away, along))),
-  )
-}
-
-/** A word this near to its object needs no line, in pixels. */
-const NEAR = 24
-
-function leaderOf(label: Wanted, place: Place): readonly [Pixel, Pixel] | null {
-  const { target } = label
-  const start = {
-    x: Math.min(place.left + place.width - 4, Math.max(place.left + 4, target.x)),
-    y: target.y > place.top + place.height / 2 ? place.top + place.height - 3 : place.top + 3,
-  }
-  return Math.hypot(target.x - start.x, target.y - start.y) > NEAR ? [start, target] : null
 }
 
 /** Where bodies are seen, as boxes, so that words stand beside and not on them. */

@@ -110,7 +110,6 @@ function refresh(geometry: BufferGeometry): void {
     const attribute = geometry.getAttribute(name)
     if (attribute instanceof BufferAttribute) attribute.needsUpdate = true
   }
-  geometry.computeBoundingSphere()
 }
 
 /** Triangles collected one quad at a time. */
@@ -127,9 +126,10 @@ class Quads {
   }
 
   fill(geometry: BufferGeometry): void {
+    // What the graphics processor holds of the old shape is given back at once.
+    geometry.dispose()
     geometry.setAttribute('position', new BufferAttribute(new Float32Array(this.positions), 3))
     geometry.setAttribute('normal', new BufferAttribute(new Float32Array(this.normals), 3))
-    geometry.computeBoundingSphere()
   }
 }
 

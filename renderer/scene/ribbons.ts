@@ -3,10 +3,9 @@
  * no width and alias on software renderers.
  */
 import { BufferAttribute, BufferGeometry, DynamicDrawUsage } from 'three'
-import type { DrawingColours } from '../../core/report'
 import { colourParts } from '../plots/themeColours'
 import type { Stroke } from './strokes'
-import { add, cross, dot, unit, type Vector } from './vectors'
+import type { Vector } from './vectors'
 import type { Basis } from './view'
 
 /** Lines stand this far before the surfaces they lie on, in pixels. */
@@ -14,134 +13,212 @@ const BEFORE_SURFACE = 1.5
 
 export interface Ribbons {
   readonly geometry: BufferGeometry
-  draw(strokes: readonly Stroke[], basis: Basis, perPixel: number, colours: DrawingColours): void
+  draw<Name extends string>(
+    strokes: readonly Stroke<Name>[],
+    basis: Basis,
+    perPixel: number,
+    colours: Readonly<Record<Name, string>>,
+  ): void
 }
 
 /** Strips in one growing buffer that is refilled in place. */
 export function createRibbons(): Ribbons {
   const geometry = new BufferGeometry()
-  let capacity = 0
-  let position = new BufferAttribute(new Float32Array(0), 3)
-  let colour = new BufferAttribute(new Float32Array(0), 3)
+  const tracer = new Tracer()
+  let capacity = -1
   return {
     geometry,
     draw(strokes, basis, perPixel, colours) {
-      const points: number[] = []
-      const paints: number[] = []
+      tracer.begin(basis, perPixel)
       for (const stroke of strokes) {
-        const before = points.length
-        traceStroke(points, stroke, basis, perPixel)
-        const [red, green, blue] = linear(colours[stroke.colour])
-        for (let index = before; index < points.length; index += 3) paints.push(red, green, blue)
+        tracer.setColour(colours[stroke.colour])
+        tracer.trace(stroke)
       }
-      if (points.length > capacity) {
-        capacity = Math.ceil(points.length / 2) * 3
+      if (tracer.capacity !== capacity) {
+        capacity = tracer.capacity
         geometry.dispose()
-        position = new BufferAttribute(new Float32Array(capacity), 3).setUsage(DynamicDrawUsage)
-        colour = new BufferAttribute(new Float32Array(capacity), 3).setUsage(DynamicDrawUsage)
-        geometry.setAttribute('position', position)
-        geometry.setAttribute('color', colour)
+        geometry.setAttribute('position', new BufferAttribute(tracer.points, 3).setUsage(DynamicDrawUsage))
+        geometry.setAttribute('color', new BufferAttribute(tracer.paints, 3).setUsage(DynamicDrawUsage))
       }
-      position.array.set(points)
-      colour.array.set(paints)
-      position.needsUpdate = true
-      colour.needsUpdate = true
-      geometry.setDrawRange(0, points.length / 3)
+      for (const name of ['position', 'color']) {
+        const attribute = geometry.getAttribute(name)
+        if (!(attribute instanceof BufferAttribute)) continue
+        attribute.clearUpdateRanges()
+        attribute.addUpdateRange(0, tracer.count)
+        attribute.needsUpdate = true
+      }
+      geometry.setDrawRange(0, tracer.count / 3)
     },
   }
 }
 
 /** Colours of vertices are linear. */
-function linear(colour: string): readonly [number, number, number] {
+export function linearParts(colour: string): readonly [number, number, number] {
   const [red, green, blue] = colourParts(colour)
   const one = (part: number): number => (part <= 0.04045 ? part / 12.92 : ((part + 0.055) / 1.055) ** 2.4)
   return [one(red), one(green), one(blue)]
 }
 
-function traceStroke(out: number[], stroke: Stroke, basis: Basis, perPixel: number): void {
-  const raised = stroke.points.map((point) => add(point, basis.toward, BEFORE_SURFACE * perPixel))
-  const half = (stroke.width / 2) * perPixel
-  const end = raised.at(-1)
-  if (stroke.head > 0 && end !== undefined) {
-    const length = stroke.head * perPixel
-    const { line, direction } = shortened(raised, length, basis)
-    dashed(out, line, stroke.dash, half, basis, perPixel)
-    const neck = line.at(-1) ?? end
-    const side = unit(cross(basis.toward, direction))
-    const tip = add(neck, direction, Math.hypot(...add(end, neck, -1)))
-    triangle(out, tip, add(neck, side, length * 0.32), add(neck, side, -length * 0.32))
-  } else dashed(out, raised, stroke.dash, half, basis, perPixel)
-}
+/** Writes triangles number by number: strips are traced anew in every frame that moves, and leave nothing to collect. */
+class Tracer {
+  points = new Float32Array(0)
+  paints = new Float32Array(0)
+  count = 0
+  private basis: Basis = { right: [1, 0, 0], up: [0, 1, 0], toward: [0, 0, 1], radial: [0, 1, 0] }
+  private perPixel = 1
+  private paint: readonly [number, number, number] = [0, 0, 0]
+  /** Every corner is raised so far toward the eye. */
+  private lift: Vector = [0, 0, 0]
 
-/** The line without its last `length`, as seen on the screen, and the direction in which it ends. */
-function shortened(
-  line: readonly Vector[],
-  length: number,
-  basis: Basis,
-): { readonly line: Vector[]; readonly direction: Vector } {
-  const kept = [...line]
-  let left = length
-  let tip = kept.at(-1) ?? [0, 0, 0]
-  const end = tip
-  while (kept.length > 1) {
-    const before = kept.at(-2)
-    if (before === undefined) break
-    const span = seenLength(tip, before, basis)
-    if (span > left) {
-      const share = span === 0 ? 0 : left / span
-      tip = add(tip, add(before, tip, -1), share)
-      kept[kept.length - 1] = tip
-      break
-    }
-    left -= span
-    kept.pop()
-    tip = before
+  get capacity(): number {
+    return this.points.length
   }
-  const flat = add(end, tip, -1)
-  return { line: kept, direction: unit(add(flat, basis.toward, -dot(flat, basis.toward))) }
-}
 
-function seenLength(a: Vector, b: Vector, basis: Basis): number {
-  const step = add(b, a, -1)
-  return Math.hypot(dot(step, basis.right), dot(step, basis.up))
-}
+  begin(basis: Basis, perPixel: number): void {
+    this.count = 0
+    this.basis = basis
+    this.perPixel = perPixel
+    const raise = BEFORE_SURFACE * perPixel
+    this.lift = [basis.toward[0] * raise, basis.toward[1] * raise, basis.toward[2] * raise]
+  }
 
-function dashed(
-  out: number[],
-  line: readonly Vector[],
-  dash: readonly number[],
-  half: number,
-  basis: Basis,
-  perPixel: number,
-): void {
-  let slot = 0
-  let left = dash.length > 0 ? (dash[0] ?? 0) * perPixel : Infinity
-  for (let index = 1; index < line.length; index += 1) {
-    const [start, end] = [line[index - 1], line[index]]
-    if (start === undefined || end === undefined) continue
-    const span = seenLength(start, end, basis)
-    if (span === 0) continue
-    const step = add(end, start, -1)
-    const side = unit(cross(basis.toward, step))
-    let done = 0
-    while (done < span - 1e-12) {
-      const next = Math.min(span, done + left)
-      if (slot % 2 === 0) quad(out, add(start, step, done / span), add(start, step, next / span), side, half)
-      left -= next - done
-      done = next
-      if (left > 1e-12) continue
-      slot = (slot + 1) % dash.length
-      left = (dash[slot] ?? 1) * perPixel
+  setColour(colour: string): void {
+    this.paint = linearParts(colour)
+  }
+
+  trace({ points, dash, width, head }: Stroke<string>): void {
+    const half = (width / 2) * this.perPixel
+    let end = points.length - 1
+    /** How far along its last piece the line goes. */
+    let share = 1
+    if (head > 0 && end > 0) {
+      let left = head * this.perPixel
+      for (; end > 0; end -= 1) {
+        const span = this.seen(points[end - 1], points[end])
+        if (span > left) {
+          share = 1 - left / span
+          break
+        }
+        left -= span
+      }
+      this.head(points, end, share, head * this.perPixel)
+    }
+    this.line(points, end, share, dash, half)
+  }
+
+  /** Length on the screen. */
+  private seen(a: Vector | undefined, b: Vector | undefined): number {
+    if (a === undefined || b === undefined) return 0
+    const { right, up } = this.basis
+    const x = b[0] - a[0]
+    const y = b[1] - a[1]
+    const z = b[2] - a[2]
+    return Math.hypot(x * right[0] + y * right[1] + z * right[2], x * up[0] + y * up[1] + z * up[2])
+  }
+
+  /** A filled head from the end of a shortened line to where it would have ended. */
+  private head(points: readonly Vector[], end: number, share: number, length: number): void {
+    const [before, after, tip] = [points[Math.max(0, end - 1)], points[end], points[points.length - 1]]
+    if (before === undefined || after === undefined || tip === undefined) return
+    const nx = before[0] + (after[0] - before[0]) * share
+    const ny = before[1] + (after[1] - before[1]) * share
+    const nz = before[2] + (after[2] - before[2]) * share
+    const { right, up } = this.basis
+    const [x, y, z] = [tip[0] - nx, tip[1] - ny, tip[2] - nz]
+    const across = x * right[0] + y * right[1] + z * right[2]
+    const upward = x * up[0] + y * up[1] + z * up[2]
+    const reach = Math.hypot(across, upward)
+    if (reach === 0) return
+    // Along the screen, so that a head seen at a slant keeps its shape.
+    const [ca, cu] = [across / reach, upward / reach]
+    const side = length * 0.32
+    const forward = (axis: 0 | 1 | 2): number => right[axis] * ca + up[axis] * cu
+    const aside = (axis: 0 | 1 | 2): number => up[axis] * ca - right[axis] * cu
+    const [fx, fy, fz] = [forward(0), forward(1), forward(2)]
+    const [sx, sy, sz] = [aside(0) * side, aside(1) * side, aside(2) * side]
+    this.room(9)
+    this.corner(nx + fx * reach, ny + fy * reach, nz + fz * reach)
+    this.corner(nx + sx, ny + sy, nz + sz)
+    this.corner(nx - sx, ny - sy, nz - sz)
+  }
+
+  private line(points: readonly Vector[], end: number, share: number, dash: readonly number[], half: number): void {
+    const { toward } = this.basis
+    let slot = 0
+    let left = dash.length > 0 ? (dash[0] ?? 0) * this.perPixel : Infinity
+    for (let index = 1; index <= end; index += 1) {
+      const a = points[index - 1]
+      const b = points[index]
+      if (a === undefined || b === undefined) continue
+      const whole = this.seen(a, b)
+      const span = index === end ? whole * share : whole
+      if (!(span > 0)) continue
+      const x = b[0] - a[0]
+      const y = b[1] - a[1]
+      const z = b[2] - a[2]
+      const acrossX = toward[1] * z - toward[2] * y
+      const acrossY = toward[2] * x - toward[0] * z
+      const acrossZ = toward[0] * y - toward[1] * x
+      const factor = half / Math.hypot(acrossX, acrossY, acrossZ)
+      const sx = acrossX * factor
+      const sy = acrossY * factor
+      const sz = acrossZ * factor
+      let done = 0
+      while (done < span - 1e-12) {
+        const next = Math.min(span, done + left)
+        if (slot % 2 === 0) {
+          const p = done / whole
+          const q = next / whole
+          this.quad(a[0] + x * p, a[1] + y * p, a[2] + z * p, a[0] + x * q, a[1] + y * q, a[2] + z * q, sx, sy, sz)
+        }
+        left -= next - done
+        done = next
+        if (left > 1e-12) continue
+        slot = (slot + 1) % dash.length
+        left = (dash[slot] ?? 1) * this.perPixel
+      }
     }
   }
-}
 
-function quad(out: number[], a: Vector, b: Vector, side: Vector, half: number): void {
-  const [p, q, r, s] = [add(a, side, half), add(b, side, half), add(b, side, -half), add(a, side, -half)]
-  triangle(out, p, q, r)
-  triangle(out, p, r, s)
-}
+  private quad(
+    ax: number,
+    ay: number,
+    az: number,
+    bx: number,
+    by: number,
+    bz: number,
+    sx: number,
+    sy: number,
+    sz: number,
+  ): void {
+    this.room(18)
+    this.corner(ax + sx, ay + sy, az + sz)
+    this.corner(bx + sx, by + sy, bz + sz)
+    this.corner(bx - sx, by - sy, bz - sz)
+    this.corner(ax + sx, ay + sy, az + sz)
+    this.corner(bx - sx, by - sy, bz - sz)
+    this.corner(ax - sx, ay - sy, az - sz)
+  }
 
-function triangle(out: number[], a: Vector, b: Vector, c: Vector): void {
-  out.push(...a, ...b, ...c)
+  private corner(x: number, y: number, z: number): void {
+    const { points, paints, lift, paint, count } = this
+    points[count] = x + lift[0]
+    points[count + 1] = y + lift[1]
+    points[count + 2] = z + lift[2]
+    paints[count] = paint[0]
+    paints[count + 1] = paint[1]
+    paints[count + 2] = paint[2]
+    this.count = count + 3
+  }
+
+  private room(more: number): void {
+    if (this.count + more <= this.points.length) return
+    // A multiple of a corner, half as much again.
+    const size = Math.ceil(Math.max(2304, (this.count + more) * 1.5) / 9) * 9
+    const [points, paints] = [new Float32Array(size), new Float32Array(size)]
+    points.set(this.points.subarray(0, this.count))
+    paints.set(this.paints.subarray(0, this.count))
+    this.points = points
+    this.paints = paints
+  }
 }

@@ -2,7 +2,10 @@
  * The drawing with its words on one canvas, for a picture file.
  */
 import type { DrawingColours } from '../../core/report'
-import type { SceneLabel } from './labels'
+import type { FrameWord } from './frameWord'
+import { NO_OVERLAY, type Overlay } from './overlay'
+
+type DrawnWord = Pick<FrameWord, 'text' | 'quiet' | 'left' | 'top' | 'width' | 'height' | 'leader'>
 
 export interface PictureLook {
   /** CSS pixels of the picture. */
@@ -13,11 +16,12 @@ export interface PictureLook {
   readonly colours: DrawingColours
 }
 
-/** A copy of the drawn canvas with the labels written on it. @throws {Error} where there is no 2-D canvas. */
+/** A copy of the drawn canvas with the labels and what lies over it written on it. @throws {Error} where there is no 2-D canvas. */
 export function drawLabels(
   drawn: HTMLCanvasElement,
-  labels: readonly SceneLabel[],
+  labels: readonly DrawnWord[],
   look: PictureLook,
+  overlay: Overlay = NO_OVERLAY,
 ): HTMLCanvasElement {
   const picture = document.createElement('canvas')
   picture.width = drawn.width
@@ -38,9 +42,31 @@ export function drawLabels(
     context.lineTo(leader[1].x, leader[1].y)
     context.stroke()
   }
+  drawOverlay(context, overlay, look.colours)
+  context.textAlign = 'center'
   for (const label of labels) {
     context.fillStyle = label.quiet ? look.colours.muted : look.colours.ink
     context.fillText(label.text, label.left + label.width / 2, label.top + label.height / 2)
   }
   return picture
+}
+
+function drawOverlay(context: CanvasRenderingContext2D, overlay: Overlay, colours: DrawingColours): void {
+  for (const { left, top, width, height, fill } of overlay.patches) {
+    context.fillStyle = fill
+    context.fillRect(left, top, width, height)
+  }
+  for (const { from, to, tone, width } of overlay.lines) {
+    context.strokeStyle = colours[tone]
+    context.lineWidth = width
+    context.beginPath()
+    context.moveTo(from.x, from.y)
+    context.lineTo(to.x, to.y)
+    context.stroke()
+  }
+  for (const { text, at, anchor, tone } of overlay.texts) {
+    context.fillStyle = colours[tone]
+    context.textAlign = anchor === 'middle' ? 'center' : anchor
+    context.fillText(text, at.x, at.y)
+  }
 }

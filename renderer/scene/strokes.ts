@@ -13,9 +13,9 @@ import {
 import { add, cross, unit, type Vector } from './vectors'
 import { inSpace, type Basis } from './view'
 
-export interface Stroke {
+export interface Stroke<Name extends string = keyof DrawingColours> {
   readonly points: readonly Vector[]
-  readonly colour: keyof DrawingColours
+  readonly colour: Name
   /** Pixels. */
   readonly width: number
   /** Pixels on, off, on ...; empty for a full line. */
@@ -39,12 +39,13 @@ const SWIRL_LEAST = 13
 /** A core thinner than this radius is gone over with a line, in pixels. */
 const THIN_CORE = 1.2
 
-function stroke(
+/** A stroke with what is usual for the rest. */
+export function stroke<Name extends string = keyof DrawingColours>(
   points: readonly Vector[],
-  colour: keyof DrawingColours,
+  colour: Name,
   width: number,
-  more: Partial<Stroke> = {},
-): Stroke {
+  more: Partial<Stroke<Name>> = {},
+): Stroke<Name> {
   return { points, colour, width, dash: [], over: false, head: 0, ...more }
 }
 
@@ -192,6 +193,7 @@ export function scaleBarEnds(model: PulseSceneModel, basis: Basis): readonly [Ve
   return [add(middle, basis.right, -half), add(middle, basis.right, half)]
 }
 
+/** A line with a tick at each end, as dimensions have. */
 function ticked(from: Vector, to: Vector, basis: Basis, perPixel: number, over: boolean): Stroke[] {
   const across = unit(cross(basis.toward, unit(add(to, from, -1))))
   const tick = (end: Vector): Stroke =>

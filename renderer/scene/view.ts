@@ -15,6 +15,8 @@ export interface View {
   readonly centre: { readonly right: number; readonly up: number }
 }
 
+export type Angles = Pick<View, 'azimuth' | 'elevation'>
+
 export interface Size {
   readonly width: number
   readonly height: number
@@ -37,18 +39,19 @@ export interface Basis {
   readonly radial: Vector
 }
 
-export type StandardView = 'side' | 'threeQuarter' | 'endOn'
+export type StandardView = 'side' | 'threeQuarter' | 'endOn' | 'above'
 
 const DEGREE = Math.PI / 180
-export const STANDARD_VIEWS: Readonly<Record<StandardView, Pick<View, 'azimuth' | 'elevation'>>> = {
+export const STANDARD_VIEWS: Readonly<Record<StandardView, Angles>> = {
   side: { azimuth: 0, elevation: 0 },
   threeQuarter: { azimuth: 24 * DEGREE, elevation: 13 * DEGREE },
   endOn: { azimuth: 90 * DEGREE, elevation: 0 },
+  above: { azimuth: 0, elevation: 90 * DEGREE },
 }
 
 const HIGHEST = 85 * DEGREE
 
-export function basisOf(view: Pick<View, 'azimuth' | 'elevation'>): Basis {
+export function basisOf(view: Angles): Basis {
   const [sa, ca, se, ce] = [
     Math.sin(view.azimuth),
     Math.cos(view.azimuth),
@@ -110,7 +113,8 @@ export function shifted(view: View, dx: number, dy: number): View {
   }
 }
 
-interface Frame {
+/** A part of the picture's plane, along the screen's right and up [m]. */
+export interface Frame {
   readonly left: number
   readonly right: number
   readonly bottom: number
@@ -150,13 +154,12 @@ export function projectedFrame(model: PulseSceneModel, basis: Basis): Frame {
 }
 
 /** The scale and centre at which everything drawn fills the picture. */
-export function fitted(
-  model: PulseSceneModel,
-  angles: Pick<View, 'azimuth' | 'elevation'>,
-  size: Size,
-  margins: Margins,
-): View {
-  const frame = projectedFrame(model, basisOf(angles))
+export function fitted(model: PulseSceneModel, angles: Angles, size: Size, margins: Margins): View {
+  return fittedTo(projectedFrame(model, basisOf(angles)), angles, size, margins)
+}
+
+/** The scale and centre at which a frame fills the picture. */
+export function fittedTo(frame: Frame, angles: Angles, size: Size, margins: Margins): View {
   const width = Math.max(40, size.width - margins.left - margins.right)
   const height = Math.max(40, size.height - margins.top - margins.bottom)
   const scale = Math.min(width / (frame.right - frame.left), height / (frame.top - frame.bottom))

@@ -4,7 +4,7 @@
  */
 import type { Plan } from '../../core/plan'
 import type { Progress } from '../../core/base'
-import type { RunResult, Section } from '../../core/run'
+import type { RunResult, Section, WakeData, WakePicture, WakePictureRequest } from '../../core/run'
 import type { Port, WorkerAnswer, WorkerRequest } from './messages'
 
 /** Time a cancelled job has to answer before its worker is replaced [ms]. */
@@ -17,24 +17,36 @@ export interface WorkerHandle extends Port<WorkerRequest, WorkerAnswer> {
   terminate(): void
 }
 
-/** How a job ended, beyond the run's own result. */
-export type JobOutcome =
-  | { readonly kind: 'result'; readonly result: RunResult }
-  | { readonly kind: 'cancelled' }
-  | { readonly kind: 'crashed'; readonly message: string }
+/** How a job ended without an answer of its own. */
+type NoAnswer = { readonly kind: 'cancelled' } | { readonly kind: 'crashed'; readonly message: string }
 
-export interface Job {
-  readonly outcome: Promise<JobOutcome>
+/** How a job ended, beyond the run's own result. */
+export type JobOutcome = { readonly kind: 'result'; readonly result: RunResult } | NoAnswer
+
+export type PictureOutcome = { readonly kind: 'picture'; readonly picture: WakePicture } | NoAnswer
+
+export interface Job<Outcome = JobOutcome> {
+  readonly outcome: Promise<Outcome>
   cancel(): void
 }
 
 export interface WorkerClient {
   run(plan: Plan, sections: readonly Section[], onProgress?: (progress: Progress) => void): Job
+  /** Dye and field of a finished wake of this plan. */
+  picture(
+    plan: Plan,
+    data: WakeData,
+    request: WakePictureRequest,
+    onProgress?: (progress: Progress) => void,
+  ): Job<PictureOutcome>
   dispose(): void
 }
 
+/** Whatever may end a job; each kind of job takes its own answer out of it. */
+type AnyOutcome = JobOutcome | PictureOutcome
+
 interface OpenJob {
-  readonly settle: (outcome: JobOutcome) => void
+  readonly settle: (outcome: AnyOutcome) => void
   readonly onProgress: ((progress: Progress) => void) | undefined
 }
 
@@ -72,15 +84,13 @@ export function createWorkerClient(
       return
     }
     jobs.delete(message.id)
-    job.settle(
-      message.kind === 'result'
-        ? { kind: 'result', result: message.result }
-        : { kind: 'crashed', message: message.message },
-    )
+    if (message.kind === 'result') job.settle({ kind: 'result', result: message.result })
+    else if (message.kind === 'picture') job.settle({ kind: 'picture', picture: message.picture })
+    else job.settle({ kind: 'crashed', message: message.message })
   }
 
   /** Stop the worker and settle all it had open; the next job starts a fresh one. */
-  function giveUp(outcome: JobOutcome): void {
+  function giveUp(outcome: NoAnswer): void {
     worker?.terminate()
     worker = null
     const open = [...jobs.values()]
@@ -88,22 +98,45 @@ export function createWorkerClient(
     for (const job of open) job.settle(outcome)
   }
 
+  /** Post a request and wait for what ends it; `own` takes the job's own kind of answer. */
+  function open<Outcome>(
+    request: (id: number) => WorkerRequest,
+    own: (outcome: AnyOutcome) => Outcome | NoAnswer,
+    onProgress: ((progress: Progress) => void) | undefined,
+  ): Job<Outcome | NoAnswer> {
+    const id = nextId++
+    const outcome = new Promise<Outcome | NoAnswer>((resolve) =>
+      jobs.set(id, { settle: (ended) => resolve(own(ended)), onProgress }),
+    )
+    current().post(request(id))
+    return {
+      outcome,
+      cancel() {
+        if (!jobs.has(id)) return
+        current().post({ kind: 'cancel', id })
+        later(() => {
+          if (jobs.has(id)) giveUp({ kind: 'cancelled' })
+        }, CANCEL_PATIENCE)
+      },
+    }
+  }
+
   return {
-    run(plan, sections, onProgress) {
-      const id = nextId++
-      const outcome = new Promise<JobOutcome>((settle) => jobs.set(id, { settle, onProgress }))
-      current().post({ kind: 'run', id, plan, sections })
-      return {
-        outcome,
-        cancel() {
-          if (!jobs.has(id)) return
-          current().post({ kind: 'cancel', id })
-          later(() => {
-            if (jobs.has(id)) giveUp({ kind: 'cancelled' })
-          }, CANCEL_PATIENCE)
-        },
-      }
-    },
+    run: (plan, sections, onProgress) =>
+      open<JobOutcome>(
+        (id) => ({ kind: 'run', id, plan, sections }),
+        (ended) => (ended.kind === 'picture' ? MIXED_UP : ended),
+        onProgress,
+      ),
+    picture: (plan, data, request, onProgress) =>
+      open<PictureOutcome>(
+        (id) => ({ kind: 'picture', id, plan, data, request }),
+        (ended) => (ended.kind === 'result' ? MIXED_UP : ended),
+        onProgress,
+      ),
     dispose: () => giveUp({ kind: 'cancelled' }),
   }
 }
+
+/** An answer of another kind than was asked for: never by our own worker. */
+const MIXED_UP: NoAnswer = { kind: 'crashed', message: 'the worker answered another question' }

@@ -3,7 +3,7 @@ import { decodeRequest } from './decodeMessages'
 import { serve } from './serve'
 
 serve({
-  post: (message) => self.postMessage(message),
+  post: (message, handedOver = []) => self.postMessage(message, [...handedOver]),
   listen: (listener) =>
     self.addEventListener('message', (event: MessageEvent<unknown>) => {
       const request = decodeRequest(event.data)

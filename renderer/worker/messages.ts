@@ -3,22 +3,31 @@
  */
 import type { Plan } from '../../core/plan'
 import type { Progress } from '../../core/base'
-import type { RunResult, Section } from '../../core/run'
+import type { RunResult, Section, WakeData, WakePicture, WakePictureRequest } from '../../core/run'
 
 /** To the worker. */
 export type WorkerRequest =
   | { readonly kind: 'run'; readonly id: number; readonly plan: Plan; readonly sections: readonly Section[] }
+  | {
+      readonly kind: 'picture'
+      readonly id: number
+      readonly plan: Plan
+      readonly data: WakeData
+      readonly request: WakePictureRequest
+    }
   | { readonly kind: 'cancel'; readonly id: number }
 
 /** From the worker. `crashed`: the core threw, which it does for no valid input. */
 export type WorkerAnswer =
   | { readonly kind: 'progress'; readonly id: number; readonly progress: Progress }
   | { readonly kind: 'result'; readonly id: number; readonly result: RunResult }
+  | { readonly kind: 'picture'; readonly id: number; readonly picture: WakePicture }
   | { readonly kind: 'crashed'; readonly id: number; readonly message: string }
 
 /** The part of a message port both sides use; a Worker, a worker's own scope and a MessagePort all offer it. */
 export interface Port<Sent, Received> {
-  post(message: Sent): void
+  /** @param handedOver memory that moves with the message instead of being copied: the sender has it no more */
+  post(message: Sent, handedOver?: readonly ArrayBuffer[]): void
   /** The one listener; called with each message in order. */
   listen(listener: (message: Received) => void): void
 }

@@ -1,11 +1,17 @@
 /**
  * The worker's side: core/run behind a message port. Several jobs may be open; each is cancelled by its own number.
  */
-import { run } from '../../core/run'
+import type { Progress } from '../../core/base'
+import { run, wakePicture } from '../../core/run'
+import { buffersOf } from './handOver'
 import type { Port, WorkerAnswer, WorkerRequest } from './messages'
+import { createPause } from './pauses'
+
+/** Shortest time between two reports of progress [ms]: a march makes thousands of steps in a second. */
+const REPORT_EVERY = 60
 
 /** Answer requests on a port for as long as it lives. */
-export function serve(port: Port<WorkerAnswer, WorkerRequest>): void {
+export function serve(port: Port<WorkerAnswer, WorkerRequest>, now: () => number = () => performance.now()): void {
   const signals = new Map<number, { aborted: boolean }>()
   port.listen((request) => {
     if (request.kind === 'cancel') {
@@ -17,22 +23,27 @@ export function serve(port: Port<WorkerAnswer, WorkerRequest>): void {
     signals.set(request.id, signal)
     void answer(request, signal).then((message) => {
       signals.delete(request.id)
-      port.post(message)
+      port.post(message, buffersOf(message))
     })
   })
 
   async function answer(
-    request: Extract<WorkerRequest, { kind: 'run' }>,
+    request: Exclude<WorkerRequest, { kind: 'cancel' }>,
     signal: { readonly aborted: boolean },
   ): Promise<WorkerAnswer> {
-    const { id, plan, sections } = request
+    const { id, plan } = request
+    let reported = -Infinity
+    const onProgress = (progress: Progress): void => {
+      const time = now()
+      if (time - reported < REPORT_EVERY) return
+      reported = time
+      port.post({ kind: 'progress', id, progress })
+    }
     try {
-      const result = await run(
-        plan,
-        { sections },
-        { signal, onProgress: (progress) => port.post({ kind: 'progress', id, progress }) },
-      )
-      return { kind: 'result', id, result }
+      const options = { signal, onProgress, pause: createPause(now) }
+      if (request.kind === 'picture')
+        return { kind: 'picture', id, picture: await wakePicture(plan, request.data, request.request, options) }
+      return { kind: 'result', id, result: await run(plan, { sections: request.sections }, options) }
     } catch (error) {
       return { kind: 'crashed', id, message: error instanceof Error ? error.message : String(error) }
     }

@@ -5,7 +5,7 @@ import { decodeAnswer } from './decodeMessages'
 export function spawnWorker(): WorkerHandle {
   const worker = new Worker(new URL('./entry.ts', import.meta.url), { type: 'module' })
   return {
-    post: (message) => worker.postMessage(message),
+    post: (message, handedOver = []) => worker.postMessage(message, [...handedOver]),
     listen: (listener) =>
       worker.addEventListener('message', (event: MessageEvent<unknown>) => {
         const answer = decodeAnswer(event.data)

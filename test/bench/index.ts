@@ -4,12 +4,14 @@ import { coreFigures } from './core'
 import { jetFigures } from './jet'
 import { kernelBench } from './kernel'
 import type { Figure } from './measure'
+import { wakePlaybackFigures } from './wakePlayback'
 
 /** Groups by name, so that one can be asked for alone: `npm run bench -- core`. */
 export const GROUPS: Readonly<Record<string, () => Promise<readonly Figure[]>>> = {
   core: async () => coreFigures(),
   kernel: kernelBench,
   jet: jetFigures,
+  playback: wakePlaybackFigures,
   commands: commandFigures,
 }
 

@@ -92,7 +92,9 @@ describe('pictures of a wake', () => {
     expect(positions[0]?.length).toBe(3 * 300)
     expect(positions.at(-1)?.length).toBe(3 * 600)
     const mean = (list: Float32Array | undefined) =>
-      (list ?? []).slice(0, 900).reduce((sum, v, i) => sum + (i % 3 === 0 ? v / 300 : 0), 0)
+      Array.from(list ?? [])
+        .slice(0, 900)
+        .reduce((sum, v, i) => sum + (i % 3 === 0 ? v / 300 : 0), 0)
     const path = two.trajectories[0]
     const went = (path?.x.at(-1) ?? 0) - (path?.x[0] ?? 0)
     // Most of the dyed tube is carried along with the ring; a few points are left behind.

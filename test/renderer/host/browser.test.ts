@@ -159,9 +159,13 @@ describe('saving in the browser', () => {
     const host = createBrowserHost(pageWith())
     await host.exportFile('csv', 'pulse.csv', 'x,y\r\n')
     await host.exportFile('png', 'ring.png', new Uint8Array([1, 2, 3]))
+    await host.exportFile('vtp', 'rings.vtp', '<VTKFile/>')
+    await host.exportFile('gltf', 'rings.gltf', '{}')
     expect(downloads.map(({ name, content }) => [name, content.type, content.size])).toEqual([
       ['pulse.csv', 'text/csv', 5],
       ['ring.png', 'image/png', 3],
+      ['rings.vtp', 'application/xml', 10],
+      ['rings.gltf', 'model/gltf+json', 2],
     ])
   })
 })

@@ -15,6 +15,7 @@ function heldClient() {
       jobs.push(job)
       return { outcome, cancel: () => (job.cancelled = true) }
     },
+    picture: () => expect.unreachable('results ask for no picture'),
     dispose: () => undefined,
   }
   return { client, jobs }
@@ -35,6 +36,7 @@ const done: RunResult = {
       notes: [],
     },
     pulse: null,
+    wake: null,
     cautions: [],
   },
 }

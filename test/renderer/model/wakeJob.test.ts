@@ -41,6 +41,7 @@ function heldClient() {
       jobs.push(job)
       return { outcome, cancel: () => (job.cancelled = true) }
     },
+    picture: () => expect.unreachable('a run asks for no picture'),
     dispose: () => undefined,
   }
   return { client, jobs }

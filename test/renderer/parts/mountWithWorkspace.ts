@@ -4,7 +4,7 @@
 import { mount } from '@vue/test-utils'
 import { effectScope, type Component } from 'vue'
 import { defaultPlan, type Plan } from '../../../core/plan'
-import { run } from '../../../core/run'
+import { run, wakePicture } from '../../../core/run'
 import type { Host, HostFailure, OpenedPlanFile, PlanFile } from '../../../renderer/host/types'
 import { createTheme } from '../../../renderer/model/theme'
 import { createWorkspace, WORKSPACE_KEY, type Workspace } from '../../../renderer/model/workspace'
@@ -48,6 +48,10 @@ export function fakeHost(): FakeHost {
 const directClient: WorkerClient = {
   run: (plan, sections) => ({
     outcome: run(plan, { sections }).then((result) => ({ kind: 'result', result })),
+    cancel: () => undefined,
+  }),
+  picture: (plan, data, request) => ({
+    outcome: wakePicture(plan, data, request).then((picture) => ({ kind: 'picture', picture })),
     cancel: () => undefined,
   }),
   dispose: () => undefined,

@@ -1,6 +1,6 @@
 import { MessageChannel } from 'node:worker_threads'
 import { afterEach, describe, expect, it } from 'vitest'
-import { defaultPlan, setField } from '../../../core/plan'
+import { defaultPlan, setField, setWake } from '../../../core/plan'
 import { run } from '../../../core/run'
 import { createWorkerClient, type WorkerHandle } from '../../../renderer/worker/client'
 import { decodeAnswer, decodeRequest } from '../../../renderer/worker/decodeMessages'
@@ -13,11 +13,14 @@ afterEach(() => {
 })
 
 /** A worker over a message channel: the same serve() as the real one, with structured clones in between. */
-function channelWorker(): WorkerHandle {
+function channelWorker(onHandOver: (buffers: readonly ArrayBuffer[]) => void = () => undefined): WorkerHandle {
   const { port1, port2 } = new MessageChannel()
   opened.push(port1)
   serve({
-    post: (message) => port2.postMessage(message),
+    post: (message, handedOver = []) => {
+      port2.postMessage(message, [...handedOver])
+      onHandOver(handedOver)
+    },
     listen: (listener) =>
       port2.on('message', (data: unknown) => {
         const request = decodeRequest(data)
@@ -38,7 +41,7 @@ function channelWorker(): WorkerHandle {
 
 describe('worker behind a port', () => {
   it('answers with the very numbers of core/run', async () => {
-    const client = createWorkerClient(channelWorker)
+    const client = createWorkerClient(() => channelWorker())
     const plan = defaultPlan()
     const outcome = await client.run(plan, ['water', 'pulse']).outcome
     const direct = await run(plan, { sections: ['water', 'pulse'] })
@@ -47,7 +50,7 @@ describe('worker behind a port', () => {
   })
 
   it('reports progress on the way', async () => {
-    const client = createWorkerClient(channelWorker)
+    const client = createWorkerClient(() => channelWorker())
     const steps: number[] = []
     await client.run(defaultPlan(), ['water', 'pulse'], (progress) => steps.push(progress.share)).outcome
     expect(steps.length).toBeGreaterThan(0)
@@ -56,7 +59,7 @@ describe('worker behind a port', () => {
   })
 
   it('hands a failure of the core over as a sentence, not as an exception', async () => {
-    const client = createWorkerClient(channelWorker)
+    const client = createWorkerClient(() => channelWorker())
     const broken = setField(defaultPlan(), 'programme.peakSpeed', -1)
     const outcome = await client.run(broken, ['water', 'pulse']).outcome
     expect(outcome.kind).toBe('result')
@@ -71,6 +74,71 @@ describe('worker behind a port', () => {
     expect(decodeRequest({ kind: 'run' })).toBeNull()
     expect(decodeRequest('run')).toBeNull()
     expect(decodeAnswer({ kind: 'cancel', id: 1 })).toBeNull()
+  })
+})
+
+/** Rings that share no axis, for longer than a test may take. */
+const LONG = setWake(defaultPlan(), {
+  rings: Array.from({ length: 6 }, (_, k) => ({
+    circulation: 0.01,
+    radius: 0.02,
+    coreRadius: 0.004,
+    core: 'uniform' as const,
+    centre: [0.1 * k, 0.01 * (k % 2), 0] as const,
+    direction: [1, 0, 0] as const,
+  })),
+  duration: 500,
+  outputStep: 0.05,
+})
+
+describe('a wake in the worker', () => {
+  it('comes over with the very numbers of core/run, its paths handed over and not copied', async () => {
+    const plan = setWake(LONG, { duration: 0.02, outputStep: 0.01 })
+    const direct = await run(plan, { sections: ['wake'] })
+    const handed: ArrayBuffer[][] = []
+    const client = createWorkerClient(() => channelWorker((buffers) => handed.push([...buffers])))
+    const outcome = await client.run(plan, ['wake']).outcome
+    expect(outcome).toEqual({ kind: 'result', result: direct })
+    const buffers = handed.at(-1) ?? []
+    expect(buffers.length).toBeGreaterThan(10)
+    // What was handed over is gone on the other side.
+    expect(buffers.every(({ byteLength }) => byteLength === 0)).toBe(true)
+    client.dispose()
+  })
+
+  it('can be run twice: nothing the core needs again was given away', async () => {
+    const plan = setWake(LONG, { rings: [], duration: 2 })
+    const client = createWorkerClient(() => channelWorker())
+    const first = await client.run(plan, ['wake']).outcome
+    const second = await client.run(plan, ['wake']).outcome
+    expect(second).toEqual(first)
+    client.dispose()
+  })
+
+  it('hears a cancellation in the middle of a march, and hands over what was finished', async () => {
+    const client = createWorkerClient(() => channelWorker())
+    const reports: number[] = []
+    const job = client.run(LONG, ['wake'], ({ share }) => reports.push(share))
+    while (reports.length < 4) await new Promise((resolve) => setTimeout(resolve, 20))
+    const from = performance.now()
+    job.cancel()
+    const outcome = await job.outcome
+    expect(performance.now() - from).toBeLessThan(200)
+    expect(outcome.kind === 'result' && outcome.result.status).toBe('cancelled')
+    const wake = outcome.kind === 'result' ? outcome.result.data?.wake?.wake : undefined
+    expect(wake?.outputTimes.length).toBeGreaterThan(0)
+    expect(wake?.time).toBeLessThan(500)
+    client.dispose()
+  })
+
+  it('reports its progress no more often than anyone can read', async () => {
+    const client = createWorkerClient(() => channelWorker())
+    let count = 0
+    const from = performance.now()
+    const plan = setWake(LONG, { rings: LONG.wake?.rings.slice(0, 2) ?? [], duration: 0.5 })
+    await client.run(plan, ['wake'], () => count++).outcome
+    expect(count).toBeLessThanOrEqual((performance.now() - from) / 50 + 2)
+    client.dispose()
   })
 })
 

@@ -32,7 +32,8 @@ async function pageOf(plan = PAIR, host = fakeHost()) {
   await computed(workspace)
   const wrapper = mountIn(workspace, WakePage)
   mounted.push(wrapper)
-  for (let i = 0; i < 100 && plan.wake !== null && workspace.wake.finished.value === null; i++)
+  // Drawn a frame after the results are there.
+  for (let i = 0; i < 100 && plan.wake !== null && !wrapper.find('.events').exists(); i++)
     await new Promise((resolve) => setTimeout(resolve, 5))
   await flushPromises()
   const button = (name: string | RegExp) => {

@@ -1,0 +1,22 @@
+/** Columns and values of an edited table. */
+import type { Dimension } from '../../core/quantity'
+import type { FieldLimits } from '../model/fieldCheck'
+
+export type GridValue = number | string | null
+
+export interface GridColumn {
+  readonly key: string
+  readonly label: string
+  /** Shown unit, '' for none; it stands in the heading. */
+  readonly unit: string
+  readonly dimension: Dimension
+  readonly help: string
+  readonly limits?: FieldLimits
+  /** Words by key where the column is a choice. */
+  readonly options?: Readonly<Record<string, string>>
+  /** True for a row whose value cannot be edited here. */
+  readonly fixed?: (row: number) => boolean
+}
+
+/** Stands in a cell that has no value of its own. */
+export const NO_VALUE = '—'
