@@ -37,8 +37,10 @@ export function niceTicks(min: number, max: number, count: number): number[] {
   const digits = Math.min(100, Math.max(0, -Math.floor(Math.log10(step))))
   const ticks: number[] = []
   for (let index = first; index <= final; index += 1) {
-    const value = index * step
-    ticks.push(value === 0 ? 0 : digits > 0 ? Number(value.toFixed(digits)) : value)
+    const exact = index * step
+    const value = exact === 0 ? 0 : digits > 0 ? Number(exact.toFixed(digits)) : exact
+    // Far from zero the quotient rounds, and the first or last multiple can lie a unit of the last place outside.
+    if (value >= low - slack && value <= high + slack) ticks.push(value)
   }
   return ticks
 }

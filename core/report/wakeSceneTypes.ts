@@ -2,7 +2,7 @@
  * The drawing of rings in motion as numbers: what stands still around them, and the run they are drawn from. SI; x along the jet,
  * y up, z toward someone who looks from the side.
  */
-import type { Vector, Wake } from '../filament'
+import type { FieldPlane, Vector, Wake } from '../filament'
 import type { SceneNozzle } from './sceneTypes'
 
 export interface WakeSceneRing {
@@ -68,23 +68,9 @@ export interface WakeSceneDye {
   readonly positions: readonly Float32Array[]
 }
 
-/** A field on a flat rectangle through the rings. */
-export interface WakeScenePlane {
-  readonly quantity: 'speed' | 'stream function'
-  /** Unit the scale is read in. */
+/** A field on a flat rectangle through the rings, with the unit its scale is read in. */
+export interface WakeScenePlane extends FieldPlane {
   readonly unit: string
-  /** Nodes along and across. */
-  readonly columns: number
-  readonly rows: number
-  /** Place of the first node [m], and the whole sides from it to the last column and to the last row. */
-  readonly origin: Vector
-  readonly along: Vector
-  readonly across: Vector
-  /** SI values for each output time, row by row from the origin, columns running fastest; NaN is left clear. */
-  readonly values: readonly Float32Array[]
-  /** Ends of the scale, SI; of a signed field its low end is minus its high end. */
-  readonly low: number
-  readonly high: number
 }
 
 export interface WakeSceneModel {

@@ -7,14 +7,12 @@ import { BLOCK, STREAM_TABLE, TABLE_OCTAVES, VELOCITY_TABLE, WORK } from './layo
 const FIRST_EXPONENT: i64 = 1023 - TABLE_OCTAVES
 const QUARTER_LOG_TWO: f64 = 0.17328679513998632
 
-// @ts-ignore: decorator
 @inline
 function smallestM1(): v128 {
   return i64x2.splat(FIRST_EXPONENT << 52)
 }
 
 /** The part of m1 within its interval, as a double of 1..1.125 less the middle of that. */
-// @ts-ignore: decorator
 @inline
 function offset(bits: v128): v128 {
   const unit = v128.or(v128.and(bits, i64x2.splat(0x1ffffffffffff)), i64x2.splat(0x3ff0000000000000))
@@ -38,7 +36,6 @@ function shiftBelow(m1: v128): v128 {
 }
 
 /** The pair (e, f) of one target: Horner's rule in t^2 for the odd and the even part, which is the shorter wait. */
-// @ts-ignore: decorator
 @inline
 function lookUp(bits: i64, t: v128, t2: v128): v128 {
   const at = VELOCITY_TABLE - (<usize>FIRST_EXPONENT << 10) + (<usize>(bits >> 42) & ~127)
@@ -99,7 +96,6 @@ function geometry(target: usize, rings: usize, count: i32): bool {
 }
 
 /** Second pass: the elliptic parts and the sums. `special` looks for rings below the table and for the targets' own. */
-// @ts-ignore: decorator
 @inline
 function velocities(target: usize, rings: usize, count: i32, sums: usize, special: bool, self: i32): void {
   const tx = v128.load(target)
@@ -181,7 +177,6 @@ export function addCoaxialVelocity(targets: usize, pairs: i32, rings: usize, rin
 }
 
 /** The pairs (c_7 t^2 .. , c_6 t^2 ..) of one target by Horner's rule in t^2: odd and even part of C. */
-// @ts-ignore: decorator
 @inline
 function lookUpStream(bits: i64, t2: v128): v128 {
   const at = STREAM_TABLE - (<usize>FIRST_EXPONENT << 9) + (<usize>(bits >> 43) & ~63)

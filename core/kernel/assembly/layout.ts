@@ -4,29 +4,23 @@
  */
 
 /** Rings of a block, and where their intermediate results stand: 64 bytes a ring. */
-// @ts-ignore: decorator
 @inline
 export const BLOCK: i32 = 32
-// @ts-ignore: decorator
 @inline
 export const WORK: usize = 1024
 
 /** Where the table of e and f begins: 16 doubles an interval. */
-// @ts-ignore: decorator
 @inline
 export const VELOCITY_TABLE: usize = 4096
 
 /** Number of intervals in each table. */
-// @ts-ignore: decorator
 @inline
 const INTERVALS: usize = 353
 
 /** Where the table of C begins: 8 doubles an interval. */
-// @ts-ignore: decorator
 @inline
 export const STREAM_TABLE: usize = VELOCITY_TABLE + INTERVALS * 128
 
 /** Octaves below m1 = 1 in the tables. */
-// @ts-ignore: decorator
 @inline
 export const TABLE_OCTAVES: i64 = 44

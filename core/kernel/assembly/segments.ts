@@ -4,7 +4,6 @@
  */
 
 /** Writes three components of the sum at two targets. */
-// @ts-ignore: decorator
 @inline
 function storeSums(sums: usize, ux: v128, uy: v128, uz: v128): void {
   v128.store(sums, ux)

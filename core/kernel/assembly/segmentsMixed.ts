@@ -7,14 +7,12 @@
 const BLOCK: usize = 32 * 64
 
 /** Rounds the doubles of a pair of pairs to four floats. */
-// @ts-ignore: decorator
 @inline
 function floats(low: v128, high: v128): v128 {
   return v128.shuffle<f64>(f32x4.demote_f64x2_zero(low), f32x4.demote_f64x2_zero(high), 0, 2)
 }
 
 /** What rounding left over: as floats again. */
-// @ts-ignore: decorator
 @inline
 function remainders(low: v128, high: v128, rounded: v128): v128 {
   const upper = v128.shuffle<f64>(rounded, rounded, 1, 1)
@@ -25,13 +23,11 @@ function remainders(low: v128, high: v128, rounded: v128): v128 {
 }
 
 /** Differences of four targets and a source, both as pairs of floats. */
-// @ts-ignore: decorator
 @inline
 function difference(t: v128, rest: v128, source: v128, sourceRest: v128): v128 {
   return f32x4.add(f32x4.sub(t, source), f32x4.sub(rest, sourceRest))
 }
 
-// @ts-ignore: decorator
 @inline
 function addTo(sums: usize, part: v128): void {
   const upper = v128.shuffle<f64>(part, part, 1, 1)

@@ -36,6 +36,18 @@ describe('ticks', () => {
     )
   })
 
+  it('stay inside also where the step is near the last digit of the ends', () => {
+    const low = -245159.71874999997
+    for (const tick of niceTicks(low, low + 1e-6, 5)) expect(tick).toBeGreaterThanOrEqual(low - 1e-12)
+    fc.assert(
+      fc.property(fc.double({ min: -1e6, max: 1e6, noNaN: true }), fc.integer({ min: 2, max: 10 }), (end, count) => {
+        const ticks = niceTicks(end, end + 1e-6, count)
+        return ticks.every((tick) => tick >= end - 1e-12 && tick <= end + 1e-6 + 1e-12)
+      }),
+      { numRuns: 2000 },
+    )
+  })
+
   it('answer ends that coincide, are swapped or are not finite', () => {
     expect(niceTicks(2, 2, 5)).toEqual([2])
     expect(niceTicks(3, 0, 3)).toEqual([0, 1, 2, 3])
