@@ -19,18 +19,33 @@ export default defineConfig({
           root: ROOT,
           environment: 'node',
           include: ['test/core/**/*.test.ts', 'test/build/**/*.test.ts'],
+          setupFiles: ['test/support/seed.ts'],
           // The linter is loaded whole for the law of imports: seconds on a slow machine.
+          testTimeout: 60_000,
+        },
+      },
+      {
+        ...shared(),
+        test: {
+          name: 'app',
+          root: ROOT,
+          environment: 'node',
+          include: ['test/app/**/*.test.ts'],
+          setupFiles: ['test/support/seed.ts'],
           testTimeout: 30_000,
         },
       },
       {
         ...shared(),
-        test: { name: 'app', root: ROOT, environment: 'node', include: ['test/app/**/*.test.ts'] },
-      },
-      {
-        ...shared(),
         plugins: [vue()],
-        test: { name: 'renderer', root: ROOT, environment: 'happy-dom', include: ['test/renderer/**/*.test.ts'] },
+        test: {
+          name: 'renderer',
+          root: ROOT,
+          environment: 'happy-dom',
+          include: ['test/renderer/**/*.test.ts'],
+          setupFiles: ['test/support/seed.ts'],
+          testTimeout: 30_000,
+        },
       },
       {
         ...shared(),
