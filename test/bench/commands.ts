@@ -13,6 +13,7 @@ import { median, type Figure } from './measure'
 const BATCH_RUNS = 9
 const START_RUNS = 5
 const DRAG_STEPS = 60
+const CANCELS = 5
 
 /** Rows of the performance list about commands, page and ruler. The programs must be built. */
 export async function commandFigures(): Promise<readonly Figure[]> {
@@ -21,6 +22,7 @@ export async function commandFigures(): Promise<readonly Figure[]> {
   try {
     const starts = await startTimes(browser)
     const drags = await dragTimes(browser)
+    const cancels = await cancelTimes(browser)
     return [
       {
         name: 'batch, one pulse, whole process',
@@ -42,6 +44,13 @@ export async function commandFigures(): Promise<readonly Figure[]> {
         unit: 'ms',
         n: drags.length,
         goal: { atMost: 30 },
+      },
+      {
+        name: 'cancel of a long march takes effect',
+        value: median(cancels),
+        unit: 's',
+        n: cancels.length,
+        goal: { atMost: 0.2 },
       },
       { name: 'renderer bundle, gzip', value: pageWeight() / 1000, unit: 'kB', n: 1, goal: { atMost: 450 } },
     ]
@@ -178,4 +187,45 @@ async function measureDrag(page: Page): Promise<readonly number[]> {
     send('pointerup', x)
     return times
   }, DRAG_STEPS)
+}
+
+/** From the press of Cancel to the end of the run on the screen, for ten rings in space. */
+async function cancelTimes(browser: Browser): Promise<readonly number[]> {
+  const { address, stop } = await startProgram()
+  const page = await browser.newPage({ viewport: { width: 1440, height: 900 } })
+  await page.goto(address)
+  const rings = Array.from({ length: 10 }, (_, k) => ({
+    circulation: 0.01,
+    radius: 0.02,
+    coreRadius: 0.003,
+    centre: [0.06 * k, 0.005 * (k % 3), 0],
+    direction: [1, 0.04 * (k % 4), 0],
+  }))
+  const plan = documentOf({ title: 'Long march', wake: { rings, duration: 1000, outputStep: 0.05 } })
+  const choosing = page.waitForEvent('filechooser')
+  await page.getByRole('button', { name: 'Open', exact: true }).click()
+  const file = { name: 'long.ringwright.json', mimeType: 'application/json', buffer: Buffer.from(JSON.stringify(plan)) }
+  await (await choosing).setFiles(file)
+  await page.locator('h1', { hasText: 'Long march' }).waitFor()
+  await page.getByRole('navigation').getByText('Wake', { exact: true }).click()
+  const times: number[] = []
+  for (let i = 0; i < CANCELS; i++) {
+    await page.getByRole('button', { name: 'Run', exact: true }).click()
+    await page.locator('progress').waitFor()
+    await page.waitForTimeout(1500)
+    times.push(
+      await page.evaluate(async () => {
+        const cancel = [...document.querySelectorAll('button')].find(
+          (button) => button.textContent?.trim() === 'Cancel',
+        )
+        const from = performance.now()
+        cancel?.click()
+        while (document.querySelector('progress') !== null) await new Promise((next) => setTimeout(next, 2))
+        return (performance.now() - from) / 1000
+      }),
+    )
+  }
+  await page.close()
+  await stop()
+  return times
 }
