@@ -4,7 +4,7 @@
  */
 import { spawn } from 'node:child_process'
 import path from 'node:path'
-import { ensureBuilt, pageWeightLine } from './scripts/bundle.mjs'
+import { ensureBuilt } from './scripts/bundle.mjs'
 import { electronExecutable, fetchElectron } from './scripts/electronRuntime.mjs'
 import { obstacleSentence, obstacleToWindow, openCommand } from './scripts/face.mjs'
 import { ensureInstalled } from './scripts/install.mjs'
@@ -30,8 +30,7 @@ if (reading.ok) {
 /** @param {import('./scripts/startArguments.mjs').StartRequest} request */
 async function start(request) {
   await ensureInstalled()
-  const built = await ensureBuilt(['app', 'renderer'])
-  if (built.includes('renderer')) tell(pageWeightLine())
+  await ensureBuilt(['app', 'renderer'])
   if (!request.browser) {
     const obstacle = await openWindow()
     if (obstacle === null) return
