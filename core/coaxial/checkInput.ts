@@ -49,7 +49,7 @@ export function checkMarch(input: {
   if (outputs > most)
     throw new DomainError(
       'wake.outputStep',
-      `wake.outputStep must leave at most ${most} outputs of ${input.rings.length} rings in wake.duration, got ${Math.floor(outputs)}`,
+      `wake.outputStep must leave at most ${most} outputs of ${input.rings.length} rings in wake.duration, got ${Math.floor(outputs)}: a step of ${Number((input.duration / most).toPrecision(2))} s or more does`,
     )
 }
 

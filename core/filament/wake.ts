@@ -22,7 +22,7 @@ export async function marchWake(input: WakeInput, options: WakeOptions): Promise
   const notes = thickNotes(input)
   if (finding.axis !== null && input.model !== 'filament') {
     const wake = await marchOnAxis(input, finding.axis, options)
-    return { ...wake, notes: [...notes, ...wake.notes] }
+    return { ...wake, ...validity(input, wake), notes: [...notes, ...wake.notes] }
   }
   if (finding.axis === null && input.model === 'coaxial')
     throw new DomainError('wake.model', `wake.model must be auto or filament for these rings: ${finding.why}`)
@@ -36,9 +36,26 @@ export async function marchWake(input: WakeInput, options: WakeOptions): Promise
     notes.push('Turbulent growth is not modelled for rings in space: their cores grow by viscosity alone.')
   return {
     ...wake,
+    ...validity(input, wake),
     model: 'filament',
     modelReason: finding.axis === null ? `Rings in space: ${finding.why}.` : 'Rings in space, as the plan asks.',
     notes: [...notes, ...wake.notes],
+  }
+}
+
+/** Until when the run holds: not at all from where a ring appears with a core the law is only a stand-in for. */
+function validity(
+  { rings }: WakeInput,
+  wake: Pick<Wake, 'validUntil' | 'reason'>,
+): Pick<Wake, 'validUntil' | 'reason'> {
+  const starts = rings.flatMap((ring, i) =>
+    ring.coreRadius > THIN_CORE_LIMIT * ring.radius ? [{ number: i + 1, time: ring.startTime ?? 0 }] : [],
+  )
+  const first = starts.reduce<(typeof starts)[number] | null>((a, b) => (a === null || b.time < a.time ? b : a), null)
+  if (first === null || first.time >= wake.validUntil) return { validUntil: wake.validUntil, reason: wake.reason }
+  return {
+    validUntil: first.time,
+    reason: `ring ${first.number} appears with a core above ${THIN_CORE_LIMIT} of its radius, where the thin-core law is a stand-in`,
   }
 }
 

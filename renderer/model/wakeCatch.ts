@@ -3,7 +3,7 @@
  */
 import { at } from '../../core/base'
 import type { Wake, WakeTrajectory } from '../../core/filament'
-import { formatQuantity } from '../../core/quantity'
+import { formatQuantity, formatRange } from '../../core/quantity'
 import type { Units } from './units'
 
 /** Sentences said one by one up to this many pairs; of more only what differs. */
@@ -15,8 +15,15 @@ const STEADY = 0.01
 /**
  * @param pulses rings of one nozzle, numbered nozzle by nozzle; with explicit rings all of them
  * @param word what a ring is called: `Pulse` of a train, `Ring` placed by hand
+ * @param other the same rings under the other ageing law, where both were run: the answer is then a range
  */
-export function catchInWords(wake: Wake, pulses: number, word: 'Pulse' | 'Ring', units: Units): readonly string[] {
+export function catchInWords(
+  wake: Wake,
+  pulses: number,
+  word: 'Pulse' | 'Ring',
+  units: Units,
+  other: Wake | null = null,
+): readonly string[] {
   const nozzles = Math.max(1, Math.round(wake.trajectories.length / Math.max(1, pulses)))
   const sentences: { readonly caught: boolean; readonly text: string }[] = []
   for (let nozzle = 0; nozzle < nozzles; nozzle++)
@@ -25,7 +32,7 @@ export function catchInWords(wake: Wake, pulses: number, word: 'Pulse' | 'Ring',
       if (pair === null) continue
       const name = (ring: number): string =>
         `${word.toLowerCase()} ${ring - nozzle * pulses}${nozzles > 1 ? ` of nozzle ${nozzle + 1}` : ''}`
-      sentences.push(pair.opposed ? meetingOf(wake, pair, name, units) : catchOf(wake, pair, name, units))
+      sentences.push(pair.opposed ? meetingOf(wake, pair, name, units, other) : catchOf(wake, pair, name, units, other))
     }
   const caught = sentences.filter((sentence) => sentence.caught)
   if (sentences.length <= MOST_SENTENCES) return sentences.map(({ text }) => text)
@@ -88,27 +95,43 @@ function firstMeeting(wake: Wake, { ahead, behind }: Pair): Wake['events'][numbe
   )
 }
 
-function whenAndWhere({ time, x }: Wake['events'][number], units: Units): string {
-  const when = formatQuantity(time, units.wakeTime)
-  return x === null ? `at ${when}` : `at ${when}, x = ${formatQuantity(x, units.length)}`
+type Meeting = Wake['events'][number]
+
+/** When and where they meet, from one ageing law to the other, and whether the model still holds there. */
+function whenAndWhere(wake: Wake, meeting: Meeting, pair: Pair, units: Units, other: Wake | null): string {
+  const second = other === null ? meeting : firstMeeting(other, pair)
+  const both = [meeting, second ?? meeting]
+  const span = (values: readonly number[], unit: string): string => {
+    const { text, unit: shown } = formatRange(Math.min(...values), Math.max(...values), unit, 4)
+    return `${text}\u00A0${shown}`
+  }
+  const times = both.map(({ time }) => time)
+  const places = both.flatMap(({ x }) => (x === null ? [] : [x]))
+  const where = places.length === both.length ? `, x = ${span(places, units.length)}` : ''
+  const only = second === undefined ? ', though not under the turbulent law' : ''
+  const past =
+    Math.max(...times) > wake.validUntil
+      ? `; the model holds only until ${formatQuantity(wake.validUntil, units.wakeTime, 3)}`
+      : ''
+  return `at ${span(times, units.wakeTime)}${where}${only}${past}`
 }
 
-function catchOf(wake: Wake, pair: Pair, name: Name, units: Units): Sentence {
+function catchOf(wake: Wake, pair: Pair, name: Name, units: Units, other: Wake | null): Sentence {
   const [behind, ahead] = [capital(name(pair.behind)), name(pair.ahead)]
   const meeting = firstMeeting(wake, pair)
   if (meeting === undefined)
     return { caught: false, text: `${behind} does not catch ${ahead} ${sinceThen(wake, pair, units)}` }
   const does = meeting.event === 'pass' ? 'catches and passes' : 'catches'
   const end = meeting.event === 'pass' ? '' : ': their cores touch'
-  return { caught: true, text: `${behind} ${does} ${ahead} ${whenAndWhere(meeting, units)}${end}.` }
+  return { caught: true, text: `${behind} ${does} ${ahead} ${whenAndWhere(wake, meeting, pair, units, other)}${end}.` }
 }
 
-function meetingOf(wake: Wake, pair: Pair, name: Name, units: Units): Sentence {
+function meetingOf(wake: Wake, pair: Pair, name: Name, units: Units, other: Wake | null): Sentence {
   const both = `${capital(name(Math.min(pair.ahead, pair.behind)))} and ${name(Math.max(pair.ahead, pair.behind))}`
   const meeting = firstMeeting(wake, pair)
   return meeting === undefined
     ? { caught: false, text: `${both} do not meet ${sinceThen(wake, pair, units)}` }
-    : { caught: true, text: `${both} meet ${whenAndWhere(meeting, units)}.` }
+    : { caught: true, text: `${both} meet ${whenAndWhere(wake, meeting, pair, units, other)}.` }
 }
 
 function sinceThen(wake: Wake, { gap }: Pair, units: Units): string {
