@@ -1,22 +1,11 @@
 /** WCAG 2.2 AA by axe-core on every page, in both themes, and at the smallest size nothing scrolls sideways. */
-import axe from 'axe-core'
-import type { Browser, Page } from 'playwright-core'
+import type { Browser } from 'playwright-core'
 import { afterAll, beforeAll, expect, it } from 'vitest'
+import { violations } from '../support/accessibility'
 import { openBrowserFace, openExample, startBrowserFace } from '../support/browserFace'
 import { describeInChromium, launchChromium } from '../support/chromium'
 
 const PAGES = ['Stroke', 'Thrust', 'Wake', 'Tank run', 'Readings']
-
-async function violations(page: Page): Promise<readonly string[]> {
-  await page.evaluate(axe.source)
-  return page.evaluate(async () => {
-    const { axe: engine } = globalThis as unknown as { axe: typeof import('axe-core') }
-    const result = await engine.run(document, { runOnly: ['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa'] })
-    return result.violations.map(
-      ({ id, nodes }) => `${id}: ${nodes.map((node) => node.html.slice(0, 120)).join(' | ')}`,
-    )
-  })
-}
 
 describeInChromium('the window', () => {
   let browser: Browser

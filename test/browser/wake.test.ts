@@ -6,10 +6,10 @@ import { spawnSync } from 'node:child_process'
 import { mkdtemp, readFile, rm } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
-import axe from 'axe-core'
 import type { Browser, Download, Page } from 'playwright-core'
 import { afterAll, beforeAll, expect, it } from 'vitest'
 import { inProject } from '../../build/scripts/root.mjs'
+import { violations } from '../support/accessibility'
 import { openBrowserFace, startBrowserFace } from '../support/browserFace'
 import { describeInChromium, launchChromium } from '../support/chromium'
 
@@ -76,17 +76,6 @@ async function cellsOf(file: string): Promise<readonly (readonly string[])[]> {
     .trimEnd()
     .split('\r\n')
     .map((line) => line.split(','))
-}
-
-async function violations(page: Page): Promise<readonly string[]> {
-  await page.evaluate(axe.source)
-  return page.evaluate(async () => {
-    const { axe: engine } = globalThis as unknown as { axe: typeof import('axe-core') }
-    const result = await engine.run(document, { runOnly: ['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa'] })
-    return result.violations.map(
-      ({ id, nodes }) => `${id}: ${nodes.map((node) => node.html.slice(0, 160)).join(' | ')}`,
-    )
-  })
 }
 
 describeInChromium('the wake in the browser', () => {
