@@ -4,6 +4,8 @@
  */
 import vue from '@vitejs/plugin-vue'
 import { inProject } from './scripts/root.mjs'
+import { threeParts } from './scripts/threeParts.mjs'
+import { workerEntries } from './scripts/workerEntry.mjs'
 import { constants } from './vite.app.mjs'
 
 /** @returns {import('vite').InlineConfig} */
@@ -15,9 +17,8 @@ export function rendererConfig() {
     logLevel: 'warn',
     publicDir: false,
     cacheDir: inProject('node_modules/.vite'),
-    plugins: [vue()],
+    plugins: [vue(), workerEntries(), threeParts()],
     define: { ...constants(), __VUE_OPTIONS_API__: 'false' },
-    worker: { format: 'es' },
     build: {
       target: 'es2023',
       outDir: inProject('dist/renderer'),

@@ -1,44 +1,34 @@
 /**
- * Rings as meshes for other programs: glTF 2.0 in JSON, lengths in metres, y up.
+ * Rings as meshes for other programs: glTF 2.0 in JSON, lengths in metres.
  */
-import { BufferAttribute, BufferGeometry, Color, Mesh, MeshStandardMaterial, Scene } from 'three'
 import type { RingShape } from '../../../core/filament'
-import { paint } from '../drawing'
+import { colourParts } from '../../plots/themeColours'
+import { gltfText, type GltfMesh } from './gltfDocument'
 import { writeTube, writeTubeIndex } from './tubes'
 
 const SIDES = 16
 
 /** One mesh a ring, a tube of its true core radius, named by its number. @param colourOf colour of a ring by number */
-export function ringMeshes(shapes: readonly RingShape[], colourOf: (ring: number) => string): Scene {
-  const scene = new Scene()
-  scene.name = 'wake'
-  for (const { nodes, coreRadius, number } of shapes) {
+export function ringMeshes(shapes: readonly RingShape[], colourOf: (ring: number) => string): readonly GltfMesh[] {
+  return shapes.map(({ nodes, coreRadius, number }) => {
     const count = nodes.length / 3
     const positions = new Float32Array(3 * count * SIDES)
     const normals = new Float32Array(3 * count * SIDES)
-    const index = new Uint32Array(6 * count * SIDES)
+    const indices = new Uint32Array(6 * count * SIDES)
     writeTube(positions, normals, 0, nodes, coreRadius, SIDES)
-    writeTubeIndex(index, 0, 0, count, SIDES)
-    const geometry = new BufferGeometry()
-    geometry.setAttribute('position', new BufferAttribute(positions, 3))
-    geometry.setAttribute('normal', new BufferAttribute(normals, 3))
-    geometry.setIndex(new BufferAttribute(index, 1))
-    const colour = new Color()
-    paint(colour, colourOf(number))
-    const mesh = new Mesh(geometry, new MeshStandardMaterial({ color: colour, roughness: 1, metalness: 0 }))
-    mesh.name = `ring ${number}`
-    scene.add(mesh)
-  }
-  return scene
+    writeTubeIndex(indices, 0, 0, count, SIDES)
+    const [red, green, blue] = colourParts(colourOf(number))
+    const colour = [linear(red), linear(green), linear(blue)] as const
+    return { name: `ring ${number}`, positions, normals, indices, colour }
+  })
 }
 
-/** Text of the .gltf file. The writer is fetched when it is first wanted. @throws {Error} where it cannot write */
-export async function ringsToGltf(shapes: readonly RingShape[], colourOf: (ring: number) => string): Promise<string> {
-  const { GLTFExporter } = await import('three/examples/jsm/exporters/GLTFExporter.js')
-  const scene = ringMeshes(shapes, colourOf)
-  const written = await new GLTFExporter().parseAsync(scene, { binary: false })
-  scene.traverse((part) => {
-    if (part instanceof Mesh) part.geometry.dispose()
-  })
-  return `${JSON.stringify(written)}\n`
+/** Text of the .gltf file. */
+export function ringsToGltf(shapes: readonly RingShape[], colourOf: (ring: number) => string): string {
+  return gltfText('wake', ringMeshes(shapes, colourOf))
+}
+
+/** Linear light of a part of an sRGB colour, both 0 to 1. Source: IEC 61966-2-1; recalled, not re-read. */
+function linear(part: number): number {
+  return part <= 0.04045 ? part / 12.92 : ((part + 0.055) / 1.055) ** 2.4
 }

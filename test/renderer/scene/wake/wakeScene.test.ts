@@ -1,5 +1,4 @@
 import { mount } from '@vue/test-utils'
-import { Mesh } from 'three'
 import { nextTick } from 'vue'
 import { describe, expect, it } from 'vitest'
 import { at } from '../../../../core/base'
@@ -57,20 +56,31 @@ describe('rings for other programs', () => {
   const shapes = [shapeAt(1, 0), shapeAt(3, 0.1)]
 
   it('are tubes of their true core radius in metres, named by their numbers', () => {
-    const scene = ringMeshes(shapes, () => '#0A5F78')
-    expect(scene.children.map(({ name }) => name)).toEqual(['ring 1', 'ring 3'])
-    const mesh = at(scene.children, 1)
-    if (!(mesh instanceof Mesh)) throw new Error('a mesh was expected')
-    const position = mesh.geometry.getAttribute('position')
-    for (let i = 0; i < position.count; i += 1) {
-      const across = Math.hypot(position.getY(i), position.getZ(i)) - 0.02
+    const meshes = ringMeshes(shapes, () => '#0A5F78')
+    expect(meshes.map(({ name }) => name)).toEqual(['ring 1', 'ring 3'])
+    const { positions } = at(meshes, 1)
+    expect(positions.length).toBeGreaterThan(0)
+    for (let i = 0; i < positions.length; i += 3) {
+      const across = Math.hypot(at(positions, i + 1), at(positions, i + 2)) - 0.02
       // Single precision of numbers near 0.1.
-      expectNear(Math.hypot(position.getX(i) - 0.1, across), 0.004, 2e-8)
+      expectNear(Math.hypot(at(positions, i) - 0.1, across), 0.004, 2e-8)
     }
   })
 
-  it('are written as glTF 2.0 with one mesh a ring', async () => {
-    const document: unknown = JSON.parse(await ringsToGltf(shapes, () => '#0A5F78'))
+  it('have their colour in linear light', () => {
+    // IEC 61966-2-1, worked by hand to the digits given.
+    const { colour } = at(
+      ringMeshes(shapes, (ring) => (ring === 1 ? '#0a80ff' : '#000000')),
+      0,
+    )
+    // 10/255/12.92, ((128/255 + 0.055)/1.055)^2.4, 1: half a unit of the last digit given.
+    expectNear(at(colour, 0), 0.0030353, 5e-8)
+    expectNear(at(colour, 1), 0.215861, 5e-7)
+    expectNear(at(colour, 2), 1, 1e-15)
+  })
+
+  it('are written as glTF 2.0 with one mesh a ring', () => {
+    const document: unknown = JSON.parse(ringsToGltf(shapes, () => '#0A5F78'))
     expect(document).toMatchObject({
       asset: { version: '2.0' },
       scenes: [{ name: 'wake', nodes: [0, 1] }],
