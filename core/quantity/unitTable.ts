@@ -59,6 +59,12 @@ export const UNIT_TABLE: Readonly<Record<Dimension, readonly UnitRow[]>> = {
     ['mm/s²', 1, 1e3],
     ['ft/s²', 3048, 1e4],
   ],
+  jerk: [
+    ['m/s³', 1, 1],
+    ['cm/s³', 1, 1e2],
+    ['mm/s³', 1, 1e3],
+    ['ft/s³', 3048, 1e4],
+  ],
   temperature: [
     ['°C', 1, 1, 'degC', 'C'],
     ['K', 1, 1],
@@ -132,6 +138,11 @@ export const UNIT_TABLE: Readonly<Record<Dimension, readonly UnitRow[]>> = {
     ['MHz', 1e6, 1],
     ['rpm', 1, 60, '1/min', 'RPM', 'rev/min', 'r/min'],
   ],
+  imageScale: [
+    ['px/mm', 1e3, 1, '1/mm'],
+    ['px/m', 1, 1, '1/m'],
+    ['px/cm', 1e2, 1, '1/cm'],
+  ],
   flowRate: [
     ['mL/s', 1, 1e6],
     ['L/s', 1, 1e3],
@@ -172,6 +183,7 @@ export const BASE_UNIT: Readonly<Record<Dimension, string>> = {
   time: 's',
   speed: 'm/s',
   acceleration: 'm/s²',
+  jerk: 'm/s³',
   temperature: '°C',
   pressure: 'Pa',
   force: 'N',
@@ -182,6 +194,7 @@ export const BASE_UNIT: Readonly<Record<Dimension, string>> = {
   kinematicViscosity: 'm²/s',
   circulation: 'm²/s',
   frequency: 'Hz',
+  imageScale: 'px/m',
   flowRate: 'm³/s',
   impulse: 'N·s',
   angle: 'rad',
