@@ -1,6 +1,7 @@
 import type { Wake } from '../filament'
 import type { PulseResult } from '../pulse'
 import type { WaterProperties } from '../water'
+import type { JetOutcome } from './jetTables'
 import type { Plan } from './types'
 
 /** What a caution's trigger may look at. */
@@ -8,6 +9,10 @@ export interface CautionContext {
   readonly plan: Plan
   readonly water: WaterProperties | null
   readonly pulse: PulseResult | null
+  /** The starting jet the pulse read or that was asked for; null where none was computed. */
+  readonly jet: JetOutcome | null
+  /** Why a starting jet that belongs to these results is not in them, in a sentence; null where none is missing. */
+  readonly jetMissing: string | null
   readonly wake: Wake | null
   /** What had to be said about where the rings of the wake come from. */
   readonly wakeNotes: readonly string[]

@@ -3,11 +3,17 @@
  */
 import type { CautionContext, CautionDefinition, CautionGroup } from './cautionTypes'
 import { HAZARD_CAUTIONS } from './hazardCautions'
+import { JET_CAUTIONS } from './jetCautions'
 import { MODEL_CAUTIONS } from './modelCautions'
 import { WAKE_CAUTIONS } from './wakeCautions'
 import type { Caution } from './types'
 
-export const CAUTIONS: readonly CautionDefinition[] = [...MODEL_CAUTIONS, ...WAKE_CAUTIONS, ...HAZARD_CAUTIONS]
+export const CAUTIONS: readonly CautionDefinition[] = [
+  ...MODEL_CAUTIONS,
+  ...JET_CAUTIONS,
+  ...WAKE_CAUTIONS,
+  ...HAZARD_CAUTIONS,
+]
 
 /** The cautions that hold for a plan and its results, in the table's order; of one group where it is named. */
 export function cautionsFor(context: CautionContext, group?: CautionGroup): Caution[] {

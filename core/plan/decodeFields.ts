@@ -4,7 +4,8 @@
  */
 import type { Problem } from '../base'
 import { describeDimension, formatFull, parseQuantity, siUnit, type Dimension } from '../quantity'
-import { CHOICES, fieldDefinition, type ChoicePath, type FieldDefinition, type FieldPath } from './fields'
+import { CHOICES, fieldDefinition, type ChoicePath, type FieldPath } from './fields'
+import type { FieldDefinition } from './fieldTypes'
 import type { JsonObject } from './types'
 
 export type Problems = Problem[]
@@ -35,6 +36,7 @@ export function limitInWords(definition: FieldDefinition): string {
   const unit = siUnit(definition.dimension)
   const show = (value: number): string => formatFull(value, unit)
   const { min, max, above } = definition
+  if (definition.whole === true) return wholeInWords(definition)
   if (above !== undefined)
     return max === undefined ? `above ${show(above)}` : `above ${show(above)} and at most ${show(max)}`
   if (min !== undefined && max !== undefined) return `between ${show(min)} and ${show(max)}`
@@ -42,10 +44,16 @@ export function limitInWords(definition: FieldDefinition): string {
   return max === undefined ? 'a finite number' : `at most ${show(max)}`
 }
 
+function wholeInWords({ min, max }: FieldDefinition): string {
+  if (min === undefined) return max === undefined ? 'a whole number' : `a whole number up to ${max}`
+  return max === undefined ? `a whole number from ${min}` : `a whole number between ${min} and ${max}`
+}
+
 /** Whether a finite number keeps to the limits of its field. */
 export function insideLimits(definition: FieldDefinition, value: number): boolean {
   return (
     Number.isFinite(value) &&
+    (definition.whole !== true || Number.isInteger(value)) &&
     (definition.above === undefined || value > definition.above) &&
     (definition.min === undefined || value >= definition.min) &&
     (definition.max === undefined || value <= definition.max)
@@ -54,7 +62,11 @@ export function insideLimits(definition: FieldDefinition, value: number): boolea
 
 /** Check one number against its field and say what is wrong; null when nothing is. */
 export function checkField(path: FieldPath, value: number | null): Problem | null {
-  const definition = fieldDefinition(path)
+  return checkAgainst(fieldDefinition(path), path, value)
+}
+
+/** As checkField, for a number named `path` with the definition of another, such as an item of a list. */
+export function checkAgainst(definition: FieldDefinition, path: string, value: number | null): Problem | null {
   if (value === null) {
     if (definition.optional === true) return null
     return {
@@ -96,13 +108,26 @@ export function decodeOptionalNumber(
   path: FieldPath,
   problems: Problems,
 ): number | null | undefined {
-  const definition = fieldDefinition(path)
-  const key = path.slice(path.indexOf('.') + 1)
-  const raw = section[key]
+  const raw = section[keyOf(path)]
   if (raw === undefined || raw === null) return raw
+  return decodeValue(raw, fieldDefinition(path), path, problems)
+}
+
+/** The key of a value in the object that holds it: what stands after the last dot of its path. */
+function keyOf(path: string): string {
+  return path.slice(path.lastIndexOf('.') + 1)
+}
+
+/** One number kept to the limits of a definition; null where it is no number at all. A value past a limit is refused and returned. */
+export function decodeValue(
+  raw: unknown,
+  definition: FieldDefinition,
+  path: string,
+  problems: Problems,
+): number | null {
   const value = readQuantity(raw, definition, path, problems)
   if (value === null) return null
-  const problem = checkField(path, value)
+  const problem = checkAgainst(definition, path, value)
   if (problem !== null) problems.push(problem)
   return value
 }
@@ -113,8 +138,10 @@ function readQuantity(raw: unknown, definition: FieldDefinition, path: string, p
     refuse(problems, path, raw, 'a number in SI units or a text such as "30 mm"')
     return null
   }
-  const parsed = parseQuantity(raw, definition.dimension, siUnit(definition.dimension), { name: definition.label })
-  if (parsed.ok) return parsed.value
+  const minutes = definition.minutes === true
+  const dimension = minutes ? 'time' : definition.dimension
+  const parsed = parseQuantity(raw, dimension, minutes ? 'min' : siUnit(dimension), { name: definition.label })
+  if (parsed.ok) return minutes ? parsed.value / 60 : parsed.value
   refuse(problems, path, raw, limitInWords(definition), `${path}: ${parsed.message}`)
   return null
 }
@@ -136,7 +163,7 @@ export function decodeQuantity(raw: unknown, field: string, dimension: Dimension
 
 /** True or false. */
 export function decodeFlag(section: JsonObject, path: string, fallback: boolean, problems: Problems): boolean {
-  const raw = section[path.slice(path.indexOf('.') + 1)]
+  const raw = section[keyOf(path)]
   if (typeof raw === 'boolean') return raw
   if (raw !== undefined) refuse(problems, path, raw, 'true or false')
   return fallback
@@ -149,9 +176,8 @@ export function decodeChoice<P extends ChoicePath>(
   fallback: keyof (typeof CHOICES)[P] | undefined,
   problems: Problems,
 ): keyof (typeof CHOICES)[P] {
-  const key = path.slice(path.indexOf('.') + 1)
   const words = Object.keys(CHOICES[path])
-  const raw = section[key]
+  const raw = section[keyOf(path)]
   if (typeof raw === 'string' && words.includes(raw)) return raw as keyof (typeof CHOICES)[P]
   if (raw !== undefined || fallback === undefined) refuse(problems, path, raw, `one of ${words.join(', ')}`)
   return fallback ?? (words[0] as keyof (typeof CHOICES)[P])

@@ -15,7 +15,12 @@ import {
   refuse,
   type Problems,
 } from './decodeFields'
+import { decodeJet } from './decodeJet'
+import { decodeHeld, decodeSpread, decodeSweep } from './decodeSweep'
+import { decodeTankRun } from './decodeTankRun'
+import { decodeThruster } from './decodeThruster'
 import { decodeTrain, decodeWake } from './decodeWake'
+import { refuseLostPaths } from './lostPaths'
 import { migrate } from './migrations'
 import { PLAN_FORMAT, PLAN_VERSION, type JsonObject, type Plan, type PlanReading } from './types'
 
@@ -116,9 +121,14 @@ function decodeSections(document: JsonObject, problems: Problems): Plan {
   const programme = section(document, 'programme', problems, !wakeOfRings)
   const ambient = section(document, 'ambient', problems, false) ?? {}
   const models = section(document, 'models', problems, false) ?? {}
+  const jet = section(document, 'jet', problems, false)
   const train = section(document, 'train', problems, false)
   const wake = section(document, 'wake', problems, false)
-  return {
+  const thruster = section(document, 'thruster', problems, false)
+  const tankRun = section(document, 'tankRun', problems, false)
+  const sweep = section(document, 'sweep', problems, false)
+  const spread = section(document, 'spread', problems, false)
+  const plan: Plan = {
     title: decodeText(document, 'title', problems),
     notes: decodeText(document, 'notes', problems),
     water: water === null ? FRESH : decodeWater(water, problems),
@@ -129,8 +139,14 @@ function decodeSections(document: JsonObject, problems: Problems): Plan {
       overPressure: decodeChoice(models, 'models.overPressure', 'off', problems),
       formationNumber: decodeChoice(models, 'models.formationNumber', 'energyLimit', problems),
     },
+    jet: jet === null ? null : decodeJet(jet, problems),
     train: train === null ? null : decodeTrain(train, problems),
     wake: wake === null ? null : decodeWake(wake, problems),
+    thruster: thruster === null ? null : decodeThruster(thruster, problems),
+    tankRun: tankRun === null ? null : decodeTankRun(tankRun, problems),
+    sweep: sweep === null ? null : decodeSweep(sweep, problems),
+    spread: spread === null ? null : decodeSpread(spread, problems),
+    held: decodeHeld(document['held'], problems),
     view: { units: decodeUnits(document['view']) },
     absent: [
       ...(nozzle === null ? (['nozzle'] as const) : []),
@@ -138,6 +154,8 @@ function decodeSections(document: JsonObject, problems: Problems): Plan {
     ],
     source: document,
   }
+  refuseLostPaths(plan, problems)
+  return plan
 }
 
 /** Stand-ins for sections a wake of explicit rings does without; never computed with while `absent` names them. */

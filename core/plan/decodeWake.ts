@@ -12,6 +12,7 @@ import {
   refuse,
   type Problems,
 } from './decodeFields'
+import { listOf } from './decodeParts'
 import type { Json, JsonObject, TrainSection, WakeSection } from './types'
 import { CORE_WORDS } from './wakeFields'
 
@@ -22,6 +23,7 @@ export const WAKE_DEFAULTS: WakeSection = {
   ageing: 'auto',
   rings: [],
   nozzles: [],
+  start: 'matched',
   duration: 10,
   outputStep: 0.05,
   viscous: true,
@@ -33,8 +35,6 @@ export const WAKE_DEFAULTS: WakeSection = {
 
 export function decodeTrain(raw: JsonObject, problems: Problems): TrainSection {
   const pulses = decodeNumber(raw, 'train.pulses', 1, problems)
-  if (!Number.isInteger(pulses) && !problems.some((problem) => problem.field === 'train.pulses'))
-    refuse(problems, 'train.pulses', pulses, 'a whole number')
   const period = decodeNumber(raw, 'train.period', pulses > 1 ? undefined : 1, problems)
   return { pulses, period }
 }
@@ -46,6 +46,7 @@ export function decodeWake(raw: JsonObject, problems: Problems): WakeSection {
     ageing: decodeChoice(raw, 'wake.ageing', WAKE_DEFAULTS.ageing, problems),
     rings: listOf(raw['rings'], 'wake.rings', problems, decodeRing),
     nozzles: listOf(raw['nozzles'], 'wake.nozzles', problems, decodeNozzleOfWake),
+    start: decodeChoice(raw, 'wake.start', WAKE_DEFAULTS.start, problems),
     duration: decodeNumber(raw, 'wake.duration', WAKE_DEFAULTS.duration, problems),
     outputStep: decodeNumber(raw, 'wake.outputStep', WAKE_DEFAULTS.outputStep, problems),
     viscous: decodeFlag(raw, 'wake.viscous', WAKE_DEFAULTS.viscous, problems),
@@ -56,23 +57,6 @@ export function decodeWake(raw: JsonObject, problems: Problems): WakeSection {
       decodeQuantity(item, field, 'length', problems),
     ),
   }
-}
-
-function listOf<T>(
-  raw: Json | undefined,
-  field: string,
-  problems: Problems,
-  decode: (item: Json, field: string, problems: Problems) => T | null,
-): T[] {
-  if (raw === undefined || raw === null) return []
-  if (!Array.isArray(raw)) {
-    refuse(problems, field, raw, 'a list')
-    return []
-  }
-  return raw.flatMap((item: Json, index) => {
-    const decoded = decode(item, `${field}.${index}`, problems)
-    return decoded === null ? [] : [decoded]
-  })
 }
 
 function decodeRing(item: Json, field: string, problems: Problems): WakeRing | null {

@@ -3,40 +3,19 @@
  */
 import { DomainError } from '../base'
 import { compileProgramme, withStroke, type ProgrammeInput, type ProgrammeRow } from '../pulse'
+import type { TankRunSection } from '../tank'
+import type { ThrusterSection } from '../thruster'
 import type { ChoicePath, FieldPath } from './fields'
 import { waterProperties, type WaterInput } from '../water'
+import { JET_DEFAULTS } from './decodeJet'
+import { SPREAD_DEFAULTS, SWEEP_DEFAULTS } from './decodeSweep'
+import { TANK_RUN_DEFAULTS } from './decodeTankRun'
+import { THRUSTER_DEFAULTS, VEHICLE_DEFAULTS } from './decodeThruster'
 import { WAKE_DEFAULTS } from './decodeWake'
-import type { Plan, TrainSection, WakeSection } from './types'
-
-/** A plan with one section present again after a change in it. */
-function present(plan: Plan, section: string): Plan {
-  return plan.absent.some((name) => name === section)
-    ? { ...plan, absent: plan.absent.filter((name) => name !== section) }
-    : plan
-}
-
-function split(path: string): readonly [string, string] {
-  const dot = path.indexOf('.')
-  return [path.slice(0, dot), path.slice(dot + 1)]
-}
-
-/** What an absent section starts from when one of its values is set. */
-const EMPTY: Partial<Record<EditedSection, TrainSection | WakeSection>> = {
-  train: { pulses: 1, period: 1 },
-  wake: WAKE_DEFAULTS,
-}
-
-function replace(plan: Plan, section: EditedSection, key: string, value: number | string | null): Plan {
-  const old = plan[section] ?? EMPTY[section]
-  if (typeof old !== 'object') return plan
-  return { ...present(plan, section), [section]: { ...old, [key]: value } }
-}
-
-type EditedSection = 'water' | 'nozzle' | 'programme' | 'ambient' | 'models' | 'train' | 'wake'
-
-function isSection(name: string): name is EditedSection {
-  return ['water', 'nozzle', 'programme', 'ambient', 'models', 'train', 'wake'].includes(name)
-}
+import { dragOfKind, present, tankTargetOfKind, withKindOf, withValue } from './editPath'
+import { isFieldPath, quantityDefinition } from './planPaths'
+import type { HeldDesign, SpreadSection, SweepSection } from './sectionTypes'
+import type { JetSection, Plan, TrainSection, WakeSection } from './types'
 
 /**
  * Set one number of the plan [SI]. The stroke of a table is set by stretching its times.
@@ -46,8 +25,20 @@ function isSection(name: string): name is EditedSection {
 export function setField(plan: Plan, path: FieldPath, value: number | null): Plan {
   if (path === 'programme.stroke' && plan.programme.shape === 'table' && value !== null)
     return { ...plan, programme: stretched(plan.programme, value) }
-  const [section, key] = split(path)
-  return isSection(section) ? replace(plan, section, key, value) : plan
+  return withKindOf(plan, path, value) ?? withValue(plan, path, value)
+}
+
+/**
+ * As setField for any number of the plan by its dotted path, items of lists included (`wake.stations.0`): what sweeps,
+ * spread and matrices set.
+ *
+ * @throws {DomainError} if the plan knows no number at the path
+ */
+export function setNumber(plan: Plan, path: string, value: number): Plan {
+  if (isFieldPath(path)) return setField(plan, path, value)
+  if (quantityDefinition(path) === null)
+    throw new DomainError('path', `path must be the dotted path of a number of the plan, got "${path}"`)
+  return withValue(plan, path, value)
 }
 
 /** A table stretched to a stroke; left as it is where rows or stroke are unusable, which the decoder then tells. */
@@ -78,9 +69,12 @@ export function setStrokeRatio(plan: Plan, ratio: number): Plan {
 
 /** Set one choice of the plan; `value` is a key of CHOICES[path]. */
 export function setChoice(plan: Plan, path: ChoicePath, value: string): Plan {
-  const [section, key] = split(path)
-  if (!isSection(section)) return plan
-  const changed = replace(plan, section, key, value)
+  if (path === 'thruster.vehicle.drag.kind') {
+    const vehicle = plan.thruster?.vehicle ?? VEHICLE_DEFAULTS
+    return withValue(plan, 'thruster.vehicle.drag', dragOfKind(vehicle.drag, value))
+  }
+  if (path === 'tankRun.target.kind') return withValue(plan, 'tankRun.target', tankTargetOfKind(plan, value))
+  const changed = withValue(plan, path, value)
   if (path === 'water.kind' && value === 'given') return { ...changed, water: givenFrom(plan.water) }
   return { ...changed, programme: ruledByRows(changed.programme) }
 }
@@ -117,7 +111,37 @@ export function setWake(plan: Plan, change: Partial<WakeSection>): Plan {
   return { ...plan, wake: { ...(plan.wake ?? WAKE_DEFAULTS), ...change } }
 }
 
+/** Set parts of the section of the starting jet, which is added where it was absent; null takes it out. */
+export function setJet(plan: Plan, change: Partial<JetSection> | null): Plan {
+  return { ...plan, jet: change === null ? null : { ...(plan.jet ?? JET_DEFAULTS), ...change } }
+}
+
 /** Set the train, or take it out with null: one pulse. */
 export function setTrain(plan: Plan, train: TrainSection | null): Plan {
   return { ...plan, train }
+}
+
+/** Set parts of the section of the vehicle's thrusters, which is added where it was absent; null takes it out. */
+export function setThruster(plan: Plan, change: Partial<ThrusterSection> | null): Plan {
+  return { ...plan, thruster: change === null ? null : { ...(plan.thruster ?? THRUSTER_DEFAULTS), ...change } }
+}
+
+/** Set parts of the section of the tank run, which is added where it was absent; null takes it out. */
+export function setTankRun(plan: Plan, change: Partial<TankRunSection> | null): Plan {
+  return { ...plan, tankRun: change === null ? null : { ...(plan.tankRun ?? TANK_RUN_DEFAULTS), ...change } }
+}
+
+/** Set parts of the sweep, which is added where it was absent; null takes it out. */
+export function setSweep(plan: Plan, change: Partial<SweepSection> | null): Plan {
+  return { ...plan, sweep: change === null ? null : { ...(plan.sweep ?? SWEEP_DEFAULTS), ...change } }
+}
+
+/** Set parts of the spread, which is added where it was absent; null takes it out. */
+export function setSpread(plan: Plan, change: Partial<SpreadSection> | null): Plan {
+  return { ...plan, spread: change === null ? null : { ...(plan.spread ?? SPREAD_DEFAULTS), ...change } }
+}
+
+/** Hold these designs against the plan. */
+export function setHeld(plan: Plan, held: readonly HeldDesign[]): Plan {
+  return { ...plan, held }
 }

@@ -3,11 +3,13 @@
  */
 import { readPlan } from './decodePlan'
 import { PULSE_EXAMPLES } from './examplesPulse'
+import { TANK_EXAMPLES } from './examplesTank'
+import { VEHICLE_EXAMPLES } from './examplesVehicle'
 import { WAKE_EXAMPLES } from './examplesWake'
 import type { Example } from './exampleTypes'
 import type { Plan } from './types'
 
-export const EXAMPLES: readonly Example[] = [...PULSE_EXAMPLES, ...WAKE_EXAMPLES]
+export const EXAMPLES: readonly Example[] = [...PULSE_EXAMPLES, ...WAKE_EXAMPLES, ...VEHICLE_EXAMPLES, ...TANK_EXAMPLES]
 
 /**
  * Plan of an example.

@@ -36,6 +36,16 @@ export const PULSE_EXAMPLES: readonly Example[] = [
     programme: { shape: 'rectangular', stroke: 0.32, peakSpeed: 0.08 },
     ambient: NO_FLOW,
   }),
+  example('form-and-pinch-off', 'A starting jet computed from the lip: the ring forms, fills and lets go.', {
+    title: 'Form and pinch off',
+    notes:
+      'A 20 mm tube that drives eight diameters of slug into still water for a film of the roll-up: when does the ring let go of its jet?',
+    water: FRESH,
+    nozzle: { shape: 'tube', diameter: 0.02, pistonDiameter: 0.04, length: 0.2 },
+    programme: { shape: 'trapezoid', stroke: 0.16, peakSpeed: 0.15, riseTime: 0.01, fallTime: 0.01 },
+    ambient: NO_FLOW,
+    jet: { ensemble: true, coreGrowth: true, delta: null },
+  }),
   example('sharp-orifice', 'A sharp orifice in a plate: the jet contracts and pinch-off comes early.', {
     title: 'Sharp orifice in a plate',
     notes: 'A 20 mm hole in the end plate of a 40 mm cylinder.',

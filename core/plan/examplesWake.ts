@@ -30,6 +30,16 @@ export const WAKE_EXAMPLES: readonly Example[] = [
     train: { pulses: 3, period: 0.9 },
     wake: { duration: 6, outputStep: 0.03, stations: [0.1, 0.3] },
   }),
+  example('jet-train', 'Two long pulses from the computed jet: ring and billows of each, and where they meet.', {
+    title: 'Jet train',
+    notes: 'Each stroke is long enough for its ring to pinch off; what trails behind it travels on as billows.',
+    water: FRESH,
+    nozzle: BENCH_NOZZLE,
+    programme: { shape: 'trapezoid', stroke: 0.2, peakSpeed: 0.08, riseTime: 0.04, fallTime: 0.04 },
+    ambient: NO_FLOW,
+    train: { pulses: 2, period: 5 },
+    wake: { start: 'jet', duration: 18, outputStep: 0.05, stations: [0.2] },
+  }),
   example('hull-plate', 'A thruster that blows along a hull plate: how far the plate turns the ring.', {
     title: 'Thruster near a hull plate',
     notes: 'The plate stands 50 mm beside the axis.',

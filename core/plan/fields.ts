@@ -4,20 +4,10 @@
  * The one table behind the decoder's refusals, the window's fields and their help. Limits are the widest for which a formula
  * of the core is meant to answer; where a formula holds only in part of them, a caution says so.
  */
-import type { Dimension } from '../quantity'
-
-export interface FieldDefinition {
-  readonly label: string
-  readonly dimension: Dimension
-  readonly min?: number
-  readonly max?: number
-  /** Exclusive lower limit. */
-  readonly above?: number
-  /** What it is, in a sentence, for the field's help. */
-  readonly help: string
-  /** True where null is allowed and means "not given". */
-  readonly optional?: boolean
-}
+import { LARGEST_DELTA, LEAST_DELTA } from '../coaxial'
+import { SPREAD_FIELDS, TANK_RUN_CHOICES, TANK_RUN_FIELDS } from './fieldsTankRun'
+import { THRUSTER_CHOICES, THRUSTER_FIELDS } from './fieldsThruster'
+import type { FieldDefinition } from './fieldTypes'
 
 export const FIELDS = {
   'water.temperatureCelsius': {
@@ -151,11 +141,20 @@ export const FIELDS = {
     max: 100,
     help: 'Flow past the nozzle along the jet: positive with the jet, negative against it.',
   },
+  'jet.delta': {
+    label: 'Smoothing length',
+    dimension: 'number',
+    min: LEAST_DELTA,
+    max: LARGEST_DELTA,
+    optional: true,
+    help: 'One smoothing length of the starting jet over the exit diameter; empty: the usual ones.',
+  },
   'train.pulses': {
     label: 'Pulses',
     dimension: 'number',
     min: 1,
     max: 1000,
+    whole: true,
     help: 'How many pulses follow one another.',
   },
   'train.period': {
@@ -194,6 +193,9 @@ export const FIELDS = {
     optional: true,
     help: 'Radius of a round tube about the axis; empty: none.',
   },
+  ...THRUSTER_FIELDS,
+  ...TANK_RUN_FIELDS,
+  ...SPREAD_FIELDS,
 } as const satisfies Readonly<Record<string, FieldDefinition>>
 
 export type FieldPath = keyof typeof FIELDS
@@ -225,7 +227,10 @@ export const CHOICES = {
     computed: 'computed jet',
   },
   'wake.model': { auto: 'by the rings', coaxial: 'rings on one axis', filament: 'rings in space' },
+  'wake.start': { matched: 'matched ring', jet: 'computed jet' },
   'wake.law': { thin: 'thin core', regularised: 'regularised' },
   'wake.ageing': { auto: 'by Reynolds number', laminar: 'laminar', turbulent: 'turbulent' },
+  ...THRUSTER_CHOICES,
+  ...TANK_RUN_CHOICES,
 } as const
 export type ChoicePath = keyof typeof CHOICES

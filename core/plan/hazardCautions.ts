@@ -7,9 +7,9 @@ import type { CautionContext, CautionDefinition, CautionGroup } from './cautionT
 const LOCAL = 'Follow local rules and let a qualified person decide.'
 
 /** A tank run is planned: hazards of laser, mains, water, glass and the moving piston. */
-const inLaboratory = ({ plan }: CautionContext): boolean => plan.source['tankRun'] !== undefined
+const inLaboratory = ({ plan }: CautionContext): boolean => plan.tankRun !== null
 /** A vehicle is sized: hazards of intake, batteries, launch and bench. */
-const onVehicle = ({ plan }: CautionContext): boolean => plan.source['thruster'] !== undefined
+const onVehicle = ({ plan }: CautionContext): boolean => plan.thruster !== null
 
 type Row = readonly [id: string, text: string]
 

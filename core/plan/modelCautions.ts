@@ -39,12 +39,13 @@ const ESTIMATES = [
 function disagreement(pulse: PulseResult): string | null {
   const found = ESTIMATES.flatMap(([key, name]) => {
     const value = pulse.formationNumber[key]
-    return value === null ? [] : [{ name, value }]
+    // The computed jet's number is good to a few tenths.
+    return value === null ? [] : [{ name, value, words: key === 'computed' ? value.toFixed(1) : two(value) }]
   })
   const past = found.filter(({ value }) => pulse.strokeRatio > value)
   const before = found.filter(({ value }) => pulse.strokeRatio <= value)
   if (past.length === 0 || before.length === 0) return null
-  const names = (list: typeof found): string => list.map(({ name, value }) => `${name} ${two(value)}`).join(', ')
+  const names = (list: typeof found): string => list.map(({ name, words }) => `${name} ${words}`).join(', ')
   return `The estimates of pinch-off disagree about this stroke of ${two(pulse.strokeRatio)} D: already past by ${names(past)}; not yet by ${names(before)}.`
 }
 

@@ -15,6 +15,7 @@ import {
 import type { PulseResult } from '../pulse'
 import type { WaterProperties } from '../water'
 import { writeCsv } from './csvWriter'
+import { eventsOf, jetSummary, type JetOutcome } from './jetTables'
 import type { Caution } from './types'
 
 export const PULSE_COLUMNS = [
@@ -45,9 +46,9 @@ export function trajectoryTable(wake: Wake): string {
   return writeCsv(TRAJECTORY_COLUMNS, trajectoryRows(wake))
 }
 
-/** events.csv; `end` is always last. */
-export function eventTable(wake: Wake): string {
-  return writeCsv(EVENT_COLUMNS, eventRows(wake))
+/** events.csv of a wake, a starting jet, or both; `end` is always last. @param ofPulse whether the wake follows the rings of the pulse */
+export function eventTable(wake: Wake | null, jet: JetOutcome | null = null, ofPulse = true): string {
+  return writeCsv(EVENT_COLUMNS, eventRows(eventsOf(wake, jet, ofPulse)))
 }
 
 /** Name of the file with the rings at one output time, from 0. */
@@ -74,6 +75,7 @@ export const SUMMARY_VERSION = 1
 export interface SummaryInput {
   readonly water: WaterProperties
   readonly pulse: PulseResult | null
+  readonly jet: JetOutcome | null
   /** The wake with what belongs beside it; null where it was not computed. */
   readonly wake: {
     readonly wake: Wake
@@ -107,6 +109,7 @@ export function summaryText(input: SummaryInput): string {
       notes: water.notes,
     },
     pulse: pulse === null ? undefined : pulseSummary(pulse),
+    jet: input.jet === null ? undefined : jetSummary(input.jet),
     wake: input.wake === null ? undefined : wakeSection(input.wake),
     cautions: input.cautions,
   }

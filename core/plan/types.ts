@@ -5,7 +5,10 @@ import type { Problem } from '../base'
 import type { CoaxialLaw, WakeAgeing } from '../coaxial'
 import type { WakeModel, WakeNozzle, WakeRing, WakeWall } from '../filament'
 import type { FormationBasis, NozzleInput, OverPressureBasis, ProgrammeInput } from '../pulse'
+import type { TankRunSection } from '../tank'
+import type { ThrusterSection } from '../thruster'
 import type { WaterInput } from '../water'
+import type { HeldDesign, SpreadSection, SweepSection } from './sectionTypes'
 
 export const PLAN_FORMAT = 'ringwright-plan'
 export const PLAN_VERSION = 1
@@ -27,6 +30,8 @@ export interface TrainSection {
   readonly period: number
 }
 
+export type WakeStart = 'matched' | 'jet'
+
 /** What the rings do next: where they start, what stands around them, and how they are marched. */
 export interface WakeSection {
   readonly model: WakeModel
@@ -36,6 +41,8 @@ export interface WakeSection {
   /** Explicit rings; when there are any they replace the train. */
   readonly rings: readonly WakeRing[]
   readonly nozzles: readonly WakeNozzle[]
+  /** What a train starts from: the matched steady ring of each pulse, or what the computed jet lets go of. */
+  readonly start: WakeStart
   readonly duration: number
   readonly outputStep: number
   readonly viscous: boolean
@@ -47,6 +54,16 @@ export interface WakeSection {
   readonly stations: readonly number[]
 }
 
+/** How the starting jet is computed. */
+export interface JetSection {
+  /** True: three smoothing lengths and their spread; false: one. */
+  readonly ensemble: boolean
+  /** True: cores grow by viscosity. */
+  readonly coreGrowth: boolean
+  /** One smoothing length over the exit diameter; null: the usual ones. */
+  readonly delta: number | null
+}
+
 /** Anything JSON can hold. */
 export type Json = null | boolean | number | string | readonly Json[] | JsonObject
 export interface JsonObject {
@@ -54,7 +71,7 @@ export interface JsonObject {
 }
 
 /**
- * A decoded plan. Sections that later capabilities read (jet, thruster, tankRun, readings, sweep, spread, held) and keys this version does not know are kept as they came in `source` and written back on save.
+ * A decoded plan. Readings, and keys this version does not know, are kept as they came in `source` and written back on save.
  */
 export interface Plan {
   readonly title: string
@@ -64,9 +81,17 @@ export interface Plan {
   readonly programme: ProgrammeInput
   readonly ambient: { readonly axialFlow: number }
   readonly models: ModelsInput
+  /** null: the plan has no such section, and a starting jet is computed only where a model asks for it. */
+  readonly jet: JetSection | null
   /** null: the plan has no such section. No train means one pulse. */
   readonly train: TrainSection | null
   readonly wake: WakeSection | null
+  readonly thruster: ThrusterSection | null
+  readonly tankRun: TankRunSection | null
+  readonly sweep: SweepSection | null
+  readonly spread: SpreadSection | null
+  /** Designs kept to be held against this one; empty: none. */
+  readonly held: readonly HeldDesign[]
   readonly view: ViewInput
   /** Sections a wake of explicit rings did without; what stands in for them is not computed with. */
   readonly absent: readonly ('nozzle' | 'programme')[]

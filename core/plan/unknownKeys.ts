@@ -4,13 +4,27 @@
  */
 import { planDocument } from './writePlan'
 import { isObject } from './decodeFields'
-import type { JsonObject, Plan } from './types'
+import type { Json, JsonObject, Plan } from './types'
 
 /** Sections whose every key this version knows; others belong to later capabilities and are not looked into. */
-const KNOWN_SECTIONS = ['water', 'nozzle', 'programme', 'ambient', 'models', 'train', 'wake', 'view'] as const
+const KNOWN_SECTIONS = [
+  'water',
+  'nozzle',
+  'programme',
+  'ambient',
+  'models',
+  'jet',
+  'train',
+  'wake',
+  'thruster',
+  'tankRun',
+  'sweep',
+  'spread',
+  'view',
+] as const
 
 /** Sections the contract names, whether or not this version reads them. */
-const LATER_SECTIONS = ['jet', 'thruster', 'tankRun', 'readings', 'sweep', 'spread', 'held'] as const
+const LATER_SECTIONS = ['readings', 'held'] as const
 
 /** Dotted paths of the keys this version does not know, in their order; empty for a plan it knows whole. */
 export function unknownKeys(plan: Plan): readonly string[] {
@@ -25,7 +39,33 @@ export function unknownKeys(plan: Plan): readonly string[] {
       .filter((key) => !(key in taken) && !isOptional(section, key))
       .map((key) => `${section}.${key}`)
   })
-  return [...top, ...inside]
+  const deeper = NESTED_SECTIONS.flatMap((section) => unknownBelow(plan.source[section], known[section], section))
+  return [...top, ...inside, ...deeper]
+}
+
+/** Sections whose parts keep what is unknown in them too. */
+const NESTED_SECTIONS = ['thruster', 'tankRun', 'sweep', 'spread'] as const
+
+/** Steps of a matrix are saved as the values they make. */
+const READ_INTO_VALUES = /^tankRun\.matrix\.fields\.\d+\.(?:from|to|count)$/u
+
+/** Unknown keys of the objects and the lists of objects inside one. */
+function unknownBelow(given: Json | undefined, taken: Json | undefined, path: string): readonly string[] {
+  if (Array.isArray(given) && Array.isArray(taken) && given.length === taken.length)
+    return given.flatMap((item: Json, index) => unknownOf(item, taken[index], `${path}.${index}`))
+  if (!isObject(given) || !isObject(taken)) return []
+  return Object.keys(given).flatMap((key) => unknownOf(given[key], taken[key], `${path}.${key}`))
+}
+
+function unknownOf(given: Json | undefined, taken: Json | undefined, path: string): readonly string[] {
+  const own =
+    isObject(given) && isObject(taken)
+      ? Object.keys(given)
+          .filter((key) => !(key in taken))
+          .map((key) => `${path}.${key}`)
+          .filter((name) => !READ_INTO_VALUES.test(name))
+      : []
+  return [...own, ...unknownBelow(given, taken, path)]
 }
 
 /** Known keys that a saved plan may leave out. */

@@ -1,6 +1,9 @@
 /**
  * A plan becomes its text: two-space indent, stable key order, SI numbers, what this version does not know kept.
  */
+import { merged, pair } from './mergedDocument'
+import { heldDocument, spreadDocument, sweepDocument, tankRunDocument } from './tankRunDocument'
+import { thrusterDocument } from './thrusterDocument'
 import { PLAN_FORMAT, PLAN_VERSION, type Json, type JsonObject, type Plan, type WakeSection } from './types'
 
 /** Order of the sections in a file, as the contract lists them; unknown ones follow in their own order. */
@@ -48,8 +51,14 @@ export function planDocument(plan: Plan): JsonObject {
         }),
     ambient: merged(plan.source['ambient'], { ...plan.ambient }),
     models: merged(plan.source['models'], { ...plan.models }),
+    jet: plan.jet === null ? undefined : merged(plan.source['jet'], { ...plan.jet }),
     train: plan.train === null ? undefined : merged(plan.source['train'], { ...plan.train }),
     wake: plan.wake === null ? undefined : merged(plan.source['wake'], wakeDocument(plan.wake)),
+    thruster: plan.thruster === null ? undefined : thrusterDocument(plan.source['thruster'], plan.thruster),
+    tankRun: plan.tankRun === null ? undefined : tankRunDocument(plan.source['tankRun'], plan.tankRun),
+    sweep: plan.sweep === null ? undefined : sweepDocument(plan.source['sweep'], plan.sweep),
+    spread: plan.spread === null ? undefined : spreadDocument(plan.source['spread'], plan.spread),
+    held: heldDocument(plan.source['held'], plan.held),
     view: merged(plan.source['view'], { units: { ...plan.view.units } }),
   }
   const all: Record<string, Json | undefined> = { ...plan.source, ...known }
@@ -70,18 +79,6 @@ function wakeDocument(wake: WakeSection): Readonly<Record<string, Json>> {
 
 function nodesOf(curve: Float64Array): number[][] {
   return Array.from({ length: curve.length / 3 }, (_, i) => [...curve.subarray(3 * i, 3 * i + 3)])
-}
-
-function pair(key: string, value: Json | undefined): [string, Json][] {
-  return value === undefined ? [] : [[key, value]]
-}
-
-/** Known values first in their order, then what the section held beyond them. */
-function merged(source: Json | undefined, values: Readonly<Record<string, Json | undefined>>): JsonObject {
-  const kept = typeof source === 'object' && source !== null && !Array.isArray(source) ? Object.entries(source) : []
-  const beyond = kept.filter(([key]) => !(key in values))
-  const known = Object.entries(values).flatMap(([key, value]) => pair(key, value))
-  return Object.fromEntries([...known, ...beyond])
 }
 
 /** The text of a plan file, with its trailing newline. */

@@ -63,14 +63,13 @@ const TRIGGERS: Readonly<Record<string, Readonly<Record<string, unknown>>>> = {
 }
 
 describe('cautions', () => {
-  it.each(CAUTIONS.filter((caution) => caution.group === 'model').map((caution) => caution.id))(
-    '%s fires on its trigger',
-    async (id) => {
-      const trigger = TRIGGERS[id]
-      if (trigger === undefined) throw new Error(`no trigger is written down for ${id}`)
-      expect(await idsOf(trigger)).toContain(id)
-    },
-  )
+  // Those of the starting jet have their triggers in jetCautions.test.ts.
+  const ids = CAUTIONS.filter(({ group }) => group === 'model').map(({ id }) => id)
+  it.each(ids.filter((id) => !id.startsWith('jet-')))('%s fires on its trigger', async (id) => {
+    const trigger = TRIGGERS[id]
+    if (trigger === undefined) throw new Error(`no trigger is written down for ${id}`)
+    expect(await idsOf(trigger)).toContain(id)
+  })
 
   it('a stream faster than the jet is told to make no such ring', async () => {
     const { data } = await run(planOf({ ambient: { axialFlow: 0.25 } }), { sections: ['pulse'] })
@@ -97,7 +96,15 @@ describe('cautions', () => {
   })
 
   it('every hazard leaves the decision to local rules and qualified people', () => {
-    const context = { plan: planOf({ tankRun: {}, thruster: {} }), water: null, pulse: null, wake: null, wakeNotes: [] }
+    const context = {
+      plan: planOf({ tankRun: {}, thruster: {} }),
+      water: null,
+      pulse: null,
+      wake: null,
+      jet: null,
+      jetMissing: null,
+      wakeNotes: [],
+    }
     const hazards = [
       ...cautionsFor(context, 'laboratory'),
       ...cautionsFor(context, 'machine'),

@@ -1,13 +1,19 @@
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import {
   CHOICES,
+  fieldDefinition,
   FIELDS,
+  numberAt,
+  readPlan,
   setChoice,
   setField,
   setRows,
   setStrokeRatio,
   setUnit,
   validatePlan,
+  writePlan,
+  type FieldPath,
 } from '../../../core/plan'
 import { expectClose } from '../../support/close'
 import { planOf } from '../../support/plans'
@@ -17,6 +23,22 @@ const ROWS = [
   { time: 0.1, speed: 0.2 },
   { time: 0.3, speed: 0 },
 ]
+
+/** A vehicle whose hull can be judged, so that any one number may change. */
+const BEGUN = planOf({ thruster: { vehicle: { length: 2, drag: { kind: 'area', dragArea: 1 } }, search: {} } })
+
+/** Fields of the sections of vehicle and tank that need no other beside them: no end of a span, no depth that must hold another. */
+function isFree(path: FieldPath): boolean {
+  return /^(?:thruster|tankRun|spread)\./u.test(path) && !/search\.\w+\.\d$|tank\.depth$|camera\.pixels/u.test(path)
+}
+
+function insideOf(path: FieldPath): fc.Arbitrary<number> {
+  const { min, max = 1e6, above, whole } = fieldDefinition(path)
+  if (whole === true) return fc.integer({ min: min ?? 0, max })
+  const from = above === undefined ? (min ?? -max) : above + max * 1e-6
+  // A file knows no minus zero.
+  return fc.double({ min: from, max, noNaN: true, noDefaultInfinity: true }).map((value) => (value === 0 ? 0 : value))
+}
 
 describe('edits of a plan', () => {
   it('set one number and leave the old plan as it was', () => {
@@ -29,21 +51,30 @@ describe('edits of a plan', () => {
 
   it('reach every field and every choice', () => {
     const plan = planOf()
-    for (const path of Object.keys(FIELDS) as (keyof typeof FIELDS)[]) {
-      const [section = '', key = ''] = path.split('.')
-      expect(
-        (setField(plan, path, 0.0123) as unknown as Record<string, Record<string, unknown>>)[section]?.[key],
-        path,
-      ).toBe(0.0123)
-    }
-    for (const path of Object.keys(CHOICES) as (keyof typeof CHOICES)[]) {
-      const [section = '', key = ''] = path.split('.')
-      for (const word of Object.keys(CHOICES[path]))
-        expect(
-          (setChoice(plan, path, word) as unknown as Record<string, Record<string, unknown>>)[section]?.[key],
-          path,
-        ).toBe(word)
-    }
+    for (const path of Object.keys(FIELDS) as (keyof typeof FIELDS)[])
+      expect(numberAt(setField(plan, path, 0.0123), path), path).toBe(0.0123)
+    for (const path of Object.keys(CHOICES) as (keyof typeof CHOICES)[])
+      for (const word of Object.keys(CHOICES[path])) {
+        const changed: unknown = setChoice(plan, path, word)
+        const value = path.split('.').reduce((held, key) => (held as Record<string, unknown>)[key], changed)
+        expect(value, path).toBe(word)
+      }
+  })
+
+  it('keep every number that is set inside its limits through a save', () => {
+    const paths = (Object.keys(FIELDS) as (keyof typeof FIELDS)[]).filter(isFree)
+    const edit = fc.constantFrom(...paths).chain((path) => insideOf(path).map((value) => ({ path, value })))
+    fc.assert(
+      fc.property(fc.array(edit, { maxLength: 12 }), (edits) => {
+        const plan = edits.reduce((changed, { path, value }) => setField(changed, path, value), BEGUN)
+        const reading = readPlan(writePlan(plan))
+        if (!reading.ok) throw new Error(reading.problems.map(({ message }) => message).join('\n'))
+        expect(reading.plan.thruster).toEqual(plan.thruster)
+        expect(reading.plan.tankRun).toEqual(plan.tankRun)
+        expect(reading.plan.spread).toEqual(plan.spread)
+        expect(writePlan(reading.plan)).toBe(writePlan(plan))
+      }),
+    )
   })
 
   it('do not check: what a value breaks is told by validatePlan, a table with a stroke of nothing included', () => {

@@ -1,0 +1,70 @@
+/**
+ * A day at the tank: stations, imaging, run matrix and the piston's profile.
+ *
+ * planTankRun      everything a run needs to be told
+ * tankArrivals     when the ring comes to each station, with its range
+ * pistonProfile    what the piston is told to do at each step of its controller
+ * solutionsFor     strokes and peak speeds that give a wanted ring
+ */
+export {
+  ageingLaws,
+  tankArrivals,
+  type ArrivalInput,
+  type Arrivals,
+  type RingVariant,
+  type TankArrival,
+  type TankPath,
+} from './arrivals'
+export { clearances, type Clearance, type ClearanceInput, type WallName } from './clearances'
+export { imaging, type Imaging, type ImagingInput, type ImagingNote, type Refraction, type RingSeen } from './imaging'
+export {
+  depthOfField,
+  DISPLACEMENT_SHARE,
+  FEWEST_VECTORS,
+  LARGEST_GRADIENT,
+  OUT_OF_PLANE_SHARE,
+  pairInterval,
+  seedingDensity,
+  SHEET_OVER_DISPLACEMENT,
+  STEP_OVER_RADIUS,
+  storageOf,
+  thinnestSheet,
+} from './imagingRules'
+export { solutionsFor, withPeak, type InverseInput, type Solution } from './inverse'
+export {
+  integrateProfile,
+  pistonProfile,
+  type DriveLimit,
+  type DriveLimitName,
+  type PistonProfile,
+  type ProfileCheck,
+  type ProfileInput,
+  type ProfileRounding,
+  type ProfileRows,
+} from './profile'
+export {
+  apparentPlace,
+  paraxialPath,
+  REFRACTIVE_INDEX,
+  waterOverAirScale,
+  type ApparentPlace,
+  type WindowView,
+} from './refraction'
+export type { Passage, RingPath } from './ringPath'
+export { MOST_RUNS, runMatrix, type MatrixRun, type RunMatrix } from './runMatrix'
+export { settling, TUBE_LAMINAR_BELOW, WAITING_OVER_PASSAGE, type Settling, type SettlingInput } from './settling'
+export { planTankRun, type FollowedRing, type TankRunInput, type TankRunResult } from './tankRun'
+export { triggerTable, type TriggerRow, type TriggerTable, type TriggerTableInput } from './triggers'
+export type {
+  CameraInput,
+  DriveInput,
+  MatrixField,
+  MatrixInput,
+  PracticeInput,
+  TankInput,
+  TankOptions,
+  TankRunSection,
+  TankTarget,
+  TriggerInput,
+} from './types'
+export { nearestSide, slowingTube, tankWalls, wallSlowing, type TankWalls, type WallKind } from './walls'
