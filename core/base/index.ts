@@ -16,6 +16,7 @@ export {
 export { evaluateCubic, monotoneCubic, type CubicCurve } from './interpolation'
 export { march, type Crossing, type EventFunctions, type MarchOptions, type MarchResult } from './march'
 export { gaussLegendre, integrate, type GaussRule } from './quadrature'
+export { randomSource, sourceOfState, type RandomSource } from './random'
 export { bracketedRoot } from './root'
 export {
   RungeKuttaStepper,
