@@ -27,7 +27,7 @@ export const KNOWN_SECTIONS = [
 ] as const
 
 export const USAGE =
-  'npm run --silent batch -- PLAN.json --out DIR [--only LIST] (LIST: water, pulse, wake; PLAN - reads standard input)'
+  'npm run --silent batch -- PLAN.json --out DIR [--only LIST] (LIST: water, pulse, jet, wake; PLAN - reads standard input)'
 
 const NOT_YET = ['--part', '--merge', '--checks']
 

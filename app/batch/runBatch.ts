@@ -7,6 +7,7 @@ import type { Problem } from '../../core/base'
 import {
   canonicalInput,
   eventTable,
+  jetTable,
   pulseTable,
   readPlan,
   SUMMARY_FORMAT,
@@ -94,7 +95,7 @@ async function runOnce(list: readonly string[], environment: BatchEnvironment): 
   const refused = result.field !== undefined
   // What was finished before a failure is kept, without a summary: that comes last and tells of a whole run.
   if (!refused && result.data !== null)
-    await writeTables(folder, request.out, wanted(result.data, sections), environment)
+    await writeTables(folder, request.out, plan, wanted(result.data, sections), environment)
   throw new Stop(refused ? EXIT.refused : EXIT.failed, `${request.plan}: ${result.message}`)
 }
 
@@ -155,16 +156,20 @@ function noteUncomputed(plan: Plan, environment: BatchEnvironment): void {
 function fileNames(sections: readonly Section[]): readonly string[] {
   return [
     ...(sections.includes('pulse') ? ['pulse.csv'] : []),
-    ...(sections.includes('wake') ? ['trajectory.csv', 'events.csv', 'wake', 'wake-times.csv'] : []),
+    ...(sections.includes('jet') ? ['jet.csv'] : []),
+    ...(sections.includes('wake') ? ['trajectory.csv', 'wake', 'wake-times.csv'] : []),
+    ...(sections.includes('jet') || sections.includes('wake') ? ['events.csv'] : []),
   ]
 }
 
 /** Tables of the finished sections in the order they are written, each made when its turn comes. */
-function* tablesOf({ pulse, wake }: RunData): Generator<readonly [name: string, content: string]> {
+function* tablesOf(plan: Plan, { pulse, jet, wake }: RunData): Generator<readonly [name: string, content: string]> {
+  const ofPulse = plan.wake === null || plan.wake.rings.length === 0
   if (pulse !== null) yield ['pulse.csv', pulseTable(pulse)]
+  if (jet !== null) yield ['jet.csv', jetTable(jet)]
+  if (wake !== null) yield ['trajectory.csv', trajectoryTable(wake.wake)]
+  if (jet !== null || wake !== null) yield ['events.csv', eventTable(wake?.wake ?? null, jet, ofPulse)]
   if (wake === null) return
-  yield ['trajectory.csv', trajectoryTable(wake.wake)]
-  yield ['events.csv', eventTable(wake.wake)]
   for (let index = 0; index < wake.wake.outputTimes.length; index++)
     yield [`wake/${wakeFileName(index)}`, wakeFile(wake.wake, index)]
   yield ['wake-times.csv', wakeTimesTable(wake.wake)]
@@ -174,12 +179,13 @@ function* tablesOf({ pulse, wake }: RunData): Generator<readonly [name: string, 
 async function writeTables(
   folder: ResultFolder,
   shown: string,
+  plan: Plan,
   data: RunData,
   environment: BatchEnvironment,
 ): Promise<readonly string[]> {
   const files: string[] = []
   try {
-    for (const [name, content] of tablesOf(data)) {
+    for (const [name, content] of tablesOf(plan, data)) {
       await writeFile(folder, shown, name, content, environment)
       files.push(name)
     }
@@ -214,7 +220,7 @@ async function writeResults(
   data: RunData,
   environment: BatchEnvironment,
 ): Promise<void> {
-  const tables = await writeTables(folder, shown, data, environment)
+  const tables = await writeTables(folder, shown, plan, data, environment)
   const files = [...tables, SUMMARY_NAME]
   await folder.dropEarlier(files)
   const summary = summaryText({

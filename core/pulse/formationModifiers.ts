@@ -36,12 +36,15 @@ export interface FormationModifiers {
    * uniform parallel jet; the stream acts on the estimate without it.
    */
   readonly apply: (raw: number, share: number) => number
+  /**
+   * Modified value of the computed jet: it carries the stream itself, and is made for a round tube with a uniform exit, so that profile,
+   * axis ratio and contraction are still to come.
+   */
+  readonly applyToJet: (raw: number) => number
   /** False in a counter-flow so strong that no ring is expected. */
   readonly ringExpected: boolean
   /** Modified band of the experiments. */
   readonly band: { readonly low: number; readonly centre: number; readonly high: number }
-  /** Factor of an exit profile that an estimate made for a uniform exit still needs. */
-  readonly profileShare: number
   readonly notes: readonly string[]
 }
 
@@ -59,9 +62,9 @@ export function formationModifiers(nozzle: NozzleInput, streamRatio: number): Fo
   const onBand = (inStream(PUBLISHED_BAND.centre, streamRatio) / PUBLISHED_BAND.centre) * orifice * profileShare
   return {
     apply: (raw, share) => share * inStream(raw / share, streamRatio) * ellipse * orifice,
+    applyToJet: (raw) => raw * profileShare * ellipse * orifice,
     ringExpected,
     band: { low: band.low * onBand, centre: band.centre * onBand, high: band.high * onBand },
-    profileShare,
     notes: modifierNotes(nozzle, streamRatio, ringExpected),
   }
 }
@@ -104,7 +107,7 @@ function modifierNotes(nozzle: NozzleInput, streamRatio: number, ringExpected: b
     )
   else if (streamRatio !== 0)
     notes.push(
-      `The stream, ${ratio} of the peak exit speed, is in every estimate, by a curve between the published values at −0.40 and 0.50 (Zhu et al. 2023).`,
+      `The stream, ${ratio} of the peak exit speed, is in every estimate but the computed jet, which carries it itself, by a curve between the published values at −0.40 and 0.50 (Zhu et al. 2023).`,
     )
   if (nozzle.exitProfile === 'parabolic')
     notes.push(

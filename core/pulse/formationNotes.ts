@@ -44,7 +44,10 @@ export function formationNotes(state: {
       continue
     }
     if (value < band.low || value > band.high)
-      say(estimate, `${NAMES[estimate]} gives ${value.toFixed(2)}, outside the published band, ${bandText}.`)
+      say(
+        estimate,
+        `${NAMES[estimate]} gives ${value.toFixed(estimate === 'computed' ? 1 : 2)}, outside the published band, ${bandText}.`,
+      )
     if (estimate === 'carriedVolume')
       say(estimate, 'The carried volume is a flat criterion: 1 % of volume moves it by about 0.2.')
     if (estimate === 'speedMatch')

@@ -69,8 +69,7 @@ export function formationNumbers(input: PulseInput, programme: SpeedProgramme): 
   }
   const share = energyShare(searchFactors(input.nozzle))
   const slug = (value: number | null) => (value === null ? null : modifiers.apply(value, share))
-  const jet = (value: number | null) =>
-    value === null ? null : modifiers.apply(value * modifiers.profileShare, modifiers.profileShare)
+  const jet = (value: number | null) => (value === null ? null : modifiers.applyToJet(value))
   const estimates: Estimates = {
     energyLimit: slug(raw.energyLimit),
     carriedVolume: slug(raw.carriedVolume),

@@ -134,7 +134,7 @@ function requireInput(input: PulseInput): void {
   requireNozzle(input.nozzle)
   requireRange('ambient.axialFlow', input.axialFlow, { unit: 'm/s' })
   if (input.jet !== null) return
-  const missing = 'needs the computed starting jet, which is not available yet, got computed'
+  const missing = 'needs the computed starting jet to be handed in, got computed without one'
   if (input.overPressure === 'computed') {
     throw new DomainError('models.overPressure', `models.overPressure ${missing}; off or quick-start can be used`)
   }

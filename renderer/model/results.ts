@@ -48,9 +48,15 @@ export function createResults(client: WorkerClient, onCrash: (sentence: string) 
   function start(plan: Plan): void {
     // A wake of explicit rings may come without nozzle and programme: then there is only the water.
     const sections = plan.absent.length === 0 ? (['water', 'pulse'] as const) : (['water'] as const)
-    const job = client.run(plan, sections, (step) => {
-      if (running.value?.job === job) progress.value = step
-    })
+    // A starting jet takes seconds: at every change only a finished one is used, and a caution tells where there is none.
+    const job = client.run(
+      plan,
+      sections,
+      (step) => {
+        if (running.value?.job === job) progress.value = step
+      },
+      'cached',
+    )
     running.value = { plan, job }
     void job.outcome.then((outcome) => {
       running.value = null

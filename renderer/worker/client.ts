@@ -4,7 +4,7 @@
  */
 import type { Plan } from '../../core/plan'
 import type { Progress } from '../../core/base'
-import type { RunResult, Section, WakeData, WakePicture, WakePictureRequest } from '../../core/run'
+import type { RunRequest, RunResult, Section, WakeData, WakePicture, WakePictureRequest } from '../../core/run'
 import type { Port, WorkerAnswer, WorkerRequest } from './messages'
 
 /** Time a cancelled job has to answer before its worker is replaced [ms]. */
@@ -31,7 +31,13 @@ export interface Job<Outcome = JobOutcome> {
 }
 
 export interface WorkerClient {
-  run(plan: Plan, sections: readonly Section[], onProgress?: (progress: Progress) => void): Job
+  /** @param jet how a starting jet is come by, as in RunRequest; default run */
+  run(
+    plan: Plan,
+    sections: readonly Section[],
+    onProgress?: (progress: Progress) => void,
+    jet?: NonNullable<RunRequest['jet']>,
+  ): Job
   /** Dye and field of a finished wake of this plan. */
   picture(
     plan: Plan,
@@ -122,9 +128,9 @@ export function createWorkerClient(
   }
 
   return {
-    run: (plan, sections, onProgress) =>
+    run: (plan, sections, onProgress, jet = 'run') =>
       open<JobOutcome>(
-        (id) => ({ kind: 'run', id, plan, sections }),
+        (id) => ({ kind: 'run', id, plan, asked: { sections, jet } }),
         (ended) => (ended.kind === 'picture' ? MIXED_UP : ended),
         onProgress,
       ),

@@ -3,11 +3,17 @@
  */
 import type { Plan } from '../../core/plan'
 import type { Progress } from '../../core/base'
-import type { RunResult, Section, WakeData, WakePicture, WakePictureRequest } from '../../core/run'
+import type { RunRequest, RunResult, WakeData, WakePicture, WakePictureRequest } from '../../core/run'
 
 /** To the worker. */
 export type WorkerRequest =
-  | { readonly kind: 'run'; readonly id: number; readonly plan: Plan; readonly sections: readonly Section[] }
+  | {
+      readonly kind: 'run'
+      readonly id: number
+      readonly plan: Plan
+      /** What is asked of core/run. */
+      readonly asked: RunRequest
+    }
   | {
       readonly kind: 'picture'
       readonly id: number

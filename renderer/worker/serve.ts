@@ -2,7 +2,7 @@
  * The worker's side: core/run behind a message port. Several jobs may be open; each is cancelled by its own number.
  */
 import type { Progress } from '../../core/base'
-import { run, wakePicture } from '../../core/run'
+import { createJetCache, run, wakePicture } from '../../core/run'
 import { buffersOf } from './handOver'
 import type { Port, WorkerAnswer, WorkerRequest } from './messages'
 import { createPause } from './pauses'
@@ -12,6 +12,8 @@ const REPORT_EVERY = 60
 
 /** Answer requests on a port for as long as it lives. */
 export function serve(port: Port<WorkerAnswer, WorkerRequest>, now: () => number = () => performance.now()): void {
+  // One for the life of the worker: a jet takes seconds, and most changes of a plan leave it as it is.
+  const jetCache = createJetCache()
   const signals = new Map<number, { aborted: boolean }>()
   port.listen((request) => {
     if (request.kind === 'cancel') {
@@ -43,7 +45,7 @@ export function serve(port: Port<WorkerAnswer, WorkerRequest>, now: () => number
       const options = { signal, onProgress, pause: createPause(now) }
       if (request.kind === 'picture')
         return { kind: 'picture', id, picture: await wakePicture(plan, request.data, request.request, options) }
-      return { kind: 'result', id, result: await run(plan, { sections: request.sections }, options) }
+      return { kind: 'result', id, result: await run(plan, request.asked, { ...options, jetCache }) }
     } catch (error) {
       return { kind: 'crashed', id, message: error instanceof Error ? error.message : String(error) }
     }

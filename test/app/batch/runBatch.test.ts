@@ -84,9 +84,17 @@ describe('a run', () => {
       expect(notes).toEqual([])
       expect(code).toBe(0)
       const names = written.map((name) => path.relative('out', name)).filter((name) => path.dirname(name) === '.')
-      const wake = text.includes('"wake"') ? ['trajectory.csv', 'events.csv', 'wake-times.csv'] : []
-      expect(names).toEqual(['pulse.csv', ...wake, 'summary.json'])
+      const [jet, wake] = [text.includes('"jet": {'), text.includes('"wake"')]
+      expect(names).toEqual([
+        'pulse.csv',
+        ...(jet ? ['jet.csv'] : []),
+        ...(wake ? ['trajectory.csv'] : []),
+        ...(jet || wake ? ['events.csv'] : []),
+        ...(wake ? ['wake-times.csv'] : []),
+        'summary.json',
+      ])
     },
+    30_000,
   )
 
   it('names a field it does not know, and computes all the same', async () => {

@@ -62,6 +62,27 @@ describe('formation number of a constant speed', () => {
     expect(numbers.high).toBe(4.8)
   })
 
+  it('leaves the stream out of the computed jet, which carries it, and brings axis ratio, profile and contraction in', () => {
+    const jet = {
+      formationNumber: 2,
+      formationNumberLow: 1.9,
+      formationNumberHigh: 2.1,
+      circulationBeyondSlug: 0,
+      impulseBeyondSlug: 0,
+      energyBeyondSlug: 0,
+    }
+    const still = formation({ jet })
+    const streaming = formation({ jet, axialFlow: 0.3 * PLAIN.programme.peakSpeed })
+    expect(streaming.computed).toBe(2)
+    expect(streaming.energyLimit ?? Infinity).toBeLessThan(0.8 * (still.energyLimit ?? NaN))
+    // Centre 3.5 of the elliptic band over 4 of the round one; a parabolic profile brings 4 to 1; contraction 0.64^1.5 = 0.512.
+    const nozzle = PLAIN.nozzle
+    expectClose(formation({ jet, nozzle: { ...nozzle, axisRatio: 2 } }).computed ?? NaN, 2 * (3.5 / 4), 1e-14)
+    expectClose(formation({ jet, nozzle: { ...nozzle, exitProfile: 'parabolic' } }).computed ?? NaN, 2 / 4, 1e-14)
+    const orifice = { ...nozzle, shape: 'orifice', contraction: 0.64 } as const
+    expectClose(formation({ jet, nozzle: orifice }).computed ?? NaN, 2 * 0.512, 1e-14)
+  })
+
   it('says what each estimate is worth, and clips none into the band', () => {
     const { notes, speedMatch } = formation({})
     const of = (estimate: string) => notes.filter((note) => note.estimate === estimate).map((note) => note.text)

@@ -251,8 +251,8 @@ describe('refusals', () => {
     ['ambient.axialFlow', { axialFlow: Infinity }, 'must be a finite number, got Infinity m/s'],
     ['water.density', { density: 0 }, 'must be above 0 kg/m3'],
     ['water.kinematicViscosity', { kinematicViscosity: NaN }, 'must be a finite number'],
-    ['models.overPressure', { overPressure: 'computed' }, 'not available yet'],
-    ['models.formationNumber', { formationBasis: 'computed' }, 'not available yet'],
+    ['models.overPressure', { overPressure: 'computed' }, 'needs the computed starting jet'],
+    ['models.formationNumber', { formationBasis: 'computed' }, 'needs the computed starting jet'],
   ])('%s is named with its limit', (field, more, message) => {
     const refused = () => computePulse({ ...PLAIN, ...more })
     expect(refused).toThrow(DomainError)

@@ -42,10 +42,10 @@ describe('run', () => {
   })
 
   it('says in a sentence which field cannot be computed', async () => {
-    const plan = planOf({ models: { overPressure: 'computed' } })
-    const result = await run(plan, { sections: ['pulse'] })
+    const plan = planOf()
+    const result = await run({ ...plan, nozzle: { ...plan.nozzle, diameter: -1 } }, { sections: ['pulse'] })
     expect(result.status).toBe('failed')
-    expect(result.field).toBe('models.overPressure')
+    expect(result.field).toBe('nozzle.diameter')
     expect(result.message.length).toBeGreaterThan(30)
   })
 
@@ -69,7 +69,7 @@ describe('examples', () => {
   it.each(EXAMPLES.map((example) => [example.id, example.purpose] as const))(
     '%s computes and has a purpose in one line',
     async (id, purpose) => {
-      const { data, status } = await run(examplePlan(id), { sections: ['pulse'] })
+      const { data, status } = await run(examplePlan(id), { sections: ['pulse'], jet: 'cached' })
       expect(status).toBe('done')
       expect(data?.pulse?.slug.circulation).toBeGreaterThan(0)
       expect(purpose.length).toBeLessThan(100)

@@ -36,6 +36,7 @@ const done: RunResult = {
       notes: [],
     },
     pulse: null,
+    jet: null,
     wake: null,
     cautions: [],
   },

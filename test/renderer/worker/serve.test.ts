@@ -1,6 +1,6 @@
 import { MessageChannel } from 'node:worker_threads'
 import { afterEach, describe, expect, it } from 'vitest'
-import { defaultPlan, setField, setWake } from '../../../core/plan'
+import { defaultPlan, setField, setJet, setStrokeRatio, setWake, type Plan } from '../../../core/plan'
 import { run } from '../../../core/run'
 import { createWorkerClient, type WorkerHandle } from '../../../renderer/worker/client'
 import { decodeAnswer, decodeRequest } from '../../../renderer/worker/decodeMessages'
@@ -67,6 +67,21 @@ describe('worker behind a port', () => {
     expect(outcome.result.status).toBe('failed')
     expect(outcome.result.message).toMatch(/peakSpeed/u)
     expect(outcome.result.field).toBe('programme.peakSpeed')
+    client.dispose()
+  })
+
+  it('keeps a finished jet for the runs at every change, which compute none', async () => {
+    const client = createWorkerClient(() => channelWorker())
+    const coarse = setJet(setStrokeRatio(defaultPlan(), 6.5), { ensemble: false, delta: 0.2 })
+    const computedAt = async (plan: Plan, jet: 'run' | 'cached'): Promise<number | null | undefined> => {
+      const outcome = await client.run(plan, ['pulse'], undefined, jet).outcome
+      return outcome.kind === 'result' ? outcome.result.data?.pulse?.formationNumber.computed : undefined
+    }
+    expect(await computedAt(coarse, 'cached')).toBeNull()
+    const found = await computedAt(coarse, 'run')
+    expect(found).toBeGreaterThan(3)
+    expect(await computedAt(setField(coarse, 'water.depth', 4), 'cached')).toBe(found)
+    expect(await computedAt(setStrokeRatio(coarse, 6.6), 'cached')).toBeNull()
     client.dispose()
   })
 
