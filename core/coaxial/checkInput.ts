@@ -11,7 +11,7 @@ const MOST_ROWS = 1_000_000
 /** Every pair of rings is watched for passes and touches. */
 export const MOST_RINGS = 400
 /** Core ratio beyond which no ring of the steady family lies (Hill's vortex has sqrt 2). */
-const THICKEST_CORE = 1.5
+export const THICKEST_CORE = 1.5
 /** Rings closer than this share of their radius are one place: their mutual speed has no value. */
 const COINCIDENT = 1e-9
 

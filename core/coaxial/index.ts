@@ -3,6 +3,7 @@
  */
 export { checkMarch, MOST_OUTPUTS, MOST_RINGS } from './checkInput'
 export { marchCoaxialRings } from './marchCoaxial'
+export { marchMergingRings } from './marchMerging'
 export { THIN_CORE_LIMIT } from './ringEvents'
 export {
   ENSEMBLE_DELTAS,
@@ -15,8 +16,10 @@ export {
   type JetEnsemble,
   type JetEnsembleInput,
 } from './jet/ensemble'
-export { LARGEST_DELTA, LEAST_DELTA } from './jet/checkJetInput'
+export { checkJetInput, LARGEST_DELTA, LEAST_DELTA } from './jet/checkJetInput'
 export { FORMATION_STROKE, FORMATION_STROKE_FROM, formationInput } from './jet/formationInput'
+export { releaseJet } from './jet/release'
+export type { JetRelease, JetReleaseInput, JetSums, ReleasedRing } from './jet/releaseTypes'
 export { LIP_AVERAGE } from './jet/shedding'
 export { startingJet } from './jet/startingJet'
 export type {

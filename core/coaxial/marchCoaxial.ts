@@ -19,6 +19,11 @@ import type { WakeCounters, WakeDrift, WakeEvent } from './wakeTypes'
  */
 export async function marchCoaxialRings(input: CoaxialWakeInput, options: CoaxialOptions): Promise<CoaxialWake> {
   checkCoaxialInput(input)
+  return await marchUnchecked(input, options)
+}
+
+/** As `marchCoaxialRings`, for rings a march has brought where its door would refuse them: cores grow, and rings shrink as they pass. */
+export async function marchUnchecked(input: CoaxialWakeInput, options: CoaxialOptions): Promise<CoaxialWake> {
   return await new CoaxialMarch(input, options).run()
 }
 
@@ -116,7 +121,7 @@ class CoaxialMarch {
       this.writer.write(time, this.active, state, slope)
     }
     for (const outcome of watch.atStart(start.time, start.state)) this.take(outcome, start.time)
-    if (outputAtStart) write(start.time, start.state)
+    if (outputAtStart || this.stopSentence !== null) write(start.time, start.state)
     if (this.stopSentence !== null)
       return { status: 'done', message: this.stopped(start.time), time: start.time, state: start.state }
 

@@ -3,7 +3,7 @@
  */
 import type { RunStatus } from '../base'
 
-export type WakeEventKind = 'pass' | 'arrival' | 'cores-touch' | 'near-wall' | 'end'
+export type WakeEventKind = 'pass' | 'arrival' | 'cores-touch' | 'near-wall' | 'pinch-off' | 'merge' | 'end'
 
 export interface WakeEvent {
   readonly time: number
@@ -24,7 +24,7 @@ export interface WakeCounters {
 }
 
 /**
- * Largest relative departure of the sums from their value at the start, or at the last appearance of a ring. null where the
+ * Largest relative departure of the sums from their value at the start, or at the last appearance or merger of rings. null where the
  * quantity is not conserved: with viscosity, walls or a stream.
  */
 export interface WakeDrift {

@@ -45,6 +45,8 @@ export interface WakeInput {
   /** Read by the coaxial engine; rings in space always follow the regularised kernel. */
   readonly law: CoaxialLaw
   readonly rings: readonly WakeRing[]
+  /** True: rings of one sense on one axis whose cores touch merge, and the run goes on. Rings in space never do. Default false. */
+  readonly merging?: boolean
   /** nu [m2/s] */
   readonly kinematicViscosity: number
   readonly viscous: boolean

@@ -2,7 +2,7 @@
  * Rings in motion: one door for both engines.
  */
 import { at, DomainError } from '../base'
-import { marchCoaxialRings, THIN_CORE_LIMIT, type CoaxialTrajectory } from '../coaxial'
+import { marchCoaxialRings, marchMergingRings, THIN_CORE_LIMIT, type CoaxialTrajectory } from '../coaxial'
 import { checkWakeInput } from './checkWake'
 import { marchFilaments } from './marchFilaments'
 import { sharedAxis, type Axis } from './sharedAxis'
@@ -45,7 +45,7 @@ export async function marchWake(input: WakeInput, options: WakeOptions): Promise
 
 /** Until when the run holds: not at all from where a ring appears with a core the law is only a stand-in for. */
 function validity(
-  { rings }: WakeInput,
+  { rings, law }: WakeInput,
   wake: Pick<Wake, 'validUntil' | 'reason'>,
 ): Pick<Wake, 'validUntil' | 'reason'> {
   const starts = rings.flatMap((ring, i) =>
@@ -55,15 +55,17 @@ function validity(
   if (first === null || first.time >= wake.validUntil) return { validUntil: wake.validUntil, reason: wake.reason }
   return {
     validUntil: first.time,
-    reason: `ring ${first.number} appears with a core above ${THIN_CORE_LIMIT} of its radius, where the thin-core law is a stand-in`,
+    reason: `ring ${first.number} appears with a core above ${THIN_CORE_LIMIT} of its radius, where the ${LAW_WORDS[law]} law is a stand-in`,
   }
 }
 
-function thickNotes({ rings }: WakeInput): string[] {
+const LAW_WORDS = { thin: 'thin-core', regularised: 'regularised' } as const
+
+function thickNotes({ rings, law }: WakeInput): string[] {
   const thick = rings.flatMap((ring, i) => (ring.coreRadius > THIN_CORE_LIMIT * ring.radius ? [i + 1] : []))
   if (thick.length === 0) return []
   return [
-    `The core of ring${thick.length > 1 ? 's' : ''} ${thick.join(', ')} is above ${THIN_CORE_LIMIT} of its radius, where the thin-core law is a stand-in.`,
+    `The core of ring${thick.length > 1 ? 's' : ''} ${thick.join(', ')} is above ${THIN_CORE_LIMIT} of its radius, where the ${LAW_WORDS[law]} law is a stand-in.`,
   ]
 }
 
@@ -73,7 +75,8 @@ async function marchOnAxis(input: WakeInput, axis: Axis, options: WakeOptions): 
   /** +1 for a ring that points along the axis, -1 against it. */
   const senses = input.rings.map((ring) => Math.sign(dot(ring.direction, direction)))
   const stations = alongX === 0 ? [] : input.stations.map((station) => (station - origin[0]) / alongX)
-  const result = await marchCoaxialRings(
+  const march = input.merging === true ? marchMergingRings : marchCoaxialRings
+  const result = await march(
     {
       ...input,
       rings: input.rings.map((ring, i) => ({

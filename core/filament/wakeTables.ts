@@ -2,7 +2,7 @@
  * A wake as the rows of trajectory.csv and events.csv and as the wake section of the summary.
  */
 import { at } from '../base'
-import type { WakeDrift } from '../coaxial'
+import type { WakeDrift, WakeEvent } from '../coaxial'
 import type { Wake } from './types'
 
 export const TRAJECTORY_COLUMNS = [
@@ -36,9 +36,9 @@ export function* trajectoryRows(wake: Wake): Generator<readonly number[]> {
 
 export const EVENT_COLUMNS = ['time (s)', 'event', 'rings', 'x (m)', 'detail'] as const
 
-/** Rows of events.csv; `end` is last. */
-export function eventRows(wake: Wake): (readonly (number | string | null)[])[] {
-  return wake.events.map(({ time, event, rings, x, detail }) => [time, event, rings.join(' '), x, detail])
+/** Rows of events.csv. */
+export function eventRows(events: readonly WakeEvent[]): (readonly (number | string | null)[])[] {
+  return events.map(({ time, event, rings, x, detail }) => [time, event, rings.join(' '), x, detail])
 }
 
 /** The wake section of summary.json. */

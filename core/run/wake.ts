@@ -3,13 +3,14 @@
  * ring Reynolds number does not say which.
  */
 import { DomainError, type RunOptions } from '../base'
-import { trainRings, type WakeAgeing } from '../coaxial'
+import { trainRings, type JetRun, type WakeAgeing } from '../coaxial'
 import { marchWake, ringsOfNozzles, type Wake, type WakeInput, type WakeRing } from '../filament'
 import { loadKernel, type Kernel } from '../kernel'
 import type { Plan, WakeSection } from '../plan'
 import type { PulseResult } from '../pulse'
 import { ageingRegime } from '../ring'
 import type { WaterProperties } from '../water'
+import { jetRings, withPinchOffs, type WakeJet } from './wakeJet'
 
 /** One ring at one station, with the range between the ageing laws where both were run. */
 export interface WakeArrival {
@@ -30,6 +31,8 @@ export interface WakeData {
   readonly arrivals: readonly WakeArrival[]
   /** Where the rings come from, and what that left out. */
   readonly notes: readonly string[]
+  /** How the rings came about, where they start from the computed jet; null else. */
+  readonly jet: WakeJet | null
 }
 
 export interface WakeRunOptions extends RunOptions {
@@ -43,6 +46,7 @@ export interface WakeRunOptions extends RunOptions {
  * March the wake of a plan.
  *
  * @param pulse the pulse of the plan; read where the wake has no rings of its own
+ * @param formed the finished jet its rings start from (`wakeJetRun`); null: the matched ring of the pulse, or the wake's own rings
  * @throws {DomainError} with the plan path that breaks a limit
  */
 export async function wakeOf(
@@ -51,24 +55,28 @@ export async function wakeOf(
   water: WaterProperties,
   pulse: PulseResult | null,
   options: WakeRunOptions,
+  formed: JetRun | null = null,
 ): Promise<WakeData> {
-  const { rings, notes } = ringsOfPlan(plan, section, water, pulse)
-  const laws = ageingLaws(section, rings, water.kinematicViscosity)
   const kernel = options.kernel ?? (await loadKernel())
-  const march = (ageing: WakeAgeing, from: number, share: number): Promise<Wake> =>
-    marchWake(inputOf(plan, section, water, rings, ageing), {
+  const { rings, notes, jet } = ringsOfPlan(plan, section, water, pulse, formed, kernel)
+  const laws = ageingLaws(section, rings, water.kinematicViscosity)
+  const march = async (ageing: WakeAgeing, from: number, share: number): Promise<Wake> => {
+    const input = inputOf(plan, section, water, rings, ageing)
+    const wake = await marchWake(jet === null ? input : { ...input, law: 'regularised', merging: true }, {
       kernel,
       ...(options.pause === undefined ? {} : { pause: options.pause }),
       ...(options.signal === undefined ? {} : { signal: options.signal }),
       onProgress: ({ share: done, what }) => options.onProgress?.({ share: from + share * done, what }),
     })
+    return jet === null ? wake : withPinchOffs(wake, jet)
+  }
   const [ageing] = laws
   const both = laws.length === 2
   const wake = await march(ageing, 0, both ? 0.5 : 1)
   // Rings in space know no turbulent law, so a second run would only repeat the first.
   const second = both && wake.model === 'coaxial' && wake.status === 'done'
   const turbulent = second ? await march('turbulent', 0.5, 0.5) : null
-  return { rings, wake, ageing, turbulent, arrivals: arrivalsOf(wake, turbulent), notes }
+  return { rings, wake, ageing, turbulent, arrivals: arrivalsOf(wake, turbulent), notes, jet }
 }
 
 function ringsOfPlan(
@@ -76,8 +84,14 @@ function ringsOfPlan(
   section: WakeSection,
   water: WaterProperties,
   pulse: PulseResult | null,
-): { readonly rings: readonly WakeRing[]; readonly notes: readonly string[] } {
-  if (section.rings.length > 0) return { rings: section.rings, notes: [] }
+  formed: JetRun | null,
+  kernel: Kernel,
+): { readonly rings: readonly WakeRing[]; readonly notes: readonly string[]; readonly jet: WakeJet | null } {
+  if (section.rings.length > 0) return { rings: section.rings, notes: [], jet: null }
+  if (formed !== null && pulse !== null) {
+    const made = jetRings(plan, water, pulse, formed, kernel)
+    return { ...made, rings: ringsOfNozzles(made.rings, []) }
+  }
   const ring = pulse?.ring ?? null
   if (pulse === null || ring === null)
     throw new DomainError('wake.rings', 'wake.rings must be given where the pulse makes no ring to follow, got none')
@@ -86,7 +100,7 @@ function ringsOfPlan(
   const notes: string[] = []
   if (pulse.pinchedOff === true)
     notes.push('The trailing jet behind each ring is left out: only the rings are followed.')
-  return { rings: ringsOfNozzles(made.rings, section.nozzles, plan.nozzle.axisRatio), notes }
+  return { rings: ringsOfNozzles(made.rings, section.nozzles, plan.nozzle.axisRatio), notes, jet: null }
 }
 
 function inputOf(

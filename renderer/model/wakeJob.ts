@@ -7,7 +7,7 @@
  */
 import { computed, shallowRef, type ComputedRef, type ShallowRef } from 'vue'
 import type { Progress } from '../../core/base'
-import type { Plan } from '../../core/plan'
+import { startsFromJet, type Plan } from '../../core/plan'
 import type { RunData, WakeData } from '../../core/run'
 import type { Job, JobOutcome, WorkerClient } from '../worker/client'
 import type { ResultFailure } from './results'
@@ -54,6 +54,7 @@ export function sameWake(a: Plan, b: Plan): boolean {
   if (a === b) return true
   if (a.wake !== b.wake || a.water !== b.water || a.ambient !== b.ambient) return false
   if (a.wake !== null && a.wake.rings.length > 0) return true
+  if (startsFromJet(a.wake) && a.jet !== b.jet) return false
   return a.nozzle === b.nozzle && a.programme === b.programme && a.models === b.models && a.train === b.train
 }
 

@@ -23,6 +23,8 @@ const EVENT_WORDS: Readonly<Record<WakeEvent['event'], string>> = {
   arrival: 'arrives',
   'cores-touch': 'cores touch',
   'near-wall': 'near the wall',
+  'pinch-off': 'pinches off',
+  merge: 'merge',
   end: 'end',
 }
 
@@ -171,6 +173,9 @@ export function runFacts(data: WakeData, viscous: boolean, units: Units): readon
     { label: 'Engine', text: engineInWords(wake) },
     { label: 'Ageing', text: ageingInWords(viscous, turbulent === null ? null : wake, ageing) },
     { label: 'Passes', text: String(wake.events.filter(({ event }) => event === 'pass').length) },
+    ...(data.jet === null
+      ? []
+      : [{ label: 'Mergers', text: String(wake.events.filter(({ event }) => event === 'merge').length) }]),
     { label: 'Drift', text: driftInWords(wake) },
     {
       label: 'Holds until',

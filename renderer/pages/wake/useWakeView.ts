@@ -44,7 +44,10 @@ export function provideWakeView(): WakeView {
     (next, before) => {
       // A train's first ring appears after its stroke: begin where there is one to see.
       if (next === null || (before ?? null) !== null) return
-      playback.seekTime(Math.min(...next.trajectories.map(({ time }) => time[0] ?? Infinity), next.time))
+      const jet = finished.value?.wake.jet ?? null
+      const first = Math.min(...next.trajectories.map(({ time }) => time[0] ?? Infinity), next.time)
+      // The sheet of a jet is to be seen while it forms.
+      playback.seekTime(jet === null ? first : Math.min(next.time, jet.release.time / 2))
     },
     { immediate: true },
   )

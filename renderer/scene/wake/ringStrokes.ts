@@ -112,7 +112,7 @@ function arcs(shape: RingShape, basis: Basis, perPixel: number): WakeStroke[] {
   }
   // Seen along its axis a ring shows no section, and an arc about it would be a line across the tube.
   if (most - least < 2 * SECTION) return []
-  const radius = Math.max(shape.coreRadius + ARC_GAP * perPixel, ARC_LEAST * perPixel)
+  const radius = Math.max(Math.min(shape.coreRadius, shape.radius) + ARC_GAP * perPixel, ARC_LEAST * perPixel)
   const sense = Math.sign(shape.circulation)
   return [near, far].map((i) => {
     const t = tangent(i)

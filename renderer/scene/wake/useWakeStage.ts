@@ -4,6 +4,7 @@
 import { watch, type Ref, type ShallowRef } from 'vue'
 import { wakeFrame, type RingShape } from '../../../core/filament'
 import type { DrawingColours, WakeSceneModel } from '../../../core/report'
+import type { WakeJet } from '../../../core/run'
 import { useStage, type StageLife } from '../useStage'
 import type { Angles, Margins, Size, View } from '../view'
 import { centredOn, fittedRing, fittedWake } from './wakeView'
@@ -17,6 +18,7 @@ export interface WakeStageOptions {
   readonly shapes: ShallowRef<readonly RingShape[]>
   readonly props: {
     readonly model: WakeSceneModel
+    readonly jet?: WakeJet | null | undefined
     readonly index: number
     readonly selected: number | null
     readonly follow: boolean
@@ -45,6 +47,7 @@ export function useWakeStage({ canvas, frame, colours, shapes, props }: WakeStag
     create: createWakeStage,
     begin(stage) {
       stage.setModel(props.model)
+      stage.setJet(props.jet ?? null)
       stage.setShown({ ...props.shown })
       stage.setFrame(props.index, shapes.value)
       stage.select(props.selected)
@@ -100,6 +103,7 @@ export function useWakeStage({ canvas, frame, colours, shapes, props }: WakeStag
       shapes.value = ringsNow()
       const stage = life.stage()
       stage?.setModel(model)
+      stage?.setJet(props.jet ?? null)
       stage?.setFrame(props.index, shapes.value)
       if (life.fits()) life.fit()
       else life.moved()

@@ -16,12 +16,14 @@ import {
 } from 'three'
 import type { RingShape } from '../../../core/filament'
 import type { WakeSceneModel, WakeSceneWall } from '../../../core/report'
+import type { WakeJet } from '../../../core/run'
 import { createDrawing, mattFactor, paint } from '../drawing'
 import { fillNozzle } from '../meshes'
 import { createRibbons } from '../ribbons'
 import type { Stage } from '../useStage'
 import { basisOf, type View } from '../view'
 import { createFieldPlane } from './fieldPlane'
+import { createJetSheet } from './jetSheet'
 import { ringStrokes, trailsOf, trailStrokes, type Trail } from './ringStrokes'
 import { surroundingStrokes } from './surroundingStrokes'
 import { createTubes, sidesFor } from './tubes'
@@ -37,6 +39,8 @@ export interface WakeShown {
 
 export interface WakeDrawing extends Stage {
   setModel(model: WakeSceneModel): void
+  /** Jets whose sheets are drawn until they let go of their rings; null: none. After the model, before the frame. */
+  setJet(jet: WakeJet | null): void
   /** Number of the output time, from 0, and the rings as they stand then. */
   setFrame(index: number, shapes: readonly RingShape[]): void
   setShown(shown: WakeShown): void
@@ -51,6 +55,9 @@ const REST_BUDGET = 120_000
 /** Thinnest tube drawn, as a radius in pixels. */
 export const THINNEST = 1.2
 const DYE_SIZE = 2
+/** How far the sheet's colour is moved from that of rings to the ground: its edges are drawn in ink on it. */
+const SHEET_PALENESS = 0.3
+const SHEET_TINT = new Color()
 
 /** @throws {Error} when the machine gives no WebGL 2 context. */
 export function createWakeStage(canvas: HTMLCanvasElement, antialias: boolean): WakeDrawing {
@@ -74,13 +81,18 @@ export function createWakeStage(canvas: HTMLCanvasElement, antialias: boolean): 
     transparent: true,
   })
   const dyeMaterial = new PointsMaterial({ size: DYE_SIZE, sizeAttenuation: false })
+  const sheetMaterial = new MeshLambertMaterial({ side: DoubleSide })
+  const looseMaterial = new PointsMaterial({ size: DYE_SIZE, sizeAttenuation: false })
   const tubes = createTubes()
+  const sheet = createJetSheet()
   const [still, moving, over] = [createRibbons(), createRibbons(), createRibbons()]
   const plane = createFieldPlane()
   const nozzleGeometry = new BufferGeometry()
   const wallMesh = new Mesh(new BufferGeometry(), wallMaterial)
   const dye = new Points(new BufferGeometry(), dyeMaterial)
   const overMesh = new Mesh(over.geometry, overMaterial)
+  const sheetMesh = new Mesh(sheet.surface, sheetMaterial)
+  const loose = new Points(sheet.loose, looseMaterial)
   const nozzles = new Group()
   wallMesh.renderOrder = 1
   plane.mesh.renderOrder = 2
@@ -91,6 +103,8 @@ export function createWakeStage(canvas: HTMLCanvasElement, antialias: boolean): 
     new Mesh(moving.geometry, movingMaterial),
     wallMesh,
     dye,
+    sheetMesh,
+    loose,
     plane.mesh,
     overMesh,
   ]
@@ -107,6 +121,8 @@ export function createWakeStage(canvas: HTMLCanvasElement, antialias: boolean): 
     lineMaterial,
     overMaterial,
     dyeMaterial,
+    sheetMaterial,
+    looseMaterial,
     plane,
     nozzleGeometry,
   )
@@ -128,6 +144,8 @@ export function createWakeStage(canvas: HTMLCanvasElement, antialias: boolean): 
 
   function follow(): void {
     if (model === null) return
+    sheetMesh.visible = sheet.show(timeAt(model, index))
+    loose.visible = sheetMesh.visible
     if (dye.visible) showDye(dye, model, index)
     if (plane.mesh.visible) plane.show(index)
   }
@@ -159,6 +177,10 @@ export function createWakeStage(canvas: HTMLCanvasElement, antialias: boolean): 
       if (next.wall !== null) fillWall(wallMesh.geometry, next.wall)
       show()
     },
+    setJet(jet) {
+      sheet.setJet(jet)
+      follow()
+    },
     setFrame(next, rings) {
       index = next
       shapes = rings
@@ -185,6 +207,9 @@ export function createWakeStage(canvas: HTMLCanvasElement, antialias: boolean): 
       paint(nozzleMaterial.color, next.nozzle)
       paint(wallMaterial.color, next.edge)
       paint(dyeMaterial.color, next.muted)
+      paint(looseMaterial.color, next.ink)
+      paint(sheetMaterial.color, next.accent)
+      sheetMaterial.color.lerp(SHEET_TINT.set(next.ground), SHEET_PALENESS).multiplyScalar(mattFactor(next))
       drawing.setGround(next.ground)
       stillFor = null
     },
@@ -194,9 +219,10 @@ export function createWakeStage(canvas: HTMLCanvasElement, antialias: boolean): 
       const basis = basisOf(view)
       const perPixel = 1 / view.scale
       const nodes = shapes.reduce((sum, shape) => sum + shape.nodes.length / 3, 0)
-      const rings = shapes.map(({ nodes: curve, coreRadius, number }) => ({
+      const rings = shapes.map(({ nodes: curve, radius, coreRadius, number }) => ({
         nodes: curve,
-        coreRadius,
+        // A core thicker than its ring has no tube: it is drawn up to the axis.
+        coreRadius: Math.min(coreRadius, radius),
         paint: (model?.rings[number - 1]?.sense ?? 1) > 0 ? paints.accent : paints.counter,
       }))
       tubes.draw(rings, {
@@ -211,6 +237,7 @@ export function createWakeStage(canvas: HTMLCanvasElement, antialias: boolean): 
       const strokes = [
         ...(shown.trails ? trailStrokes(trails, shapes, timeAt(model, index)) : []),
         ...ringStrokes(model, shapes, selected, basis, perPixel),
+        ...sheet.strokes(),
       ]
       moving.draw(
         strokes.filter((stroke) => !stroke.over),

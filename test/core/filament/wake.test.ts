@@ -190,7 +190,7 @@ describe('what is written of a wake', () => {
       expect(row.length).toBe(TRAJECTORY_COLUMNS.length)
       expect(row.every(Number.isFinite)).toBe(true)
     })
-    const events = eventRows(wake)
+    const events = eventRows(wake.events)
     expect(events.at(-1)?.slice(0, 4)).toEqual([0.5, 'end', '', null])
     expect(events[0]?.length).toBe(EVENT_COLUMNS.length)
   })
