@@ -26,11 +26,12 @@ import type { StrokeMoments } from './shapeMoments'
 export type ComputedStart = Invariants
 export const NO_START: ComputedStart = { circulation: 0, impulse: 0, energy: 0 }
 
-/** Stroke ratios and streams at which the formation number is computed; between them it is straight. */
+/** Stroke ratios at which the formation number is computed; between them its logarithm is straight. */
 const STROKE_NODES = 25
 const SHORTEST = 0.25
 const LONGEST = 64
-const STREAM_NODES = 11
+/** Streams likewise: between a stream of 0 and the strongest the logarithm is a cubic, which four places give exactly. */
+const STREAM_NODES = 4
 /** Stream over peak speed beyond which the modifier is held. */
 const STRONGEST_STREAM = 0.5
 /** Energies above Hill's at which the core is tabulated, evenly in their square root; thicker and thinner cores are matched. */
@@ -64,21 +65,16 @@ export class DesignRings {
     const x = ((STROKE_NODES - 1) * Math.log(held / SHORTEST)) / Math.log(LONGEST / SHORTEST)
     const y = ((STREAM_NODES - 1) * Math.min(streamRatio, STRONGEST_STREAM)) / STRONGEST_STREAM
     const i = Math.min(STROKE_NODES - 2, Math.floor(x))
-    const j = Math.min(STREAM_NODES - 2, Math.floor(y))
-    const [u, v] = [x - i, y - j]
-    let sum = 0
-    for (const [k, l, weight] of [
-      [i, j, (1 - u) * (1 - v)],
-      [i + 1, j, u * (1 - v)],
-      [i, j + 1, (1 - u) * v],
-      [i + 1, j + 1, u * v],
-    ] as const) {
+    let logarithm = 0
+    for (let j = 0; j < STREAM_NODES; j++) {
+      const weight = lagrange(j, y)
       if (weight === 0) continue
-      const value = this.node(k, l)
-      if (value === null) return null
-      sum += weight * value
+      const below = this.node(i, j)
+      const above = this.node(i + 1, j)
+      if (below === null || above === null) return null
+      logarithm += weight * (Math.log(below) * (1 - (x - i)) + Math.log(above) * (x - i))
     }
-    return sum
+    return Math.exp(logarithm)
   }
 
   /**
@@ -171,6 +167,13 @@ export function scaledStart(start: ComputedStart, density: number, diameter: num
     impulse: start.impulse * cube,
     energy: start.energy * cube * peakSpeed,
   }
+}
+
+/** Weight of node j of 0, 1, 2, 3 in the cubic through all four, at y. */
+function lagrange(j: number, y: number): number {
+  let weight = 1
+  for (let k = 0; k < STREAM_NODES; k++) if (k !== j) weight *= (y - k) / (j - k)
+  return weight
 }
 
 function sum(a: Invariants, b: Invariants): Invariants {

@@ -3,6 +3,8 @@
  *
  * analyseThruster     everything about one thruster and its vehicle
  * vehicleBudget       every mean figure of a design, in about a microsecond
+ * sizeThruster        search for designs: candidates and the front of power against size
+ * compileDesigns      many designs priced at their duty points; designMap over two of their fields
  * shapeMoments        what one stroke of a closed shape asks for
  */
 export {
@@ -16,6 +18,36 @@ export {
 export { MOST_THRUSTERS } from './checkThruster'
 export type { Cavitation } from './cavitation'
 export type { Cruise, CruiseSpeed } from './cruise'
+export { describeDesign, type Binding, type Candidate, type CandidatePoint, type RangeEnd } from './candidates'
+export { compileDesigns, type CompiledDesigns, type DesignOptions } from './design'
+export { thrusterInputOf } from './designInput'
+export { slackOf, type LimitScales } from './designLimits'
+export { scaledProgramme } from './designStroke'
+export type {
+  Design,
+  DesignField,
+  DesignFigures,
+  DesignProblem,
+  DutyDemand,
+  HeldPoint,
+  PointFigures,
+} from './designTypes'
+export { designMap, type DesignMap, type MapAxis } from './map'
+export {
+  sizeThruster,
+  sweptVolume,
+  type FrontDesign,
+  type LeastViolated,
+  type SizingOptions,
+  type SizingResult,
+} from './searchThruster'
+export {
+  SENSITIVITY_FIELDS,
+  SPREAD_WIDTH,
+  type Sensitivity,
+  type SensitivityField,
+  type ThrustSpread,
+} from './sensitivity'
 export { CYCLE_TIMES, type Cycle, type CycleHistory } from './cycle'
 export { compileDrag, FRICTION_HELD_BELOW, FRICTION_LINE_FROM, ittcFriction, type DragLaw } from './drag'
 export { above, atLeast, atMost, mechanicalLimits } from './limits'

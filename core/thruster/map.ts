@@ -6,6 +6,7 @@ import { limitScales } from './candidates'
 import type { CompiledDesigns } from './design'
 import { BINDING_SLACK, MET_BY_CONSTRUCTION, slackOf } from './designLimits'
 import type { Design, DesignField, DesignFigures } from './designTypes'
+import { MapRooms } from './mapRooms'
 import type { LimitName, Span } from './types'
 
 /** One axis of a map. */
@@ -25,6 +26,14 @@ export interface DesignMap {
   readonly power: Float64Array
   /** At the first duty point [N]. */
   readonly thrust: Float64Array
+  /** Pulses a second, and the vehicle's speed, at the first duty point [1/s], [m/s]. */
+  readonly frequency: Float64Array
+  readonly speed: Float64Array
+  /** At the first duty point; NaN where there is none. */
+  readonly froudeEfficiency: Float64Array
+  readonly overallEfficiency: Float64Array
+  /** Room to each limit that is asked, over the limit: negative where it is broken at any duty point. */
+  readonly rooms: ReadonlyMap<LimitName, Float64Array>
   /** 1 where every limit holds. */
   readonly feasible: Uint8Array
   /** The limit broken most, or the one that has less than one per cent of room; null: none. */
@@ -52,6 +61,11 @@ export function designMap(
   const cells = x.length * y.length
   const power = new Float64Array(cells)
   const thrust = new Float64Array(cells)
+  const frequency = new Float64Array(cells)
+  const speed = new Float64Array(cells)
+  const froudeEfficiency = new Float64Array(cells)
+  const overallEfficiency = new Float64Array(cells)
+  const rooms = new MapRooms(designs, cells, around.frequency === null)
   const feasible = new Uint8Array(cells)
   const limit: (LimitName | null)[] = []
   for (let j = 0; j < y.length; j++) {
@@ -60,11 +74,31 @@ export function designMap(
       const cell = j * x.length + i
       power[cell] = figures.power
       thrust[cell] = figures.thrust
+      const [first] = figures.points
+      frequency[cell] = first?.held.frequency ?? NaN
+      speed[cell] = first?.speed ?? NaN
+      froudeEfficiency[cell] = first?.budget.froudeEfficiency ?? NaN
+      overallEfficiency[cell] = first?.budget.overallEfficiency ?? NaN
+      rooms.add(cell, figures)
       feasible[cell] = figures.violation === 0 ? 1 : 0
       limit.push(limitInTheWay(designs, figures))
     }
   }
-  return { xField: xAxis.field, yField: yAxis.field, x, y, power, thrust, feasible, limit }
+  return {
+    xField: xAxis.field,
+    yField: yAxis.field,
+    x,
+    y,
+    power,
+    thrust,
+    frequency,
+    speed,
+    froudeEfficiency,
+    overallEfficiency,
+    rooms: rooms.rooms,
+    feasible,
+    limit,
+  }
 }
 
 /** The limit with the least room, where it is broken or has less than one per cent left. */

@@ -65,6 +65,15 @@ export async function searchLeast(problem: SearchProblem, options: SearchOptions
   let generations = 0
   let paused = 0
   let cancelled = false
+  /** Lets messages in now and then; false once cancelled. */
+  const goOn = async (spent: number): Promise<boolean> => {
+    if (cancelled || spent - paused < BETWEEN_PAUSES) return !cancelled
+    paused = spent
+    onProgress?.(Math.min(1, spent / budget))
+    await pause?.()
+    cancelled = signal?.aborted === true
+    return !cancelled
+  }
   for (let run = 0; run <= restarts && !cancelled; run++) {
     const most = (budget * (run + 1)) / (restarts + 1)
     const population = new Evolution(variables.length, score, random, starts)
@@ -72,18 +81,12 @@ export async function searchLeast(problem: SearchProblem, options: SearchOptions
     while (!population.settled && before + population.evaluations < most) {
       population.advance()
       generations++
-      evaluations = before + population.evaluations
-      if (evaluations - paused < BETWEEN_PAUSES) continue
-      paused = evaluations
-      onProgress?.(Math.min(1, evaluations / budget))
-      await pause?.()
-      cancelled = signal?.aborted === true
-      if (cancelled) break
+      if (!(await goOn(before + population.evaluations))) break
     }
     evaluations = before + population.evaluations
     if (isBetter(population.best, best)) best = population.best
     if (cancelled) break
-    const near = polish(variables, score, population.best)
+    const near = await polish(variables, score, population.best, (spent) => goOn(evaluations + spent))
     evaluations += near.evaluations
     if (isBetter(near.best, best)) best = near.best
   }

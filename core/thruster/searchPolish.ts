@@ -26,19 +26,31 @@ export interface Polish {
  * Best trial near one.
  *
  * @param score worth of a point of the unit cube; it must not keep the array
+ * @param goOn awaited every few hundred evaluations with their number so far; false ends the polish with what it has
  */
-export function polish(variables: readonly Variable[], score: (point: Float64Array) => Trial, start: Trial): Polish {
+export async function polish(
+  variables: readonly Variable[],
+  score: (point: Float64Array) => Trial,
+  start: Trial,
+  goOn: (evaluations: number) => Promise<boolean>,
+): Promise<Polish> {
   let evaluations = 0
+  let ended = false
   const counted = (point: Float64Array) => {
     evaluations++
     return score(point)
   }
-  let best = slide(variables, counted, start)
+  const going = async (): Promise<boolean> => {
+    ended ||= !(await goOn(evaluations))
+    return !ended
+  }
+  let best = await slide(variables, counted, start, going)
   // One step in a choice, then everything continuous again; as long as a step is better.
   for (let moved = true; moved;) {
     moved = false
     for (const neighbour of neighbours(variables, best.point)) {
-      const trial = slide(variables, counted, counted(neighbour))
+      if (ended) return { best, evaluations }
+      const trial = await slide(variables, counted, counted(neighbour), going)
       if (isBetter(trial, best)) {
         best = trial
         moved = true
@@ -67,13 +79,21 @@ function neighbours(variables: readonly Variable[], point: Float64Array): Float6
 }
 
 /** The continuous variables only, at fixed choices. */
-function slide(variables: readonly Variable[], score: (point: Float64Array) => Trial, start: Trial): Trial {
+async function slide(
+  variables: readonly Variable[],
+  score: (point: Float64Array) => Trial,
+  start: Trial,
+  goOn: () => Promise<boolean>,
+): Promise<Trial> {
   const free = variables.flatMap((variable, i) => (choices(variable) === 0 ? [i] : []))
   if (free.length === 0) return start
   let best = start
   for (let round = 0; round < ROUNDS; round++) {
     const before = best
-    for (const size of SIZES) best = simplex(free, score, best, size)
+    for (const size of SIZES) {
+      best = simplex(free, score, best, size)
+      if (!(await goOn())) return best
+    }
     const gain = before.violation > best.violation ? 1 : before.value - best.value
     if (!(gain > GAIN * Math.abs(before.value))) break
   }

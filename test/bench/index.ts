@@ -4,6 +4,7 @@ import { coreFigures } from './core'
 import { jetFigures } from './jet'
 import { kernelBench } from './kernel'
 import type { Figure } from './measure'
+import { thrusterFigures } from './thruster'
 import { wakePlaybackFigures } from './wakePlayback'
 
 /** Groups by name, so that one can be asked for alone: `npm run bench -- core`. */
@@ -11,6 +12,7 @@ export const GROUPS: Readonly<Record<string, () => Promise<readonly Figure[]>>> 
   core: async () => coreFigures(),
   kernel: kernelBench,
   jet: jetFigures,
+  thruster: thrusterFigures,
   playback: wakePlaybackFigures,
   commands: commandFigures,
 }

@@ -9,7 +9,7 @@ import { expectClose } from '../../support/close'
 
 const log = (low: number, high: number): Variable => ({ kind: 'real', low, high, scale: 'log' })
 
-/** Least 1/(count x) under x y >= 1; size count x y. On the front y = 1/x... so the size is `count` alone where y is free. */
+/** Least y^2 / x under x y >= 1. */
 const pipe: SearchProblem = {
   variables: [log(0.1, 10), log(0.1, 10)],
   score: (v) => ({ value: at(v, 1) ** 2 / at(v, 0), violation: excess(1, at(v, 0) * at(v, 1)) }),

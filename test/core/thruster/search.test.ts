@@ -115,7 +115,12 @@ describe('searchLeast', () => {
       // The aim of the search; below the best known only by the digits it was printed with.
       expectClose(found.best.value, best, 1e-4, `seed ${seed}`)
       expect(found.best.value).toBeGreaterThan(best - 1e-8 * Math.abs(best))
-      expectClose(problem.score(found.values, found.best.point).value, found.best.value, 1e-12, 'value of the values told')
+      expectClose(
+        problem.score(found.values, found.best.point).value,
+        found.best.value,
+        1e-12,
+        'value of the values told',
+      )
     }
   })
 
