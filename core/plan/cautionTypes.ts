@@ -1,8 +1,11 @@
 import type { Wake } from '../filament'
 import type { PulseResult } from '../pulse'
+import type { TankRunResult } from '../tank'
+import type { SizingResult, ThrusterResult } from '../thruster'
 import type { WaterProperties } from '../water'
 import type { JetOutcome } from './jetTables'
 import type { Plan } from './types'
+import type { SpreadOutcome } from './variedTypes'
 
 /** What a caution's trigger may look at. */
 export interface CautionContext {
@@ -16,6 +19,11 @@ export interface CautionContext {
   readonly wake: Wake | null
   /** What had to be said about where the rings of the wake come from. */
   readonly wakeNotes: readonly string[]
+  readonly thruster: ThrusterResult | null
+  /** The sizing of the thruster; null where none was made. */
+  readonly sizing: SizingResult | null
+  readonly tankRun: TankRunResult | null
+  readonly spread: SpreadOutcome | null
 }
 
 /** Where a caution belongs: beside a result, a moving machine, a laboratory run, or a vehicle and its bench. */

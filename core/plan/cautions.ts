@@ -5,6 +5,10 @@ import type { CautionContext, CautionDefinition, CautionGroup } from './cautionT
 import { HAZARD_CAUTIONS } from './hazardCautions'
 import { JET_CAUTIONS } from './jetCautions'
 import { MODEL_CAUTIONS } from './modelCautions'
+import { SIZING_CAUTIONS } from './sizingCautions'
+import { SPREAD_CAUTIONS } from './spreadCautions'
+import { TANK_CAUTIONS } from './tankCautions'
+import { THRUSTER_CAUTIONS } from './thrusterCautions'
 import { WAKE_CAUTIONS } from './wakeCautions'
 import type { Caution } from './types'
 
@@ -12,6 +16,10 @@ export const CAUTIONS: readonly CautionDefinition[] = [
   ...MODEL_CAUTIONS,
   ...JET_CAUTIONS,
   ...WAKE_CAUTIONS,
+  ...THRUSTER_CAUTIONS,
+  ...SIZING_CAUTIONS,
+  ...TANK_CAUTIONS,
+  ...SPREAD_CAUTIONS,
   ...HAZARD_CAUTIONS,
 ]
 

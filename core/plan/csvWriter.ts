@@ -22,7 +22,12 @@ function cell(value: Cell): string {
  * @param rows cells in the order of the header; a number that is not finite becomes an empty cell
  */
 export function writeCsv(header: readonly string[], rows: Iterable<readonly Cell[]>): string {
-  const lines = [header.map(cell).join(',')]
-  for (const row of rows) lines.push(row.map(cell).join(','))
-  return `${lines.join('\r\n')}\r\n`
+  const lines = [csvLine(header)]
+  for (const row of rows) lines.push(csvLine(row))
+  return lines.join('')
+}
+
+/** One row as its line with the end of line, for tables that are written row by row. */
+export function csvLine(row: readonly Cell[]): string {
+  return `${row.map(cell).join(',')}\r\n`
 }

@@ -17,6 +17,7 @@ import {
 } from './decodeFields'
 import { decodeJet } from './decodeJet'
 import { decodeHeld, decodeSpread, decodeSweep } from './decodeSweep'
+import { decodeReadings } from './decodeReadings'
 import { decodeTankRun } from './decodeTankRun'
 import { decodeThruster } from './decodeThruster'
 import { decodeTrain, decodeWake } from './decodeWake'
@@ -109,7 +110,9 @@ function nesting(value: unknown): number {
   for (let item = stack.pop(); item !== undefined && deepest <= DEEPEST_NESTING; item = stack.pop()) {
     if (typeof item.value !== 'object' || item.value === null) continue
     deepest = Math.max(deepest, item.depth)
-    for (const child of Object.values(item.value)) stack.push({ value: child, depth: item.depth + 1 })
+    // Plain values nest no deeper; a long log of them would only fill the stack.
+    for (const child of Object.values(item.value))
+      if (typeof child === 'object') stack.push({ value: child, depth: item.depth + 1 })
   }
   return deepest
 }
@@ -126,6 +129,7 @@ function decodeSections(document: JsonObject, problems: Problems): Plan {
   const wake = section(document, 'wake', problems, false)
   const thruster = section(document, 'thruster', problems, false)
   const tankRun = section(document, 'tankRun', problems, false)
+  const readings = section(document, 'readings', problems, false)
   const sweep = section(document, 'sweep', problems, false)
   const spread = section(document, 'spread', problems, false)
   const plan: Plan = {
@@ -144,6 +148,7 @@ function decodeSections(document: JsonObject, problems: Problems): Plan {
     wake: wake === null ? null : decodeWake(wake, problems),
     thruster: thruster === null ? null : decodeThruster(thruster, problems),
     tankRun: tankRun === null ? null : decodeTankRun(tankRun, problems),
+    readings: readings === null ? null : decodeReadings(readings, problems),
     sweep: sweep === null ? null : decodeSweep(sweep, problems),
     spread: spread === null ? null : decodeSpread(spread, problems),
     held: decodeHeld(document['held'], problems),

@@ -3,11 +3,12 @@
  */
 import { DomainError } from '../base'
 import { compileProgramme, withStroke, type ProgrammeInput, type ProgrammeRow } from '../pulse'
-import type { TankRunSection } from '../tank'
+import type { ReadingsSection, TankRunSection } from '../tank'
 import type { ThrusterSection } from '../thruster'
 import type { ChoicePath, FieldPath } from './fields'
 import { waterProperties, type WaterInput } from '../water'
 import { JET_DEFAULTS } from './decodeJet'
+import { READINGS_DEFAULTS } from './decodeReadings'
 import { SPREAD_DEFAULTS, SWEEP_DEFAULTS } from './decodeSweep'
 import { TANK_RUN_DEFAULTS } from './decodeTankRun'
 import { THRUSTER_DEFAULTS, VEHICLE_DEFAULTS } from './decodeThruster'
@@ -129,6 +130,11 @@ export function setThruster(plan: Plan, change: Partial<ThrusterSection> | null)
 /** Set parts of the section of the tank run, which is added where it was absent; null takes it out. */
 export function setTankRun(plan: Plan, change: Partial<TankRunSection> | null): Plan {
   return { ...plan, tankRun: change === null ? null : { ...(plan.tankRun ?? TANK_RUN_DEFAULTS), ...change } }
+}
+
+/** Set parts of the readings, which are added where they were absent; null takes them out. */
+export function setReadings(plan: Plan, change: Partial<ReadingsSection> | null): Plan {
+  return { ...plan, readings: change === null ? null : { ...(plan.readings ?? READINGS_DEFAULTS), ...change } }
 }
 
 /** Set parts of the sweep, which is added where it was absent; null takes it out. */

@@ -4,6 +4,7 @@
 import type { DragInput, DutyPoint } from '../thruster'
 import type { TankTarget } from '../tank'
 import { SPREAD_DEFAULTS } from './decodeSweep'
+import { READINGS_DEFAULTS } from './decodeReadings'
 import { JET_DEFAULTS } from './decodeJet'
 import { MATRIX_DEFAULTS, TANK_RUN_DEFAULTS } from './decodeTankRun'
 import { SEARCH_DEFAULTS, THRUSTER_DEFAULTS, VEHICLE_DEFAULTS } from './decodeThruster'
@@ -22,6 +23,7 @@ const STARTS: Readonly<Record<string, unknown>> = {
   'thruster.search.stock': { diameters: [], strokes: [] },
   tankRun: TANK_RUN_DEFAULTS,
   'tankRun.matrix': MATRIX_DEFAULTS,
+  readings: READINGS_DEFAULTS,
   spread: SPREAD_DEFAULTS,
 }
 
@@ -44,6 +46,7 @@ const EDITED = [
   'wake',
   'thruster',
   'tankRun',
+  'readings',
   'spread',
 ] as const
 

@@ -5,6 +5,7 @@
  * of the core is meant to answer; where a formula holds only in part of them, a caution says so.
  */
 import { LARGEST_DELTA, LEAST_DELTA } from '../coaxial'
+import { READINGS_FIELDS } from './fieldsReadings'
 import { SPREAD_FIELDS, TANK_RUN_CHOICES, TANK_RUN_FIELDS } from './fieldsTankRun'
 import { THRUSTER_CHOICES, THRUSTER_FIELDS } from './fieldsThruster'
 import type { FieldDefinition } from './fieldTypes'
@@ -195,6 +196,7 @@ export const FIELDS = {
   },
   ...THRUSTER_FIELDS,
   ...TANK_RUN_FIELDS,
+  ...READINGS_FIELDS,
   ...SPREAD_FIELDS,
 } as const satisfies Readonly<Record<string, FieldDefinition>>
 

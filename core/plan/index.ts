@@ -3,11 +3,15 @@
  */
 export { CAUTIONS, cautionsFor } from './cautions'
 export type { CautionContext, CautionDefinition, CautionGroup } from './cautionTypes'
-export { writeCsv, type Cell } from './csvWriter'
+export { csvLine, writeCsv, type Cell } from './csvWriter'
 export { checkField } from './decodeFields'
 export { JET_DEFAULTS } from './decodeJet'
+export { setDesign, type PlannedDesign } from './designEdit'
+export { readDragTable, type DragReading, type DragRow, type DragUnits } from './dragCsv'
 export { decodePlan, LARGEST_PLAN, readPlan } from './decodePlan'
+export { LARGEST_READING_ROWS, READINGS_DEFAULTS } from './decodeReadings'
 export { LARGEST_ROWS, SPREAD_DEFAULTS, SWEEP_DEFAULTS } from './decodeSweep'
+export { readPartNote } from './decodeSweepPart'
 export { MATRIX_DEFAULTS, TANK_RUN_DEFAULTS } from './decodeTankRun'
 export { SEARCH_DEFAULTS, THRUSTER_DEFAULTS, VEHICLE_DEFAULTS } from './decodeThruster'
 export { WAKE_DEFAULTS } from './decodeWake'
@@ -17,6 +21,7 @@ export {
   setHeld,
   setJet,
   setNumber,
+  setReadings,
   setRows,
   setSpread,
   setStrokeRatio,
@@ -33,8 +38,8 @@ export type { Example } from './exampleTypes'
 export { CHOICES, fieldDefinition, FIELDS, type ChoicePath, type FieldPath } from './fields'
 export type { FieldDefinition } from './fieldTypes'
 export { JET_COLUMNS, jetTable, type JetOutcome } from './jetTables'
-export { numberAt } from './planNumbers'
-export { isFieldPath, quantityDefinition, variedDefinition } from './planPaths'
+export { checkNumber, numberAt } from './planNumbers'
+export { isFieldPath, pathHeading, quantityDefinition, variedDefinition } from './planPaths'
 export type { HeldDesign, SpreadSection, SweepField, SweepSection } from './sectionTypes'
 export { migrate, MIGRATIONS, type Migration } from './migrations'
 export { readProgrammeCsv, type ProgrammeReading } from './programmeCsv'
@@ -49,19 +54,52 @@ export {
   type RingTableKey,
   type RingTableUnits,
 } from './ringTable'
+export { SPREAD_COLUMNS, spreadTable } from './spreadTables'
+export {
+  pulseSummary,
+  SUMMARY_FORMAT,
+  SUMMARY_VERSION,
+  summaryDocument,
+  summaryText,
+  thrusterSummary,
+  type SummaryInput,
+  type SummaryResults,
+  type ThrusterOutcome,
+} from './summary'
+export { summaryNumber, summaryValue, type SummaryValue } from './summaryPaths'
+export {
+  keptRows,
+  mergeSweepParts,
+  partNoteText,
+  rowsOfPart,
+  sweepFileNames,
+  SWEEP_PART_FORMAT,
+  WHOLE_SWEEP,
+  type FoundPart,
+  type KeptRows,
+  type SweepPart,
+  type SweepPartNote,
+} from './sweepParts'
+export { sweepColumns, sweepLine, sweepResults, sweepTable } from './sweepTables'
 export {
   eventTable,
   PULSE_COLUMNS,
   pulseTable,
-  SUMMARY_FORMAT,
-  SUMMARY_VERSION,
-  summaryText,
   trajectoryTable,
   wakeFile,
   wakeFileName,
   wakeTimesTable,
-  type SummaryInput,
 } from './tables'
+export {
+  ARRIVAL_COLUMNS,
+  arrivalsTable,
+  PROFILE_COLUMNS,
+  profileReadFirst,
+  profileTable,
+  runMatrixTable,
+  TRIGGER_COLUMNS,
+  triggerTableText,
+} from './tankTables'
 export {
   PLAN_FORMAT,
   PLAN_VERSION,
@@ -76,7 +114,27 @@ export {
   type ViewInput,
   type WakeSection,
 } from './types'
+export type {
+  SpreadBand,
+  SpreadFigures,
+  SpreadOutcome,
+  SpreadQuantity,
+  SpreadRefusal,
+  SweepOutcome,
+  SweepRow,
+} from './variedTypes'
 export { unknownKeys, unknownKeysInWords } from './unknownKeys'
+export {
+  isUnitKey,
+  shownUnit,
+  shownUnits,
+  UNIT_GROUPS,
+  UNIT_KEYS,
+  unitKeyOf,
+  type Magnitudes,
+  type UnitKey,
+  type Units,
+} from './unitGroups'
 export { validatePlan } from './validate'
 export { startsFromJet } from './wakeStart'
 export { CORE_WORDS, RING_COLUMNS, type RingColumn, type RingColumnKey } from './wakeFields'

@@ -1,4 +1,6 @@
 /** Reading a plan by the dotted paths of its numbers. */
+import type { Problem } from '../base'
+import { checkAgainst } from './decodeFields'
 import { quantityDefinition } from './planPaths'
 import type { Plan } from './types'
 
@@ -34,4 +36,10 @@ function aliased({ tankRun, thruster }: Plan, path: string): number | undefined 
   if (path === 'thruster.target.speed' && 'speed' in first) return first.speed
   if (path === 'thruster.target.thrust' && 'thrust' in first) return first.thrust
   return undefined
+}
+
+/** As checkField, for any number of the plan by its dotted path; null where nothing is wrong or the plan knows no such number. */
+export function checkNumber(path: string, value: number): Problem | null {
+  const definition = quantityDefinition(path)
+  return definition === null ? null : checkAgainst(definition, path, value)
 }

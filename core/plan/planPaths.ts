@@ -3,8 +3,10 @@
  *
  * Sweeps, spread and matrices name what they vary by them.
  */
+import { siUnit } from '../quantity'
 import { FIELDS, fieldDefinition, type FieldPath } from './fields'
 import type { FieldDefinition } from './fieldTypes'
+import { READING_NUMBERS } from './fieldsReadings'
 import { RING_COLUMNS } from './wakeFields'
 
 const place = { label: 'Place', dimension: 'length', help: 'Place along one axis.' } as const
@@ -32,6 +34,7 @@ const LISTED: Readonly<Record<string, FieldDefinition>> = {
     max: 1000,
     help: 'Distance from the exit plane at which the ring is measured.',
   },
+  ...Object.fromEntries(Object.entries(READING_NUMBERS).map(([key, known]) => [`readings.rows.*.${key}`, known])),
   'thruster.target.*.speed': FIELDS['thruster.target.speed'],
   'thruster.target.*.thrust': FIELDS['thruster.target.thrust'],
   'thruster.target.*.share': {
@@ -83,10 +86,20 @@ export function quantityDefinition(path: string): FieldDefinition | null {
   return Object.hasOwn(LISTED, pattern) ? (LISTED[pattern] ?? null) : null
 }
 
-/** Numbers that say how the plan is varied, and so are not varied themselves. */
-const HOW_VARIED = ['spread.', 'sweep.', 'tankRun.matrix.']
+/** Numbers that say how the plan is varied, or what was measured, and so are not varied themselves. */
+const HOW_VARIED = ['spread.', 'sweep.', 'tankRun.matrix.', 'readings.']
 
 /** As quantityDefinition, for a number that a sweep, a spread or a matrix may vary. */
 export function variedDefinition(path: string): FieldDefinition | null {
   return HOW_VARIED.some((start) => path.startsWith(start)) ? null : quantityDefinition(path)
+}
+
+/** A plan path with its SI unit as the heading of a column; the bare path where the plan has no such number, or a pure one. */
+export function pathHeading(path: string): string {
+  const definition = quantityDefinition(path)
+  if (definition === null) return path
+  // Plain digits, as in the heads of the other tables.
+  const si = siUnit(definition.dimension).replace('²', '2').replace('³', '3').replace('·', ' ')
+  const unit = definition.minutes === true ? 'min' : si
+  return unit === '' ? path : `${path} (${unit})`
 }

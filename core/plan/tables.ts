@@ -1,5 +1,5 @@
 /**
- * Results written out as the contract's tables and summary. The window's exports and the headless runner both call these.
+ * Results written out as the contract's tables. The window's exports and the headless runner both call these.
  */
 import { at } from '../base'
 import {
@@ -9,14 +9,11 @@ import {
   trajectoryRows,
   wakeFrame,
   wakePolyData,
-  wakeSummary,
   type Wake,
 } from '../filament'
 import type { PulseResult } from '../pulse'
-import type { WaterProperties } from '../water'
 import { writeCsv } from './csvWriter'
-import { eventsOf, jetSummary, type JetOutcome } from './jetTables'
-import type { Caution } from './types'
+import { eventsOf, type JetOutcome } from './jetTables'
 
 export const PULSE_COLUMNS = [
   'time (s)',
@@ -67,72 +64,4 @@ export function wakeTimesTable(wake: Wake): string {
     ['time (s)', 'file'],
     Array.from(wake.outputTimes, (time, index) => [time, `wake/${wakeFileName(index)}`]),
   )
-}
-
-export const SUMMARY_FORMAT = 'ringwright-summary'
-export const SUMMARY_VERSION = 1
-
-export interface SummaryInput {
-  readonly water: WaterProperties
-  readonly pulse: PulseResult | null
-  readonly jet: JetOutcome | null
-  /** The wake with what belongs beside it; null where it was not computed. */
-  readonly wake: {
-    readonly wake: Wake
-    readonly ageing: string
-    readonly arrivals: readonly object[]
-    readonly notes: readonly string[]
-  } | null
-  readonly cautions: readonly Caution[]
-  readonly title: string
-  readonly files: readonly string[]
-  readonly program: { readonly name: string; readonly version: string }
-  readonly inputHash: string
-}
-
-/** summary.json: two-space indent, SI, null where an estimate is absent; sections not computed are left out. */
-export function summaryText(input: SummaryInput): string {
-  const { water, pulse } = input
-  const document = {
-    format: SUMMARY_FORMAT,
-    version: SUMMARY_VERSION,
-    title: input.title,
-    program: input.program,
-    inputHash: input.inputHash,
-    files: input.files,
-    water: {
-      density: water.density,
-      kinematicViscosity: water.kinematicViscosity,
-      vapourPressure: water.vapourPressure ?? undefined,
-      absolutePressure: water.absolutePressure,
-      sources: water.sources,
-      notes: water.notes,
-    },
-    pulse: pulse === null ? undefined : pulseSummary(pulse),
-    jet: input.jet === null ? undefined : jetSummary(input.jet),
-    wake: input.wake === null ? undefined : wakeSection(input.wake),
-    cautions: input.cautions,
-  }
-  return `${JSON.stringify(document, null, 2)}\n`
-}
-
-/** The pulse section: everything but the histories, which are pulse.csv. */
-function pulseSummary(pulse: PulseResult): object {
-  const { history, ...rest } = pulse
-  return { ...rest, samples: history.time.length }
-}
-
-function wakeSection({ wake, ageing, arrivals, notes }: NonNullable<SummaryInput['wake']>): object {
-  const { status, message, time, counters, modelReason } = wake
-  return {
-    ...wakeSummary(wake),
-    modelReason,
-    ageing,
-    arrivals,
-    status,
-    message,
-    time,
-    counters,
-    notes: [...notes, ...wake.notes],
-  }
 }

@@ -1,11 +1,11 @@
 /**
- * The plan: one nozzle, its pulses, the water, and later its vehicle, tank run and readings. SI numbers.
+ * The plan: one nozzle, its pulses, the water, its vehicle, tank run and readings. SI numbers.
  */
 import type { Problem } from '../base'
 import type { CoaxialLaw, WakeAgeing } from '../coaxial'
 import type { WakeModel, WakeNozzle, WakeRing, WakeWall } from '../filament'
 import type { FormationBasis, NozzleInput, OverPressureBasis, ProgrammeInput } from '../pulse'
-import type { TankRunSection } from '../tank'
+import type { ReadingsSection, TankRunSection } from '../tank'
 import type { ThrusterSection } from '../thruster'
 import type { WaterInput } from '../water'
 import type { HeldDesign, SpreadSection, SweepSection } from './sectionTypes'
@@ -71,7 +71,7 @@ export interface JsonObject {
 }
 
 /**
- * A decoded plan. Readings, and keys this version does not know, are kept as they came in `source` and written back on save.
+ * A decoded plan. Keys this version does not know are kept as they came in `source` and written back on save.
  */
 export interface Plan {
   readonly title: string
@@ -88,6 +88,7 @@ export interface Plan {
   readonly wake: WakeSection | null
   readonly thruster: ThrusterSection | null
   readonly tankRun: TankRunSection | null
+  readonly readings: ReadingsSection | null
   readonly sweep: SweepSection | null
   readonly spread: SpreadSection | null
   /** Designs kept to be held against this one; empty: none. */

@@ -18,13 +18,14 @@ const KNOWN_SECTIONS = [
   'wake',
   'thruster',
   'tankRun',
+  'readings',
   'sweep',
   'spread',
   'view',
 ] as const
 
 /** Sections the contract names, whether or not this version reads them. */
-const LATER_SECTIONS = ['readings', 'held'] as const
+const LATER_SECTIONS = ['held'] as const
 
 /** Dotted paths of the keys this version does not know, in their order; empty for a plan it knows whole. */
 export function unknownKeys(plan: Plan): readonly string[] {
@@ -44,13 +45,16 @@ export function unknownKeys(plan: Plan): readonly string[] {
 }
 
 /** Sections whose parts keep what is unknown in them too. */
-const NESTED_SECTIONS = ['thruster', 'tankRun', 'sweep', 'spread'] as const
+const NESTED_SECTIONS = ['thruster', 'tankRun', 'readings', 'sweep', 'spread'] as const
 
-/** Steps of a matrix are saved as the values they make. */
-const READ_INTO_VALUES = /^tankRun\.matrix\.fields\.\d+\.(?:from|to|count)$/u
+/** Steps of a matrix are saved as the values they make; what a row of readings does not hold is not saved. */
+const READ_INTO_VALUES =
+  /^(?:tankRun\.matrix\.fields\.\d+\.(?:from|to|count)|readings\.rows\.\d+\.(?:x|radius|circulation|sigmaX|sigmaRadius|sigmaCirculation))$/u
 
 /** Unknown keys of the objects and the lists of objects inside one. */
 function unknownBelow(given: Json | undefined, taken: Json | undefined, path: string): readonly string[] {
+  // A log in another form, or a list of plain numbers, holds no keys of its own.
+  if (path === 'readings.force') return []
   if (Array.isArray(given) && Array.isArray(taken) && given.length === taken.length)
     return given.flatMap((item: Json, index) => unknownOf(item, taken[index], `${path}.${index}`))
   if (!isObject(given) || !isObject(taken)) return []
@@ -73,7 +77,8 @@ const OPTIONAL: JsonObject = { notes: '', title: '' }
 function isOptional(section: string, key: string): boolean {
   return (
     (section === 'water' && ['density', 'kinematicViscosity', 'vapourPressure'].includes(key)) ||
-    (section === 'programme' && key === 'rows')
+    (section === 'programme' && key === 'rows') ||
+    (section === 'readings' && ['piston', 'calibration', 'sources', 'fields', 'standResonance'].includes(key))
   )
 }
 

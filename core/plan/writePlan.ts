@@ -2,6 +2,7 @@
  * A plan becomes its text: two-space indent, stable key order, SI numbers, what this version does not know kept.
  */
 import { merged, pair } from './mergedDocument'
+import { readingsDocument } from './readingsDocument'
 import { heldDocument, spreadDocument, sweepDocument, tankRunDocument } from './tankRunDocument'
 import { thrusterDocument } from './thrusterDocument'
 import { PLAN_FORMAT, PLAN_VERSION, type Json, type JsonObject, type Plan, type WakeSection } from './types'
@@ -56,6 +57,7 @@ export function planDocument(plan: Plan): JsonObject {
     wake: plan.wake === null ? undefined : merged(plan.source['wake'], wakeDocument(plan.wake)),
     thruster: plan.thruster === null ? undefined : thrusterDocument(plan.source['thruster'], plan.thruster),
     tankRun: plan.tankRun === null ? undefined : tankRunDocument(plan.source['tankRun'], plan.tankRun),
+    readings: plan.readings === null ? undefined : readingsDocument(plan.source['readings'], plan.readings),
     sweep: plan.sweep === null ? undefined : sweepDocument(plan.source['sweep'], plan.sweep),
     spread: plan.spread === null ? undefined : spreadDocument(plan.source['spread'], plan.spread),
     held: heldDocument(plan.source['held'], plan.held),

@@ -13,7 +13,6 @@ export {
   type Arrivals,
   type RingVariant,
   type TankArrival,
-  type TankPath,
 } from './arrivals'
 export { clearances, type Clearance, type ClearanceInput, type WallName } from './clearances'
 export { imaging, type Imaging, type ImagingInput, type ImagingNote, type Refraction, type RingSeen } from './imaging'
@@ -32,16 +31,15 @@ export {
 } from './imagingRules'
 export { solutionsFor, withPeak, type InverseInput, type Solution } from './inverse'
 export {
-  integrateProfile,
   pistonProfile,
   type DriveLimit,
   type DriveLimitName,
   type PistonProfile,
-  type ProfileCheck,
   type ProfileInput,
   type ProfileRounding,
   type ProfileRows,
 } from './profile'
+export { integrateProfile, type ProfileCheck } from './profileCheck'
 export {
   apparentPlace,
   paraxialPath,
@@ -53,6 +51,7 @@ export {
 export type { Passage, RingPath } from './ringPath'
 export { MOST_RUNS, runMatrix, type MatrixRun, type RunMatrix } from './runMatrix'
 export { settling, TUBE_LAMINAR_BELOW, WAITING_OVER_PASSAGE, type Settling, type SettlingInput } from './settling'
+export type { TankPath } from './tankPath'
 export { planTankRun, type FollowedRing, type TankRunInput, type TankRunResult } from './tankRun'
 export { triggerTable, type TriggerRow, type TriggerTable, type TriggerTableInput } from './triggers'
 export type {
@@ -68,3 +67,17 @@ export type {
   TriggerInput,
 } from './types'
 export { nearestSide, slowingTube, tankWalls, wallSlowing, type TankWalls, type WallKind } from './walls'
+export {
+  calibrated,
+  FIT_NAMES,
+  forceLog,
+  type FieldFiles,
+  type FitName,
+  type ForceLog,
+  type ReadingRow,
+  type ReadingsCalibration,
+  type ReadingsColumn,
+  type ReadingsKind,
+  type ReadingsSection,
+  type ReadingsSource,
+} from './readings/types'

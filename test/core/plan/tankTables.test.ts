@@ -23,7 +23,7 @@ import { CAMERA, DRIVE, NO_TANK, section } from '../tank/sections'
 /** Fine enough for a core of 100 vectors, slow enough for laminar rings. */
 const CALM = {
   tank: { ...NO_TANK, length: 2, width: 1, depth: 1 },
-  stations: [0.1],
+  stations: [0.04],
   camera: { ...CAMERA, scale: 400_000, aperture: 16, maxFrameRate: 1e6, refraction: false, pairs: 2000 },
   trigger: { camera: 0, laser: -0.1 },
 }
