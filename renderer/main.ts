@@ -16,6 +16,7 @@ import './style/fields.css'
 import './style/results.css'
 import './style/dialogs.css'
 import './style/wake.css'
+import './style/jet.css'
 
 /** Storage the page may not have, for instance where the browser keeps nothing. */
 function storage(): Storage | null {

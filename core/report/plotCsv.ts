@@ -12,25 +12,34 @@ export interface PlotTable {
 /** One row an abscissa, series side by side; a series without a value there leaves the cell empty. */
 export function plotTable(model: PlotModel): PlotTable {
   const headings = [heading(model.x.title, model.x.unit)]
-  const rows = new Map<number, (number | null)[]>()
-  const order: number[] = []
+  const rows = new Map<string, (number | null)[]>()
   const shared = model.series.every((series) => sameValues(series.x, model.series[0]?.x ?? []))
-  model.series.forEach((series, column) => {
-    headings.push(heading(model.series.length === 1 ? model.title : `${model.title}, ${series.name}`, model.y.unit))
-    series.x.forEach((x, index) => {
-      // Where all series share their abscissae a row is an index: a vertical step keeps both of its rows.
-      const key = shared ? index : x
+  const columns = model.series.flatMap((series) => {
+    const name = model.series.length === 1 ? model.title : `${model.title}, ${series.name}`
+    const values = { name, x: series.x, y: series.y }
+    return series.error === undefined
+      ? [values]
+      : [values, { name: `${name}, uncertainty`, x: series.x, y: series.error }]
+  })
+  columns.forEach(({ name, x: abscissae, y }, column) => {
+    headings.push(heading(name, model.y.unit))
+    const seen = new Map<number, number>()
+    abscissae.forEach((x, index) => {
+      // Where all series share their abscissae a row is an index: a vertical step keeps both of its rows, as repeats keep theirs.
+      const again = seen.get(x) ?? 0
+      seen.set(x, again + 1)
+      const key = shared ? String(index) : `${x} ${again}`
       let row = rows.get(key)
       if (row === undefined) {
-        row = [finiteOrNull(x), ...model.series.map(() => null)]
+        row = [finiteOrNull(x), ...columns.map(() => null)]
         rows.set(key, row)
-        order.push(key)
       }
-      row[column + 1] = finiteOrNull(series.y[index])
+      row[column + 1] = finiteOrNull(y[index])
     })
   })
-  if (!shared) order.sort((a, b) => a - b)
-  return { headings, rows: order.map((key) => rows.get(key) ?? []) }
+  const list = [...rows.values()]
+  if (!shared) list.sort((a, b) => (a[0] ?? 0) - (b[0] ?? 0))
+  return { headings, rows: list }
 }
 
 /** The plot's table as CSV text in the shown units, named in the header. */

@@ -2,6 +2,7 @@
  * Direct labels of a plot: names at the ends of lines, limits on their lines, bands in or beside them; none clipped, none colliding.
  */
 import { placeLabels, pointsAlong, type LabelRequest, type Pixel, type Place } from './boxes'
+import { MARKER_RADIUS, markedPoints } from './plotMarkers'
 import { seriesParts, type PlotScale } from './plotScale'
 import type { PlotBand, PlotLine, PlotModel, SeriesRole } from './types'
 
@@ -27,8 +28,9 @@ export function plotLabels(
   const wanted: { request: LabelRequest; text: string; wears: PlotLabel['wears'] }[] = []
   const points: Pixel[] = []
   model.series.forEach((series, index) => {
-    const parts = seriesParts(series, scale)
-    for (const part of parts) points.push(...pointsAlong(part, 4))
+    const marks = series.marker === undefined ? null : markedPoints(series, scale)
+    const parts = marks === null ? seriesParts(series, scale) : [marks.toSorted((a, b) => a.x - b.x)]
+    for (const part of parts) points.push(...(marks === null ? pointsAlong(part, 4) : part.flatMap(aroundMark)))
     const longest = parts.at(-1)
     // A lone series is named by the title of its plot.
     if (model.series.length < 2 || longest === undefined || series.unnamed === true) return
@@ -52,6 +54,15 @@ export function plotLabels(
     const label = wanted.find(({ request }) => request.id === id)
     return label === undefined ? [] : [{ text: label.text, place, wears: label.wears }]
   })
+}
+
+/** What a name must keep clear of: the mark and a little around it. */
+function aroundMark({ x, y }: Pixel): readonly Pixel[] {
+  return [
+    { x: x - MARKER_RADIUS, y: y - MARKER_RADIUS },
+    { x: x + MARKER_RADIUS, y: y + MARKER_RADIUS },
+    { x, y },
+  ]
 }
 
 /** End points in pixels of a line across the plot. */

@@ -24,12 +24,20 @@ export interface PlotScale {
  */
 export function plotDomain(model: PlotModel): PlotDomain {
   const x = finite(model.series.flatMap((series) => series.x))
-  const y = finite(model.series.flatMap((series) => series.y))
+  const y = finite(model.series.flatMap((series) => [...series.y, ...errorEnds(series)]))
   for (const line of model.lines) (line.axis === 'x' ? x : y).push(...finite([line.value]))
   for (const band of model.bands) (band.axis === 'x' ? x : y).push(...finite([band.from, band.to]))
   const [xMin, xMax] = ends(x, model.x.min, model.x.max, 0)
   const [yMin, yMax] = ends(y, model.y.min, model.y.max, 0.08)
   return { xMin, xMax, yMin, yMax }
+}
+
+/** Ends of the error bars of a series. */
+function errorEnds({ y, error = [] }: PlotSeries): number[] {
+  return error.flatMap((half, index) => {
+    const value = y[index] ?? null
+    return half === null || value === null ? [] : [value - half, value + half]
+  })
 }
 
 function finite(values: readonly (number | null)[]): number[] {

@@ -5,11 +5,12 @@ import { formatNumber } from '../quantity'
 import type { Box } from './boxes'
 import { drawingColours, type DrawingColours, type DrawingTheme } from './colours'
 import { lineEnds, plotLabels, type PlotLabel } from './plotLabels'
+import { markedPoints, markerPath } from './plotMarkers'
 import { plotDomain, plotScale, seriesParts, type PlotScale } from './plotScale'
 import { coordinate, escapeXml, FONT_FAMILY, pathThrough, svgText } from './svgText'
 import { textWidth } from './textWidth'
 import { niceTicks, tickLabel, tickStep } from './ticks'
-import type { PlotAxis, PlotModel, PlotSeries } from './types'
+import type { PlotAxis, PlotMarker, PlotModel, PlotSeries } from './types'
 
 export interface DrawingSize {
   /** Pixels, at least 160. */
@@ -84,6 +85,7 @@ export function plotToSvg(model: PlotModel, size: DrawingSize): string {
       const dash = line.kind === 'limit' ? LIMIT_DASH : [2, 3]
       return `<path d="${pathThrough(lineEnds(line, scale))}" stroke="${stroke}" stroke-width="1.2" stroke-dasharray="${dash.join(' ')}" fill="none"/>`
     }),
+    ...model.series.flatMap((series) => areaBetween(series, model, scale, colours)),
     ...model.series.flatMap((series) => seriesMarks(series, scale, colours)),
     ...plotLabels(model, scale, (text) => textWidth(text, font), font * 1.25).map((label) =>
       labelText(label, font, colours),
@@ -166,8 +168,19 @@ export function seriesColour(series: PlotSeries, colours: Pick<DrawingColours, '
   return series.role === 'primary' ? colours.accent : series.role === 'secondary' ? colours.muted : colours.ink
 }
 
-function seriesMarks(series: PlotSeries, scale: PlotScale, colours: DrawingColours): string[] {
+/** The shade between a series and the one it is filled to. */
+function areaBetween(series: PlotSeries, model: PlotModel, scale: PlotScale, colours: DrawingColours): string[] {
+  const other = model.series.find(({ id }) => id === series.fillTo)
+  const [upper = [], lower = []] =
+    other === undefined ? [] : [seriesParts(series, scale)[0], seriesParts(other, scale)[0]]
+  if (upper.length === 0 || lower.length === 0) return []
   const colour = seriesColour(series, colours)
+  return [`<path d="${pathThrough([...upper, ...lower.toReversed()])}Z" fill="${colour}" fill-opacity="0.15"/>`]
+}
+
+function seriesMarks(series: PlotSeries, scale: PlotScale, colours: DrawingColours): readonly string[] {
+  const colour = seriesColour(series, colours)
+  if (series.marker !== undefined) return measuredMarks(series, series.marker, scale, colours)
   const zero = coordinate(Math.min(scale.frame.top + scale.frame.height, Math.max(scale.frame.top, scale.toY(0))))
   const dash = DASHES[series.line].length > 0 ? ` stroke-dasharray="${DASHES[series.line].join(' ')}"` : ''
   const lineWidth = series.role === 'primary' ? 1.8 : 1.4
@@ -179,6 +192,23 @@ function seriesMarks(series: PlotSeries, scale: PlotScale, colours: DrawingColou
     const area = `${pathThrough(part)}L${coordinate(final.x)} ${zero}L${coordinate(first.x)} ${zero}Z`
     return [`<path d="${area}" fill="${colour}" fill-opacity="0.15"/>`, line]
   })
+}
+
+/** All error bars in one path, all marks in another. */
+function measuredMarks(
+  series: PlotSeries,
+  marker: PlotMarker,
+  scale: PlotScale,
+  colours: DrawingColours,
+): readonly string[] {
+  const points = markedPoints(series, scale)
+  if (points.length === 0) return []
+  const colour = seriesColour(series, colours)
+  const bars = points.map(({ bar }) => bar).join('')
+  return [
+    ...(bars === '' ? [] : [`<path d="${bars}" stroke="${colour}" stroke-width="1" fill="none"/>`]),
+    `<path d="${points.map(({ x, y }) => markerPath(marker, x, y)).join('')}" stroke="${colour}" stroke-width="1.3" fill="${colours.ground}"/>`,
+  ]
 }
 
 function labelText(label: PlotLabel, font: number, colours: DrawingColours): string {

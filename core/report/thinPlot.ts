@@ -26,7 +26,13 @@ function thinSeries(series: PlotSeries, most: number): PlotSeries {
     if (gap !== null) marks.add(gap)
     kept.push(...[...marks].sort((a, b) => a - b))
   }
-  return { ...series, x: kept.map((index) => at(series.x, index)), y: kept.map((index) => series.y[index] ?? null) }
+  const { error } = series
+  return {
+    ...series,
+    x: kept.map((index) => at(series.x, index)),
+    y: kept.map((index) => series.y[index] ?? null),
+    ...(error === undefined ? {} : { error: kept.map((index) => error[index] ?? null) }),
+  }
 }
 
 function extreme(series: PlotSeries, from: number, to: number, sign: 1 | -1): number {

@@ -11,6 +11,9 @@ export interface PlotAxis {
 
 export type SeriesRole = 'primary' | 'secondary' | 'reference'
 
+/** How a measured point is marked. */
+export type PlotMarker = 'circle' | 'square' | 'diamond' | 'triangle' | 'cross'
+
 export interface PlotSeries {
   readonly id: string
   readonly name: string
@@ -21,8 +24,14 @@ export interface PlotSeries {
   readonly line: 'solid' | 'dashed' | 'dotted'
   /** Area down to zero shaded. */
   readonly filled: boolean
+  /** Identifier of a series with the same x: the area between the two is shaded. */
+  readonly fillTo?: string
   /** True where its name is left off the drawing: one of many lines. */
   readonly unnamed?: boolean
+  /** Measured points, each with this mark and without a line through them; absent: a line. */
+  readonly marker?: PlotMarker
+  /** Half lengths of error bars, one a point; null: none there. */
+  readonly error?: readonly (number | null)[]
 }
 
 /** A shaded interval, for instance where published experiments put pinch-off. */

@@ -93,11 +93,12 @@ export function totalImpulse(
       density * Math.PI * at(path.circulation, k) * at(path.radius, k) ** 2 * at(path.directionX, k)
     const ring = rings[i]
     const first = ring === undefined || ring.curve !== undefined ? null : density * impulseOf(ring)
+    const from = at(offsets, i)
     wake.outputTimes.forEach((_, index) => {
-      const k = pathIndex(path, at(offsets, i), index)
-      if (k === null) return
-      now[index] = at(now, index) + impulse(k)
-      born[index] = at(born, index) + (first ?? impulse(0))
+      // A ring that another has swallowed is still one of those that appeared.
+      if (from >= 0 && index >= from) born[index] = at(born, index) + (first ?? impulse(0))
+      const k = pathIndex(path, from, index)
+      if (k !== null) now[index] = at(now, index) + impulse(k)
     })
   })
   return { now: { time: wake.outputTimes, values: now }, born: { time: wake.outputTimes, values: born } }

@@ -1,11 +1,25 @@
 /**
  * A plan in, results out: the one door that window, browser and runner share.
  */
+export { fieldPicture, type FieldPicture } from './fieldPicture'
+export { fieldSession, type FieldSession, type FrameOutcome } from './fieldSession'
 export { computedJet, jetOf, knownJetOf, type JetRunOptions, type KnownJet } from './jet'
 export { createJetCache, type JetCache } from './jetCache'
 export type { JetData } from './jetTypes'
-export { availableSections, pulseOf, run, type RunRequest } from './run'
-export { SECTIONS, type RunData, type RunResult, type Section } from './types'
+export { pulseOf } from './pulse'
+export { availableSections, run, sweepOf } from './run'
+export type { SpreadData } from './spread'
+export type { DrawnField } from './spreadDraw'
+export { sweepDesign, type SweepData, type SweepDesign, type SweepOptions } from './sweep'
+export type { ThrusterData } from './thruster'
+export {
+  designOfPlan,
+  thrusterMap,
+  type ThrusterMap,
+  type ThrusterMapRequest,
+  type ThrusterMapResult,
+} from './thrusterMap'
+export { SECTIONS, type RunData, type RunRequest, type RunResult, type Section } from './types'
 export type { WakeArrival, WakeData, WakeRunOptions } from './wake'
 export type { WakeJet } from './wakeJet'
 export { wakePicture, type WakePicture, type WakePictureRequest } from './wakePicture'

@@ -20,6 +20,9 @@ import { createJetCache, type JetCache } from './jetCache'
 import type { JetData } from './jetTypes'
 import type { WakeRunOptions } from './wake'
 
+/** Time between two shapes of the sheet in D / U_peak: close enough to play them one after another. */
+const SHAPE_STEP = 0.05
+
 export interface JetRunOptions extends WakeRunOptions {
   /** Finished jets; without one every run computes its own. */
   readonly jetCache?: JetCache
@@ -148,6 +151,7 @@ export function jetInput(plan: Plan, water: WaterProperties): JetEnsembleInput {
     programme: plan.programme,
     axialFlow: plan.ambient.axialFlow,
     ...(plan.jet ?? JET_DEFAULTS),
+    settings: { snapshotStep: SHAPE_STEP },
   }
 }
 

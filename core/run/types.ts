@@ -1,13 +1,32 @@
 import type { RunStatus } from '../base'
 import type { Caution } from '../plan'
 import type { PulseResult } from '../pulse'
+import type { TankRunResult } from '../tank'
 import type { WaterProperties } from '../water'
 import type { JetData } from './jetTypes'
+import type { SpreadData } from './spread'
+import type { SweepData } from './sweep'
+import type { ThrusterData } from './thruster'
 import type { WakeData } from './wake'
 
 /** Sections of results that this version computes, in the order they depend on one another. */
-export const SECTIONS = ['water', 'pulse', 'jet', 'wake'] as const
+export const SECTIONS = ['water', 'pulse', 'jet', 'wake', 'thruster', 'tankRun', 'sweep', 'spread'] as const
 export type Section = (typeof SECTIONS)[number]
+
+export interface RunRequest {
+  /** Sections wanted; water is always computed, and what a section depends on is computed with it. */
+  readonly sections: readonly Section[]
+  /**
+   * run (as it is where it is not given): a starting jet that is wanted or depended on is computed. cached: it is only looked for among
+   * the finished ones of `jetCache`; where it is not there, the pulse does without, and a caution says so. For runs at every change.
+   */
+  readonly jet?: 'run' | 'cached'
+  /**
+   * run (as it is where it is not given): the search of a thruster is made where the plan asks for one. off: only the thruster as it
+   * stands is computed. For runs at every change.
+   */
+  readonly sizing?: 'run' | 'off'
+}
 
 /** Everything computed from one plan. A section not asked for is null. Frozen; replaced whole. */
 export interface RunData {
@@ -16,6 +35,10 @@ export interface RunData {
   /** Only where it was asked for: a jet that the pulse needed alone is in the pulse. */
   readonly jet: JetData | null
   readonly wake: WakeData | null
+  readonly thruster: ThrusterData | null
+  readonly tankRun: TankRunResult | null
+  readonly sweep: SweepData | null
+  readonly spread: SpreadData | null
   readonly cautions: readonly Caution[]
 }
 

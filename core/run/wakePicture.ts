@@ -52,6 +52,8 @@ export async function wakePicture(
   })
   if (plan.wake?.tube !== null && plan.wake?.tube !== undefined)
     notes.push('Dye and field leave out the reaction of the tube.')
+  if (data.jet !== null)
+    notes.push('Dye and field are those of the rings: the sheets that form, and the tube, are left out.')
   let dye: readonly Float32Array[] | null = null
   if (request.dye > 0) {
     dye = await carryDye({ wake: data.wake, surroundings, points: request.dye }, within(0))

@@ -1,5 +1,5 @@
 /** Core names fields by their path in the plan; the window calls them what stands beside them. */
-import { fieldDefinition, FIELDS, RING_COLUMNS, type FieldPath } from '../../core/plan'
+import { fieldDefinition, FIELDS, quantityDefinition, RING_COLUMNS, type FieldPath } from '../../core/plan'
 
 const OTHER_NAMES: Readonly<Record<string, string>> = {
   'water.kind': 'the kind of water',
@@ -16,6 +16,24 @@ const OTHER_NAMES: Readonly<Record<string, string>> = {
   'wake.rings.length': 'the number of rings',
   'wake.nozzles': 'the nozzles',
   'wake.stations': 'the stations',
+  'thruster.vehicle': 'the vehicle',
+  'thruster.vehicle.drag': 'the drag of the vehicle',
+  'thruster.vehicle.drag.kind': 'the kind of drag',
+  'thruster.vehicle.drag.rows': 'the table of drag',
+  'thruster.target': 'the duty points',
+  'thruster.search': 'the search',
+  'thruster.search.diameter': 'the range of exit diameters',
+  'thruster.search.strokeRatio': 'the range of stroke ratios',
+  'thruster.search.frequency': 'the range of frequencies',
+  'thruster.search.count': 'the numbers of thrusters',
+  'thruster.search.ejectShare': 'the range of eject shares',
+  'thruster.search.goal': 'the goal of the search',
+  'tankRun.stations': 'the stations in the tank',
+  'tankRun.target': 'what is wanted in the tank',
+  'tankRun.matrix': 'the run matrix',
+  'tankRun.matrix.fields': 'the fields of the run matrix',
+  'sweep.fields': 'the fields of the sweep',
+  'sweep.results': 'the results of the sweep',
 }
 
 const AXES = ['x', 'y', 'z'] as const
@@ -27,7 +45,7 @@ function isFieldPath(path: string): path is FieldPath {
 /** A sentence of the core with every path replaced by the field's name; the first letter stays a capital. */
 export function problemInWords(message: string): string {
   return message.replace(
-    /\b(?:water|nozzle|programme|ambient|models|train|wake)(?:\.\w+)+/gu,
+    /\b(?:water|nozzle|programme|ambient|models|jet|train|wake|thruster|tankRun|sweep|spread)(?:\.\w+)+/gu,
     (path, offset: number) => {
       const name = isFieldPath(path) ? fieldDefinition(path).label : (OTHER_NAMES[path] ?? listName(path) ?? path)
       return offset === 0 ? capital(name) : isFieldPath(path) ? name.toLowerCase() : name
@@ -39,6 +57,8 @@ export function problemInWords(message: string): string {
 function listName(path: string): string | null {
   const wall = /^wake\.wall\.(point|normal)\.(\d)$/u.exec(path)
   if (wall !== null) return `${wall[1] ?? ''} ${AXES[Number(wall[2])] ?? ''} of the wall`
+  const listed = otherListName(path)
+  if (listed !== null) return listed
   const found = /^wake\.(rings|nozzles|stations)\.(\d+)(?:\.(\w+))?(?:\.(\d+))?$/u.exec(path)
   if (found === null) return null
   const [, list = '', index = '0', key, axis] = found
@@ -46,6 +66,27 @@ function listName(path: string): string | null {
   if (key === undefined) return one
   const name = key in RING_COLUMNS ? (labelOf(key) ?? key) : key
   return `${[name, axis === undefined ? '' : (AXES[Number(axis)] ?? '')].filter((part) => part !== '').join(' ')} of ${one}`
+}
+
+/** What the rows of other lists are called. */
+const ROWS: readonly (readonly [pattern: RegExp, row: string])[] = [
+  [/^thruster\.target\.(\d+)(?:\.|$)/u, 'duty point'],
+  [/^thruster\.vehicle\.drag\.rows\.(\d+)(?:\.|$)/u, 'row of the drag table'],
+  [/^thruster\.search\.stock\.\w+\.(\d+)$/u, 'size in stock'],
+  [/^tankRun\.stations\.(\d+)$/u, 'station in the tank'],
+  [/^tankRun\.matrix\.fields\.(\d+)(?:\.|$)/u, 'field of the run matrix'],
+  [/^sweep\.fields\.(\d+)(?:\.|$)/u, 'field of the sweep'],
+]
+
+function otherListName(path: string): string | null {
+  for (const [pattern, row] of ROWS) {
+    const found = pattern.exec(path)
+    if (found === null) continue
+    const one = `${row.includes(' of ') ? row.replace(' of ', ` ${Number(found[1]) + 1} of `) : `${row} ${Number(found[1]) + 1}`}`
+    const key = path.slice(found[0].length)
+    return key === '' ? one : `${quantityDefinition(path)?.label.toLowerCase() ?? key} of ${one}`
+  }
+  return null
 }
 
 function labelOf(key: string): string | undefined {

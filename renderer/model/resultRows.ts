@@ -4,8 +4,10 @@
 import { formatNumber, formatQuantity, formatRange } from '../../core/quantity'
 import type { Plan } from '../../core/plan'
 import type { PulseResult, PulseRing } from '../../core/pulse'
-import { adoptedBasisInWords, type ExplanationId } from '../../core/report'
+import type { JetEnsemble } from '../../core/coaxial'
+import { adoptedBasisInWords, type ExplanationId, type JetExplanationId } from '../../core/report'
 import type { RunData } from '../../core/run'
+import { formationRange } from './jetRows'
 import type { Magnitudes, Units } from './units'
 
 export interface ResultRow {
@@ -20,7 +22,7 @@ export interface ResultRow {
 
 /** One estimate of the formation number in a list. */
 export interface EstimateRow {
-  readonly id: ExplanationId
+  readonly id: ExplanationId | JetExplanationId
   readonly label: string
   readonly value: string
   readonly note: string
@@ -121,10 +123,18 @@ export function marginRow(plan: Plan, pulse: PulseResult, units: Units): ResultR
   }
 }
 
-/** Every estimate of the formation number, also the absent ones with why. */
-export function estimateRows(plan: Plan, pulse: PulseResult): readonly EstimateRow[] {
+/**
+ * Every estimate of the formation number, also the absent ones with why.
+ *
+ * @param formation the runs behind the computed one; null leaves it out
+ */
+export function estimateRows(
+  plan: Plan,
+  pulse: PulseResult,
+  formation: JetEnsemble | null = null,
+): readonly EstimateRow[] {
   const numbers = pulse.formationNumber
-  const note = (key: 'energyLimit' | 'carriedVolume' | 'speedMatch' | 'published'): string =>
+  const note = (key: 'energyLimit' | 'carriedVolume' | 'speedMatch' | 'computed' | 'published'): string =>
     numbers.notes
       .filter((entry) => entry.estimate === key)
       .map((entry) => entry.text)
@@ -150,6 +160,16 @@ export function estimateRows(plan: Plan, pulse: PulseResult): readonly EstimateR
       value: value(numbers.speedMatch),
       note: note('speedMatch'),
     },
+    ...(formation === null
+      ? []
+      : [
+          {
+            id: 'jet.formationNumber' as const,
+            label: label('Computed jet', 'computed'),
+            value: formationRange(formation)?.range ?? 'none',
+            note: note('computed'),
+          },
+        ]),
     {
       id: 'formation.published',
       label: label('Published band', 'published'),

@@ -7,7 +7,7 @@
 import { computed, shallowRef, type ComputedRef, type ShallowRef } from 'vue'
 import type { Plan } from '../../core/plan'
 import type { Progress } from '../../core/base'
-import type { RunData } from '../../core/run'
+import type { RunData, Section } from '../../core/run'
 import type { Job, JobOutcome, WorkerClient } from '../worker/client'
 
 /** Why there is no newer result, in a sentence; `field` where a value of the plan is the reason. */
@@ -36,8 +36,20 @@ export interface Results {
   cancel(): void
 }
 
-/** @param onCrash told once a crash, with a sentence */
-export function createResults(client: WorkerClient, onCrash: (sentence: string) => void = () => {}): Results {
+/** A wake of explicit rings may come without nozzle and programme: then there is only the water. */
+function pulseSections(plan: Plan): readonly Section[] {
+  return plan.absent.length === 0 ? ['water', 'pulse'] : ['water']
+}
+
+/**
+ * @param onCrash told once a crash, with a sentence
+ * @param sectionsOf what is computed of a plan at every change: nothing that takes long
+ */
+export function createResults(
+  client: WorkerClient,
+  onCrash: (sentence: string) => void = () => {},
+  sectionsOf: (plan: Plan) => readonly Section[] = pulseSections,
+): Results {
   const finished = shallowRef<Finished | null>(null)
   const progress = shallowRef<Progress | null>(null)
   const failure = shallowRef<ResultFailure | null>(null)
@@ -46,12 +58,10 @@ export function createResults(client: WorkerClient, onCrash: (sentence: string) 
   const running = shallowRef<{ readonly plan: Plan; readonly job: Job } | null>(null)
 
   function start(plan: Plan): void {
-    // A wake of explicit rings may come without nozzle and programme: then there is only the water.
-    const sections = plan.absent.length === 0 ? (['water', 'pulse'] as const) : (['water'] as const)
     // A starting jet takes seconds: at every change only a finished one is used, and a caution tells where there is none.
     const job = client.run(
       plan,
-      sections,
+      sectionsOf(plan),
       (step) => {
         if (running.value?.job === job) progress.value = step
       },

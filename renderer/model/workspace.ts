@@ -15,23 +15,28 @@ import {
 } from 'vue'
 import type { CommandId } from '../../app/contract'
 import type { Problem } from '../../core/base'
-import { validatePlan, type Plan } from '../../core/plan'
+import { setJet, validatePlan, type Plan } from '../../core/plan'
 import type { Host } from '../host/types'
 import type { WorkerClient } from '../worker/client'
 import { createDocument, type PlanDocument } from './document'
 import { createFiles, type Files, type LeaveAnswer } from './files'
+import { createJetJob, type JetJob } from './jetJob'
+import { createJetView, type JetView } from './jetView'
 import { createNotices, type Notices } from './notices'
 import type { PageId } from './pages'
 import { problemInWords } from './problemWords'
 import { createRecovery, type Recovery, type RecoveryStorage } from './recovery'
 import { magnitudesOf } from './resultRows'
 import { createResults, type Results } from './results'
+import { createTank, type Tank } from './tank'
 import type { ThemeStore } from './theme'
+import { createThrust, type Thrust } from './thrust'
+import { thrustMagnitudes } from './thrustRows'
 import { shownUnits, type Units } from './units'
 import { createWakeJob, type WakeJob } from './wakeJob'
 import { createWakePictures, type WakePictures } from './wakePictures'
 
-export type DialogId = 'examples' | 'units' | 'export' | 'keys'
+export type DialogId = 'examples' | 'units' | 'export' | 'keys' | 'print'
 
 export interface LeaveQuestion {
   readonly title: string
@@ -42,10 +47,16 @@ export interface Workspace {
   readonly host: Host
   readonly document: PlanDocument
   readonly results: Results
+  /** The starting jet of the open plan. */
+  readonly jet: JetJob
+  /** How it is shown. */
+  readonly jetView: JetView
   /** The rings of the open plan in motion. */
   readonly wake: WakeJob
   /** Dye and field for the picture of the rings. */
   readonly wakePictures: WakePictures
+  /** The thruster of the open plan: figures, sizing, map and what is held. */
+  readonly thrust: Thrust
   readonly units: ComputedRef<Units>
   /** What the open plan breaks; nothing is computed while there is any. */
   readonly problems: ComputedRef<readonly Problem[]>
@@ -58,6 +69,10 @@ export interface Workspace {
   readonly page: Ref<PageId>
   readonly dialog: Ref<DialogId | null>
   readonly leaving: Ref<LeaveQuestion | null>
+  /** The tank run of the open plan and its spread. */
+  readonly tank: Tank
+  /** What the program keeps between its starts; null where it keeps nothing. */
+  readonly storage: RecoveryStorage | null
   /** Takes the picture shown as a PNG; null where none is shown. */
   readonly picture: ShallowRef<(() => Promise<Uint8Array | null>) | null>
   /** The wake as it is shown, for its exports; null while it is not. */
@@ -102,6 +117,22 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
     () => document.content.value,
     (sentence) => notices.fail(sentence),
   )
+  // On the worker of the results: it keeps finished jets, which these then read.
+  const jet = createJetJob({
+    client,
+    open: () => document.content.value,
+    onCrash: (sentence) => notices.fail(sentence),
+    onDone: () => refresh(),
+  })
+  const tank = createTank({
+    client,
+    spreadClient: wakeClient,
+    document,
+    problems: () => problems.value,
+    active: () => page.value === 'tankRun' || dialog.value === 'print',
+    units: () => units.value,
+    onCrash: (sentence) => notices.fail(sentence),
+  })
   const wakePictures = createWakePictures(pictureClient, (sentence) => notices.fail(sentence))
   const page = ref<PageId>('stroke')
   const dialog = ref<DialogId | null>(null)
@@ -123,6 +154,15 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
       }),
   })
 
+  const thrust = createThrust({
+    client,
+    document,
+    problems: () => problems.value,
+    active: () => page.value === 'thrust',
+    units: () => units.value,
+    onCrash: (sentence) => notices.fail(sentence),
+  })
+
   function refresh(): void {
     if (problems.value.length === 0) results.request(document.content.value)
     else results.cancel()
@@ -132,15 +172,32 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
   /** Compute what the page shows. */
   function run(): void {
     refresh()
+    thrust.refresh()
+    tank.refresh()
     const shown = document.content.value
-    if (page.value === 'wake' && shown.wake !== null && problems.value.length === 0) wake.run()
+    if (problems.value.length > 0) return
+    if (page.value === 'wake' && shown.wake !== null) wake.run()
+    if (page.value === 'thrust' && (shown.thruster?.search ?? null) !== null && shown.train !== null)
+      thrust.sizing.run()
+    if (page.value === 'tankRun' && shown.tankRun !== null && tank.canSpread.value) tank.spreads.run()
+    if (page.value === 'stroke' && jetView.showing.value && shown.absent.length === 0) formJet()
+  }
+
+  /** Compute the starting jet; a plan that has no such section gets one, so that the runner computes it too. */
+  function formJet(): void {
+    const shown = document.content.value
+    if (shown.jet === null) document.change('starting jet', setJet(shown, {}))
+    jet.run()
   }
 
   function refusalOf(field: string): string | null {
     const found = problems.value.find((candidate) => candidate.field === field)
     if (found !== undefined) return problemInWords(found.message)
-    const failure = wake.failure.value
-    return failure !== null && failure.field === field ? problemInWords(failure.message) : null
+    const ofThrust = page.value === 'thrust' ? [thrust.quick, thrust.sizing, thrust.maps] : []
+    const ofTank = page.value === 'tankRun' ? [tank.quick, tank.spreads] : []
+    const failures = [wake, jet, ...ofThrust, ...ofTank].map((job) => job.failure.value)
+    const failure = failures.find((candidate) => candidate?.field === field) ?? null
+    return failure === null ? null : problemInWords(failure.message)
   }
 
   function perform(command: CommandId): void {
@@ -150,6 +207,7 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
       'file.save': files.save,
       'file.saveAs': files.saveAs,
       'file.export': () => (dialog.value = 'export'),
+      'file.print': () => (dialog.value = 'print'),
       'file.examples': () => (dialog.value = 'examples'),
       'edit.undo': document.undo,
       'edit.redo': document.redo,
@@ -165,16 +223,28 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
     void actions[command]()
   }
 
+  const units = computed(() => {
+    const pulse = results.finished.value?.data.pulse ?? null
+    const thruster = page.value === 'thrust' ? (thrust.quick.finished.value?.data.thruster ?? null) : null
+    return shownUnits(document.units.value, {
+      ...(pulse === null ? {} : magnitudesOf(pulse)),
+      ...(thruster === null ? {} : thrustMagnitudes(thruster.result)),
+    })
+  })
+  const jetView = createJetView(jet, () => units.value)
+
   return {
     host,
     document,
     results,
+    jet,
+    jetView,
     wake,
     wakePictures,
-    units: computed(() => {
-      const pulse = results.finished.value?.data.pulse ?? null
-      return shownUnits(document.units.value, pulse === null ? {} : magnitudesOf(pulse))
-    }),
+    thrust,
+    tank,
+    storage,
+    units,
     problems,
     refusalOf,
     theme,

@@ -29,7 +29,9 @@ export function useCommands(workspace: Workspace): void {
     if (event.defaultPrevented) return
     if (event.key === 'Escape') {
       workspace.results.cancel()
+      workspace.jet.cancel()
       workspace.wake.cancel()
+      workspace.tank.spreads.cancel()
       return
     }
     const command = commandOf(event, workspace.host.kind, mac)

@@ -9,8 +9,8 @@ const RING_OUTLINE = 80
 const RING_AROUND = 128
 const AROUND = 72
 /** The part of the nozzle's wall that is cut away, as angles from straight up toward the viewer [rad]. */
-const CUT_FROM = 0.06 * Math.PI
-const CUT_TO = 0.86 * Math.PI
+export const CUT_FROM = 0.06 * Math.PI
+export const CUT_TO = 0.86 * Math.PI
 /** Share of a diameter left whole at the lip. */
 const LIP = 0.1
 

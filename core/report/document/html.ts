@@ -25,7 +25,7 @@ export function documentHtml(document: PrintDocument, paper: Paper): string {
 <head>
 <meta charset="utf-8">
 <title>${escapeXml(`${document.title} - ${document.kind}`)}</title>
-<style>${pageRule(paper)}${DOCUMENT_STYLE}</style>
+<style>${pageRule(paper, `${document.kind}: ${document.title}`)}${DOCUMENT_STYLE}</style>
 </head>
 <body>
 ${documentBody(document)}
@@ -52,6 +52,10 @@ function block(item: DocumentBlock): string {
       return pairs(item.rows, '')
     case 'figure':
       return `<figure>${item.svg}<figcaption>${escapeXml(item.caption)}</figcaption></figure>`
+    case 'figures':
+      return `<div class="figures">${item.items.map(({ svg, caption }) => `<figure>${svg}<figcaption>${escapeXml(caption)}</figcaption></figure>`).join('')}</div>`
+    case 'derivation':
+      return `<section class="derivation"><h4>${escapeXml(item.title)}</h4>${item.mathml}${pairs(item.rows, 'stacked')}</section>`
     case 'formula':
       return `<figure>${item.mathml}<figcaption>${escapeXml(item.caption)}</figcaption></figure>`
     case 'boxes':
@@ -72,18 +76,25 @@ function pairs(rows: readonly (readonly [string, string])[], name: string): stri
   return `<dl${name === '' ? '' : ` class="${name}"`}>${lines.join('')}</dl>`
 }
 
+/** A table of at most so many rows is not broken across pages. */
+const KEPT_WHOLE = 12
+
 function table(
   caption: string | null,
   columns: readonly DocumentColumn[],
   rows: readonly (readonly string[])[],
 ): string {
-  const numeric = (index: number): string => (columns[index]?.numeric === true ? ' class="numeric"' : '')
+  const numeric = (index: number): string => {
+    const { numeric: right = false, blank = false } = columns[index] ?? {}
+    const names = [right ? 'numeric' : '', blank ? 'blank' : ''].filter((name) => name !== '').join(' ')
+    return names === '' ? '' : ` class="${names}"`
+  }
   const head = columns.map(({ title }, index) => `<th scope="col"${numeric(index)}>${escapeXml(title)}</th>`)
   const body = rows.map(
     (cells) => `<tr>${cells.map((cell, index) => `<td${numeric(index)}>${escapeXml(cell)}</td>`).join('')}</tr>`,
   )
   return [
-    '<table>',
+    rows.length > KEPT_WHOLE ? '<table>' : '<table class="whole">',
     caption === null ? '' : `<caption>${escapeXml(caption)}</caption>`,
     `<thead><tr>${head.join('')}</tr></thead><tbody>`,
     ...body,

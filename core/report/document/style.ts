@@ -4,9 +4,20 @@
 import { FONT_FAMILY } from '../svgText'
 import type { Paper } from './types'
 
-/** Page size with margins, and the foot with page numbers. */
-export function pageRule(paper: Paper): string {
-  return `@page{size:${paper === 'A4' ? 'A4' : 'letter'};margin:16mm 15mm 18mm}`
+/** Page size with margins, and the foot of each page: what it belongs to on the left, its number on the right. */
+export function pageRule(paper: Paper, foot = ''): string {
+  const size = paper === 'A4' ? 'A4' : 'letter'
+  const type = `font:8pt ${FONT_FAMILY};color:#333`
+  return [
+    `@page{size:${size};margin:15mm 15mm 17mm;`,
+    `@bottom-left{content:${cssString(foot)};${type};white-space:nowrap;overflow:hidden}`,
+    `@bottom-right{content:counter(page) " of " counter(pages);${type}}}`,
+  ].join('')
+}
+
+/** A text as a string of a style sheet: what could end it, or the sheet, is written by its number. */
+function cssString(text: string): string {
+  return `"${text.replace(/[^\p{L}\p{N} ,.:;()+-]/gu, (character) => `\\${(character.codePointAt(0) ?? 32).toString(16)} `)}"`
 }
 
 export const DOCUMENT_STYLE = `
@@ -28,10 +39,14 @@ export const DOCUMENT_STYLE = `
 .print-document table{border-collapse:collapse;width:100%;margin:0 0 3mm;font-size:9.5pt}
 .print-document caption{text-align:left;padding-bottom:1mm}
 .print-document th{text-align:left;font-weight:600;border-bottom:.8pt solid #000;padding:.8mm 2mm .8mm 0;vertical-align:bottom}
-.print-document td{border-bottom:.4pt solid #aaa;padding:.8mm 2mm .8mm 0;vertical-align:top;overflow-wrap:anywhere}
+.print-document td{border-bottom:.4pt solid #aaa;padding:.8mm 2mm .8mm 0;vertical-align:top;overflow-wrap:break-word}
 .print-document thead{display:table-header-group}
 .print-document tr{break-inside:avoid}
+.print-document table.whole{break-inside:avoid}
 .print-document .numeric{text-align:right}
+.print-document td.numeric{white-space:nowrap}
+.print-document .blank{border-left:.4pt solid #aaa;padding-left:1.5mm;min-width:17mm}
+.print-document td.blank{height:7.5mm}
 .print-document dl{columns:2;column-gap:8mm;margin:0 0 3mm}
 .print-document dl.title-block{margin-bottom:0}
 .print-document dl div{display:flex;justify-content:space-between;gap:4mm;break-inside:avoid;border-bottom:.4pt solid #aaa;padding:.6mm 0}
@@ -40,6 +55,15 @@ export const DOCUMENT_STYLE = `
 .print-document figure svg{display:block;width:100%;height:auto;max-height:110mm}
 .print-document .boxes{display:flex;gap:4mm;margin:2mm 0 3mm}
 .print-document .boxes div{flex:1;border:.8pt solid #000;height:16mm;padding:1mm 2mm;font-size:9pt}
+.print-document .figures{display:grid;grid-template-columns:1fr 1fr;gap:3mm 6mm;margin:0 0 4mm}
+.print-document .figures figure{margin:0}
+.print-document .derivation{display:grid;grid-template-columns:58mm 1fr;column-gap:5mm;break-inside:avoid;border-top:.4pt solid #aaa;padding:2mm 0}
+.print-document .derivation h4{grid-column:1/-1;font-size:10pt;margin:0 0 1mm}
+.print-document .derivation math{font-size:11pt;align-self:start;max-width:58mm}
+.print-document dl.stacked{columns:1;margin:0;font-size:9pt}
+.print-document dl.stacked div{display:grid;grid-template-columns:19mm 1fr;gap:2mm;border:0;padding:.3mm 0}
+.print-document dl.stacked dt{color:#444}
+.print-document dl.stacked dd{text-align:left}
 .print-document .lines div{border-bottom:.5pt solid #777;height:8mm}
 .print-document footer{border-top:.5pt solid #777;margin-top:6mm;padding-top:1.5mm;font-size:8.5pt;color:#333;overflow-wrap:anywhere}
 .print-document .page-break{break-after:page}

@@ -8,6 +8,8 @@ export interface DocumentColumn {
   readonly title: string
   /** Set to the right in figures of one width. */
   readonly numeric?: boolean
+  /** Left empty, with room to write in. */
+  readonly blank?: boolean
 }
 
 export type DocumentBlock =
@@ -27,6 +29,15 @@ export type DocumentBlock =
   | { readonly kind: 'pairs'; readonly rows: readonly (readonly [name: string, value: string])[] }
   /** An SVG element of ours. */
   | { readonly kind: 'figure'; readonly svg: string; readonly caption: string }
+  /** Small figures side by side, two in a row. */
+  | { readonly kind: 'figures'; readonly items: readonly { readonly svg: string; readonly caption: string }[] }
+  /** A formula with its name, what it says in words, and what is to be known of it. */
+  | {
+      readonly kind: 'derivation'
+      readonly title: string
+      readonly mathml: string
+      readonly rows: readonly (readonly [name: string, value: string])[]
+    }
   /** A formula: a <math> element of ours. */
   | { readonly kind: 'formula'; readonly mathml: string; readonly caption: string }
   /** Empty boxes to write in by hand, each with its label. */

@@ -10,6 +10,8 @@ export interface RulerLabel {
   readonly id: string
   /** Place of the stem [px]; null for a text without one, such as the band's name. */
   readonly stem: number | null
+  /** Ends of a line through the dot, which the text keeps clear of; absent: none [px]. */
+  readonly reach?: readonly [number, number]
   /** Where a text without stem begins [px]; ignored with a stem. */
   readonly anchor: number
   /** Measured width of the text [px]. */
@@ -63,6 +65,8 @@ const SEARCH_LIMIT = 4000
 interface Candidate extends PlacedLabel {
   readonly box: Rectangle
   readonly stem: number | null
+  /** Ends of its own line in its row. */
+  readonly reach: readonly [number, number]
   readonly cost: number
 }
 
@@ -96,10 +100,11 @@ function candidates(label: RulerLabel, space: LabelSpace, stems: readonly number
       if (box.left < 0 || box.right > space.width) continue
       if (space.obstacles.some((obstacle) => meet(box, obstacle))) continue
       const before = stem !== null && x + width < stem
-      const distance = stem === null ? Math.abs(x - label.anchor) : before ? stem - x - width : x - stem
+      const [from, to] = reachOf(label, stem ?? 0)
+      const distance = stem === null ? Math.abs(x - label.anchor) : before ? from - x - width : x - to
       const leader = stem !== null && distance > LABEL_GAP + 1
       const cost = distance + (before ? 14 : 0) + (leader ? 10 : 0)
-      list.push({ id: label.id, row, x, before, leader, box, stem, cost })
+      list.push({ id: label.id, row, x, before, leader, box, stem, reach: [from, to], cost })
     }
   }
   return list.sort((a, b) => a.cost - b.cost || a.row - b.row || a.x - b.x)
@@ -109,9 +114,15 @@ function placesAlong(label: RulerLabel, space: LabelSpace, stems: readonly numbe
   const { stem, width } = label
   if (stem === null) return [label.anchor, label.anchor - width - 2 * LABEL_GAP]
   const edges = [...space.stops, ...stems, ...space.obstacles.flatMap((o) => [o.left, o.right])]
-  const after = [stem, ...edges.filter((edge) => edge > stem)].map((edge) => edge + LABEL_GAP)
-  const before = [stem, ...edges.filter((edge) => edge < stem)].map((edge) => edge - LABEL_GAP - width)
+  const [from, to] = reachOf(label, stem)
+  const after = [to, ...edges.filter((edge) => edge > to)].map((edge) => edge + LABEL_GAP)
+  const before = [from, ...edges.filter((edge) => edge < from)].map((edge) => edge - LABEL_GAP - width)
   return [...new Set([...after, ...before])]
+}
+
+/** From where to where a label has a line of its own in its row: its stem alone, or its range. */
+function reachOf({ reach }: RulerLabel, stem: number): readonly [number, number] {
+  return reach === undefined ? [stem, stem] : [Math.min(stem, reach[0]), Math.max(stem, reach[1])]
 }
 
 /** Fewest labels left out, then least cost; rows read downwards in the order of their stems where that is free. */
@@ -166,10 +177,10 @@ function crosses(a: Candidate, b: Candidate): boolean {
   return a.stem > b.box.left - CLEAR - 1 && a.stem < b.box.right + CLEAR + 1
 }
 
-/** A leader occupies its row from dot to text. */
+/** A range and a leader occupy their row, from there to the text. */
 function leaderMeets(a: Candidate, b: Candidate): boolean {
   if (a.stem === null || a.row !== b.row) return false
-  const left = Math.min(a.stem, a.box.left)
-  const right = Math.max(a.stem, a.box.right)
+  const left = Math.min(a.reach[0], a.box.left)
+  const right = Math.max(a.reach[1], a.box.right)
   return b.box.left < right + CLEAR && b.box.right > left - CLEAR
 }

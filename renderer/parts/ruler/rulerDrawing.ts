@@ -82,6 +82,9 @@ export function drawRuler(
   const labels: RulerLabel[] = model.estimates.map((estimate) => ({
     id: estimate.id,
     stem: held(estimate.value),
+    ...(estimate.low === null || estimate.high === null
+      ? {}
+      : { reach: [held(estimate.low), held(estimate.high)] as const }),
     anchor: 0,
     width: measure(estimate.text),
     row: null,
@@ -119,8 +122,8 @@ export function drawRuler(
         label === undefined || !label.leader
           ? null
           : label.before
-            ? [label.x + textWidth + 2, x - 4]
-            : [x + 4, label.x - LABEL_GAP / 2],
+            ? [label.x + textWidth + 2, held(estimate.low ?? estimate.value) - 4]
+            : [held(estimate.high ?? estimate.value) + 4, label.x - LABEL_GAP / 2],
       range: estimate.low === null || estimate.high === null ? null : [held(estimate.low), held(estimate.high)],
     }
   }

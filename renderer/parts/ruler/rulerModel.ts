@@ -1,6 +1,7 @@
 /**
  * What the ruler shows of a plan and its results: estimates as ticks, the band, the outline. Pure.
  */
+import type { JetEnsemble } from '../../../core/coaxial'
 import { formatQuantity } from '../../../core/quantity'
 import type { Plan } from '../../../core/plan'
 import type { FormationNumbers, PulseResult } from '../../../core/pulse'
@@ -40,8 +41,13 @@ export function planStrokeRatio(plan: Plan): number {
   return plan.programme.stroke / plan.nozzle.diameter
 }
 
-/** The ruler of a plan; `pulse` is null before the first result. */
-export function rulerModel(plan: Plan, pulse: PulseResult | null): RulerModel {
+/**
+ * The ruler of a plan.
+ *
+ * @param pulse null before the first result
+ * @param formation the runs behind the computed formation number, for its range; null where they are not at hand
+ */
+export function rulerModel(plan: Plan, pulse: PulseResult | null, formation: JetEnsemble | null = null): RulerModel {
   const strokeRatio = planStrokeRatio(plan)
   if (pulse === null) return { strokeRatio, band: null, estimates: [], outline: [], absence: null }
   const { formationNumber } = pulse
@@ -49,6 +55,7 @@ export function rulerModel(plan: Plan, pulse: PulseResult | null): RulerModel {
     const value = formationNumber[id]
     if (value === null) return []
     const adopted = plan.models.formationNumber === id
+    if (id === 'computed') return [{ ...computedEstimate(value, formation), adopted }]
     return [{ id, value, low: null, high: null, text: `${name} ${value.toFixed(2)}`, adopted }]
   })
   return {
@@ -59,6 +66,18 @@ export function rulerModel(plan: Plan, pulse: PulseResult | null): RulerModel {
     absence: estimates.length > 0 ? null : absenceOf(formationNumber),
   }
 }
+
+/** The computed jet's number is a range: what modifies its mean for this nozzle modifies its ends alike. */
+function computedEstimate(value: number, formation: JetEnsemble | null): Omit<RulerEstimate, 'adopted'> {
+  const base = { id: 'computed', value }
+  const { formationNumber: mean, formationNumberLow: low, formationNumberHigh: high } = formation ?? NO_RANGE
+  if (mean === null || low === null || high === null || high - low < 0.005)
+    return { ...base, low: null, high: null, text: `computed ${value.toFixed(1)}` }
+  const [from, to] = [(low * value) / mean, (high * value) / mean]
+  return { ...base, low: from, high: to, text: `computed ${value.toFixed(1)} (${from.toFixed(1)} to ${to.toFixed(1)})` }
+}
+
+const NO_RANGE = { formationNumber: null, formationNumberLow: null, formationNumberHigh: null }
 
 function absenceOf(formationNumber: FormationNumbers): string {
   return formationNumber.published === null

@@ -5,7 +5,7 @@ import { run } from '../../../core/run'
 
 async function contextOf(id: string) {
   const plan = examplePlan(id)
-  const { data } = await run(plan, { sections: ['pulse'] })
+  const { data } = await run(plan, { sections: ['pulse'], jet: 'cached' })
   if (data === null || data.pulse === null) throw new Error('no pulse')
   return { plan, water: data.water, pulse: data.pulse }
 }

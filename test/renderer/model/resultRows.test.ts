@@ -14,7 +14,7 @@ import {
 import { shownUnits } from '../../../renderer/model/units'
 
 async function compute(plan: Plan) {
-  const { data } = await run(plan, { sections: ['water', 'pulse'] })
+  const { data } = await run(plan, { sections: ['water', 'pulse'], jet: 'cached' })
   if (data === null || data.pulse === null) throw new Error('nothing was computed')
   const units = shownUnits({}, magnitudesOf(data.pulse))
   return { plan, data: data satisfies RunData, pulse: data.pulse, units }

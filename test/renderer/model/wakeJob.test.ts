@@ -42,6 +42,12 @@ function heldClient() {
       return { outcome, cancel: () => (job.cancelled = true) }
     },
     picture: () => expect.unreachable('a run asks for no picture'),
+    map: () => {
+      throw new Error('no map is asked for here')
+    },
+    fields: () => {
+      throw new Error('no fields are read here')
+    },
     dispose: () => undefined,
   }
   return { client, jobs }

@@ -30,6 +30,12 @@ function countingClient() {
         cancel: () => undefined,
       }
     },
+    map: () => {
+      throw new Error('no map is asked for here')
+    },
+    fields: () => {
+      throw new Error('no fields are read here')
+    },
     dispose: () => undefined,
   }
   return { client, asked }

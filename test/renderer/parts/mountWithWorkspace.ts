@@ -4,16 +4,18 @@
 import { mount } from '@vue/test-utils'
 import { effectScope, type Component } from 'vue'
 import { defaultPlan, type Plan } from '../../../core/plan'
-import { run, wakePicture } from '../../../core/run'
-import type { Host, HostFailure, OpenedPlanFile, PlanFile } from '../../../renderer/host/types'
+import { createJetCache, run, thrusterMap, wakePicture } from '../../../core/run'
+import type { ChosenFile, Host, HostFailure, OpenedPlanFile, PlanFile } from '../../../renderer/host/types'
 import { createTheme } from '../../../renderer/model/theme'
 import { createWorkspace, WORKSPACE_KEY, type Workspace } from '../../../renderer/model/workspace'
+import { createFieldSteps } from '../../../renderer/worker/fieldSteps'
 import type { WorkerClient } from '../../../renderer/worker/client'
 
 export interface FakeHost extends Host {
   opened: OpenedPlanFile | HostFailure | null
   table: { readonly name: string; readonly text: string } | HostFailure | null
   saved: PlanFile | HostFailure | null
+  chosen: readonly ChosenFile[]
   readonly writes: { readonly file: PlanFile | null; readonly name: string; readonly text: string }[]
   readonly exports: { readonly kind: string; readonly name: string; readonly content: string | Uint8Array }[]
 }
@@ -25,11 +27,13 @@ export function fakeHost(): FakeHost {
     opened: null,
     table: null,
     saved: { token: 'file-1', name: 'saved.ringwright.json' },
+    chosen: [],
     writes: [],
     exports: [],
     openPlan: async () => host.opened,
     openDropped: async (file) => ({ token: null, name: file.name, text: await file.text() }),
     openTable: async () => host.table,
+    chooseTables: async () => host.chosen,
     async savePlan(file, name, text) {
       host.writes.push({ file, name, text })
       return host.saved
@@ -45,23 +49,39 @@ export function fakeHost(): FakeHost {
   return host
 }
 
-const directClient: WorkerClient = {
-  run: (plan, sections) => ({
-    outcome: run(plan, { sections }).then((result) => ({ kind: 'result', result })),
-    cancel: () => undefined,
-  }),
-  picture: (plan, data, request) => ({
-    outcome: wakePicture(plan, data, request).then((picture) => ({ kind: 'picture', picture })),
-    cancel: () => undefined,
-  }),
-  dispose: () => undefined,
+/** As the worker does it, with finished jets kept; nothing can be cancelled. */
+function directClient(): WorkerClient {
+  const jetCache = createJetCache()
+  const fieldSteps = createFieldSteps()
+  return {
+    run: (plan, sections, _onProgress, jet = 'run') => ({
+      outcome: run(plan, { sections, jet, sizing: jet === 'cached' ? 'off' : 'run' }, { jetCache }).then((result) => ({
+        kind: 'result',
+        result,
+      })),
+      cancel: () => undefined,
+    }),
+    picture: (plan, data, request) => ({
+      outcome: wakePicture(plan, data, request).then((picture) => ({ kind: 'picture', picture })),
+      cancel: () => undefined,
+    }),
+    map: (plan, request) => ({
+      outcome: Promise.resolve({ kind: 'map', map: thrusterMap(plan, request, jetCache) }),
+      cancel: () => undefined,
+    }),
+    fields: (step) => ({
+      outcome: fieldSteps(step).then((answer) => ({ kind: 'fields', answer })),
+      cancel: () => undefined,
+    }),
+    dispose: () => undefined,
+  }
 }
 
 export function makeWorkspace(plan: Plan = defaultPlan(), host: FakeHost = fakeHost()): Workspace {
   const workspace = effectScope(true).run(() =>
     createWorkspace({
       host,
-      client: directClient,
+      client: directClient(),
       plan,
       storage: null,
       theme: createTheme({ storage: null, root: { dataset: {} }, dark: null }),

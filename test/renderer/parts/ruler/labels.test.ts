@@ -41,6 +41,14 @@ function collisions(labels: readonly RulerLabel[], space: LabelSpace): string[] 
       }
       if (overlap(a.box, leader)) found.push(`${a.id} covers the leader of ${b.id}`)
     }
+    for (const b of boxes) {
+      const { reach } = b.request
+      if (reach === undefined) continue
+      const middle = b.box.top + space.rowHeight / 2
+      const range = { left: reach[0], right: reach[1], top: middle - 1, bottom: middle + 1 }
+      // Its own text, too, keeps clear of it.
+      if (overlap(a.box, range)) found.push(`${a.id} covers the range of ${b.id}`)
+    }
   }
   return found
 }
@@ -126,7 +134,8 @@ describe('layOutLabels', () => {
   it('finds room for all four estimates and the band at every stroke of a wide ruler', () => {
     for (let handle = 20; handle <= 1120; handle += 4) {
       const space = { ...SPACE, obstacles: [{ left: handle - 11, right: handle + 11, top: 20, bottom: 76 }] }
-      const labels = [...TYPICAL, label('computed 3.9 (3.6 to 4.3)', 441, 140)]
+      const computed = { ...label('computed 3.9 (3.6 to 4.3)', 441, 140), reach: [411, 484] as const }
+      const labels = [...TYPICAL, computed]
       expect(layOutLabels(labels, space).left, `handle at ${handle}`).toEqual([])
       expect(collisions(labels, space)).toEqual([])
     }
