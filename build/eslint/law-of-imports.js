@@ -29,7 +29,10 @@ export const CORE_ORDER = [
 ]
 
 /** Packages core may use, each behind one adapter file. */
-export const CORE_PACKAGES = { papaparse: 'core/plan/csvReader.ts' }
+export const CORE_PACKAGES = {
+  papaparse: 'core/plan/csvReader.ts',
+  'ml-levenberg-marquardt': 'core/tank/readings/leastSquares.ts',
+}
 
 const RENDERER_PACKAGES = ['vue', 'three', 'chart.js']
 const APP_CORE_ROOMS = ['base', 'plan', 'report', 'run']

@@ -17,22 +17,3 @@ export function base64Bytes(text: string): Uint8Array<ArrayBuffer> {
   }
   return bytes
 }
-
-/**
- * Doubles from base64 of their bytes in planes: the lowest byte of every double first, coefficient by coefficient.
- *
- * @param width coefficients an interval; the doubles come back interval by interval
- */
-export function base64Doubles(text: string, width: number): Float64Array<ArrayBuffer> {
-  const bytes = base64Bytes(text)
-  const count = bytes.length / 8
-  const intervals = count / width
-  const doubles = new Float64Array(count)
-  const view = new DataView(new ArrayBuffer(8))
-  for (let i = 0; i < count; i++) {
-    const place = (i % width) * intervals + Math.floor(i / width)
-    for (let plane = 0; plane < 8; plane++) view.setUint8(plane, bytes[plane * count + place] ?? 0)
-    doubles[i] = view.getFloat64(0, true)
-  }
-  return doubles
-}

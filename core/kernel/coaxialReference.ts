@@ -8,7 +8,7 @@ import { FIRST_INTERVAL, kernelTables, LARGEST_M1, SMALLEST_M1 } from './tables'
  *   u_r = 4 Gamma r r'^2 (x - x') / (pi A^3) (1 / B^2 + f / A^2)
  *   psi = 4 Gamma r^2 r'^2 / (pi A^3) C
  *
- * with e, f and C of build/kernel/table.mjs. These are the integrals of the Rosenhead-Moore kernel round the ring
+ * with e, f and C of ellipticParts.ts. These are the integrals of the Rosenhead-Moore kernel round the ring
  * (Rosenhead 1930, Moore 1972; delta = 0: Lamb, Hydrodynamics, 6th ed., art. 161) written so that nothing cancels near
  * the axis, far away or close to the ring.
  *

@@ -1,5 +1,5 @@
 import { afterEach, describe, expect, it, vi } from 'vitest'
-import { base64Bytes, base64Doubles } from '../../../core/kernel/base64'
+import { base64Bytes } from '../../../core/kernel/base64'
 
 afterEach(() => {
   vi.unstubAllGlobals()
@@ -39,15 +39,5 @@ describe('base64', () => {
       const bytes = Uint8Array.from({ length }, (_, i) => (i * 97 + length * 31) & 255)
       expect([...base64Bytes(Buffer.from(bytes).toString('base64'))]).toEqual([...bytes])
     }
-  })
-
-  it('decodes doubles from their planes of bytes, interval by interval', () => {
-    const values = Float64Array.of(0, -1.5, 1e-300, Math.PI, Infinity, 2)
-    const view = new DataView(new ArrayBuffer(48))
-    values.forEach((value, i) => view.setFloat64(8 * i, value, true))
-    // Two coefficients an interval: the first of every interval stand before the second ones in each plane.
-    const order = [0, 2, 4, 1, 3, 5]
-    const planes = Array.from({ length: 8 }, (_, plane) => order.map((i) => view.getUint8(8 * i + plane))).flat()
-    expect(base64Doubles(Buffer.from(planes).toString('base64'), 2)).toEqual(values)
   })
 })
