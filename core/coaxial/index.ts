@@ -20,6 +20,7 @@ export { checkJetInput, LARGEST_DELTA, LEAST_DELTA } from './jet/checkJetInput'
 export { FORMATION_STROKE, FORMATION_STROKE_FROM, formationInput } from './jet/formationInput'
 export { releaseJet } from './jet/release'
 export type { JetRelease, JetReleaseInput, JetSums, ReleasedRing } from './jet/releaseTypes'
+export { axialDensity, ringCut, type AxialDensity, type RingCut } from './jet/ringCut'
 export { LIP_AVERAGE } from './jet/shedding'
 export { startingJet } from './jet/startingJet'
 export type {

@@ -6,7 +6,7 @@ import type { Problem } from '../base'
 import { describeDimension, formatFull, parseQuantity, siUnit, type Dimension } from '../quantity'
 import { CHOICES, fieldDefinition, type ChoicePath, type FieldPath } from './fields'
 import type { FieldDefinition } from './fieldTypes'
-import type { JsonObject } from './types'
+import type { JsonObject } from './json'
 
 export type Problems = Problem[]
 

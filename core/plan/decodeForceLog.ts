@@ -4,7 +4,7 @@
  */
 import { forceLog, type ForceLog } from '../tank'
 import { decodeQuantity, isObject, refuse, type Problems } from './decodeFields'
-import type { Json, JsonObject } from './types'
+import type { Json, JsonObject } from './json'
 
 /** Most samples of a log. */
 export const LARGEST_FORCE_LOG = 2_000_000

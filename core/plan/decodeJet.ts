@@ -1,6 +1,7 @@
 /** The section `jet` of a plan: how the starting jet is computed. */
 import { decodeFlag, decodeOptionalNumber, type Problems } from './decodeFields'
-import type { JetSection, JsonObject } from './types'
+import type { JsonObject } from './json'
+import type { JetSection } from './types'
 
 /** How a starting jet is computed where the plan does not say, or a model is `computed` without a section. */
 export const JET_DEFAULTS: JetSection = { ensemble: true, coreGrowth: true, delta: null }

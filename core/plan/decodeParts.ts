@@ -1,8 +1,8 @@
 /** Objects and lists inside a section: what is missing is empty, what is something else is refused. */
 import { decodeValue, isObject, refuse, type Problems } from './decodeFields'
 import type { FieldDefinition } from './fieldTypes'
+import type { Json, JsonObject } from './json'
 import { quantityDefinition } from './planPaths'
-import type { Json, JsonObject } from './types'
 
 /** The object at the last key of a path; null where there is none, or what stands there is refused. */
 export function partOf(parent: JsonObject, path: string, problems: Problems): JsonObject | null {

@@ -21,9 +21,10 @@ import { decodeReadings } from './decodeReadings'
 import { decodeTankRun } from './decodeTankRun'
 import { decodeThruster } from './decodeThruster'
 import { decodeTrain, decodeWake } from './decodeWake'
+import type { JsonObject } from './json'
 import { refuseLostPaths } from './lostPaths'
 import { migrate } from './migrations'
-import { PLAN_FORMAT, PLAN_VERSION, type JsonObject, type Plan, type PlanReading } from './types'
+import { PLAN_FORMAT, PLAN_VERSION, type Plan, type PlanReading } from './types'
 
 /** Largest plan read [characters]. */
 export const LARGEST_PLAN = 50 * 1024 * 1024
@@ -134,6 +135,7 @@ function decodeSections(document: JsonObject, problems: Problems): Plan {
   const spread = section(document, 'spread', problems, false)
   const plan: Plan = {
     title: decodeText(document, 'title', problems),
+    revision: decodeText(document, 'revision', problems),
     notes: decodeText(document, 'notes', problems),
     water: water === null ? FRESH : decodeWater(water, problems),
     nozzle: nozzle === null ? ABSENT_NOZZLE : decodeNozzle(nozzle, problems),

@@ -25,7 +25,7 @@ import { decodeForce } from './decodeForceLog'
 import { listOf, partOf } from './decodeParts'
 import { READING_NUMBERS, type ReadingNumberKey } from './fieldsReadings'
 import type { FieldDefinition } from './fieldTypes'
-import type { Json, JsonObject } from './types'
+import type { Json, JsonObject } from './json'
 
 /** Most rows of a trajectory; logs have limits of their own. */
 export const LARGEST_READING_ROWS = 100_000

@@ -3,12 +3,12 @@ import { equallySpaced } from '../base'
 import { parseQuantity, siUnit, toBase } from '../quantity'
 import { checkAgainst, decodeNumber, decodeValue, describeValue, isObject, refuse, type Problems } from './decodeFields'
 import { listOf, numbersOf, partOf } from './decodeParts'
+import type { Json, JsonObject } from './json'
 import { variedDefinition } from './planPaths'
 import type { FieldDefinition } from './fieldTypes'
 import type { HeldDesign, SpreadSection, SweepField, SweepSection } from './sectionTypes'
-import type { Json, JsonObject } from './types'
 
-/** Most rows of a sweep, or runs of a matrix. */
+/** Most rows of a sweep. */
 export const LARGEST_ROWS = 100000
 
 export const SWEEP_DEFAULTS: SweepSection = { fields: [], results: [] }

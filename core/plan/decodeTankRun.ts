@@ -1,12 +1,13 @@
 /** The section `tankRun` of a plan: tank, camera, triggers, drive, practice and the matrix of runs. */
-import type {
-  CameraInput,
-  DriveInput,
-  MatrixInput,
-  PracticeInput,
-  TankInput,
-  TankRunSection,
-  TankTarget,
+import {
+  MOST_RUNS,
+  type CameraInput,
+  type DriveInput,
+  type MatrixInput,
+  type PracticeInput,
+  type TankInput,
+  type TankRunSection,
+  type TankTarget,
 } from '../tank'
 import {
   decodeChoice,
@@ -18,9 +19,9 @@ import {
   type Problems,
 } from './decodeFields'
 import { listOf, numbersAt, partOf } from './decodeParts'
-import { decodeLevels, LARGEST_ROWS } from './decodeSweep'
+import { decodeLevels } from './decodeSweep'
 import type { FieldPath } from './fields'
-import type { Json, JsonObject } from './types'
+import type { Json, JsonObject } from './json'
 
 const TANK: TankInput = { length: null, width: null, depth: null, bore: null }
 
@@ -235,16 +236,27 @@ function decodeMatrix(raw: JsonObject, problems: Problems): MatrixInput {
     minutesPerRun: decodeNumber(raw, 'tankRun.matrix.minutesPerRun', MATRIX_DEFAULTS.minutesPerRun, problems),
     minutesPerSetUp: decodeNumber(raw, 'tankRun.matrix.minutesPerSetUp', MATRIX_DEFAULTS.minutesPerSetUp, problems),
   }
-  const runs = matrix.repeats * rowsOf(matrix)
-  if (problems.length === before && runs > LARGEST_ROWS)
+  matrix.fields.forEach(({ values }, i) => refuseRepeated(values, `tankRun.matrix.fields.${i}.values`, problems))
+  const combinations = rowsOf(matrix)
+  const runs = matrix.repeats * combinations
+  if (problems.length === before && runs > MOST_RUNS)
     refuse(
       problems,
       'tankRun.matrix.fields',
       runs,
-      `at most ${LARGEST_ROWS} runs`,
-      `tankRun.matrix must have at most ${LARGEST_ROWS} runs with its repeats, got ${runs}.`,
+      `at most ${MOST_RUNS} runs`,
+      `tankRun.matrix.fields must come to at most ${MOST_RUNS} runs, got ${combinations} combinations x ${matrix.repeats} repeats = ${runs}.`,
     )
   return matrix
+}
+
+/** A level given twice would count its combinations twice without saying so. */
+function refuseRepeated(values: readonly number[], field: string, problems: Problems): void {
+  const again = values.findIndex((value, k) => values.indexOf(value) !== k)
+  if (again < 0) return
+  const at = `${field}.${again}`
+  const value = values[again]
+  refuse(problems, at, value, 'a level of its own', `${at} must be a level of its own, got ${value} again.`)
 }
 
 function rowsOf({ kind, fields, samples }: MatrixInput): number {

@@ -23,8 +23,8 @@ import {
 } from './decodeFields'
 import { listOf, numbersAt, partOf } from './decodeParts'
 import { fieldDefinition, type FieldPath } from './fields'
+import type { Json, JsonObject } from './json'
 import { quantityDefinition } from './planPaths'
-import type { Json, JsonObject } from './types'
 
 /** An actuator without limits that ejects for half the period. */
 const ACTUATOR: ActuatorInput = {

@@ -13,7 +13,8 @@ import {
   type Problems,
 } from './decodeFields'
 import { listOf } from './decodeParts'
-import type { Json, JsonObject, TrainSection, WakeSection } from './types'
+import type { Json, JsonObject } from './json'
+import type { TrainSection, WakeSection } from './types'
 import { CORE_WORDS } from './wakeFields'
 
 /** What a wake is marched with where the plan does not say. */

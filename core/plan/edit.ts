@@ -102,6 +102,11 @@ export function setTitle(plan: Plan, title: string): Plan {
   return { ...plan, title }
 }
 
+/** Set the revision of the design, as its owner counts. */
+export function setRevision(plan: Plan, revision: string): Plan {
+  return { ...plan, revision }
+}
+
 /** Set the unit a dimension is shown in. */
 export function setUnit(plan: Plan, dimension: string, unit: string): Plan {
   return { ...plan, view: { ...plan.view, units: { ...plan.view.units, [dimension]: unit } } }

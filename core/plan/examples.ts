@@ -3,13 +3,22 @@
  */
 import { readPlan } from './decodePlan'
 import { PULSE_EXAMPLES } from './examplesPulse'
+import { READINGS_EXAMPLES } from './examplesReadings'
+import { MEASURED_EXAMPLE } from './measuredPulse'
 import { TANK_EXAMPLES } from './examplesTank'
 import { VEHICLE_EXAMPLES } from './examplesVehicle'
 import { WAKE_EXAMPLES } from './examplesWake'
 import type { Example } from './exampleTypes'
 import type { Plan } from './types'
 
-export const EXAMPLES: readonly Example[] = [...PULSE_EXAMPLES, ...WAKE_EXAMPLES, ...VEHICLE_EXAMPLES, ...TANK_EXAMPLES]
+export const EXAMPLES: readonly Example[] = [
+  ...PULSE_EXAMPLES,
+  ...WAKE_EXAMPLES,
+  ...VEHICLE_EXAMPLES,
+  ...TANK_EXAMPLES,
+  ...READINGS_EXAMPLES,
+  MEASURED_EXAMPLE,
+]
 
 /**
  * Plan of an example.

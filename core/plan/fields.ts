@@ -118,7 +118,7 @@ export const FIELDS = {
     dimension: 'length',
     above: 0,
     max: 1000,
-    help: 'Length of the slug pushed out of the exit; the piston moves less by the ratio of the areas.',
+    help: 'Length of the slug pushed out of the exit, typed as a length or in exit diameters (3.2 D); the piston moves less by the ratio of the areas.',
   },
   'programme.peakSpeed': {
     label: 'Peak exit speed',

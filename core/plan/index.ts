@@ -21,6 +21,7 @@ export {
   setHeld,
   setJet,
   setNumber,
+  setRevision,
   setReadings,
   setRows,
   setSpread,
@@ -37,11 +38,37 @@ export { defaultPlan, examplePlan, EXAMPLES } from './examples'
 export type { Example } from './exampleTypes'
 export { CHOICES, fieldDefinition, FIELDS, type ChoicePath, type FieldPath } from './fields'
 export type { FieldDefinition } from './fieldTypes'
+export type { Json, JsonObject } from './json'
 export { JET_COLUMNS, jetTable, type JetOutcome } from './jetTables'
 export { checkNumber, numberAt } from './planNumbers'
 export { isFieldPath, pathHeading, quantityDefinition, variedDefinition } from './planPaths'
 export type { HeldDesign, SpreadSection, SweepField, SweepSection } from './sectionTypes'
+export { readLists } from './decodeLists'
+export {
+  ALL_LIST_KINDS,
+  mergeLists,
+  putIntoPlan,
+  sampleLists,
+  takeFromPlan,
+  withoutPart,
+  withPart,
+  withPartNamed,
+  writeLists,
+  type MergedLists,
+} from './lists'
+export {
+  LIST_KINDS,
+  LISTS_ENDING,
+  LISTS_FORMAT,
+  LISTS_VERSION,
+  NO_PARTS,
+  type ListEntry,
+  type ListKind,
+  type ListsReading,
+  type PartsLists,
+} from './listTypes'
 export { migrate, MIGRATIONS, type Migration } from './migrations'
+export { holdsMeasuredPulse, MEASURED_PULSE } from './measuredPulse'
 export { readProgrammeCsv, type ProgrammeReading } from './programmeCsv'
 export { readRingTable, type RingReading, type SkippedRow } from './ringCsv'
 export {
@@ -105,8 +132,6 @@ export {
   PLAN_VERSION,
   type Caution,
   type JetSection,
-  type Json,
-  type JsonObject,
   type ModelsInput,
   type Plan,
   type PlanReading,
@@ -139,3 +164,9 @@ export { validatePlan } from './validate'
 export { startsFromJet } from './wakeStart'
 export { CORE_WORDS, RING_COLUMNS, type RingColumn, type RingColumnKey } from './wakeFields'
 export { canonicalInput, planDocument, planFileName, writePlan } from './writePlan'
+export { eachFieldFrame, readFieldFrame, type FieldFrameChoices, type FieldFrameReading } from './fieldCsv'
+export { fieldsTable, readingsTable } from './readingsTables'
+export { choicesOfColumns, sourceLike, withoutReadings, withReadings } from './readingsMapping'
+export { readReadings, type ReadingsReading, type ReadingsTable } from './readingsCsv'
+export { READINGS_KINDS, READINGS_ROLES, type ReadingsChoices, type ReadingsRole } from './readingsColumns'
+export { READING_NUMBERS, type ReadingNumberKey } from './fieldsReadings'

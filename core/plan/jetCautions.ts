@@ -3,6 +3,7 @@
  */
 import { LIP_AVERAGE, SHORT_STROKE, SHORT_STROKE_DELTA } from '../coaxial'
 import type { NozzleInput } from '../pulse'
+import { formatFixed } from '../quantity'
 import type { CautionContext, CautionDefinition } from './cautionTypes'
 
 /** Shown member of the plan's own stroke, where there is a jet. */
@@ -73,7 +74,7 @@ export const JET_CAUTIONS: readonly CautionDefinition[] = [
     text: (context) => {
       const run = shown(context)
       if (run === null || run.strokeRatio >= SHORT_STROKE) return null
-      const begin = `The stroke of ${run.strokeRatio.toFixed(2)} D is below ${SHORT_STROKE} D`
+      const begin = `The stroke of ${formatFixed(run.strokeRatio)} D is below ${SHORT_STROKE} D`
       return run.delta <= SHORT_STROKE_DELTA
         ? `${begin}: its jet is computed at one smoothing length, ${run.delta} D, and has no spread to show.`
         : `${begin}, and the smoothing given, ${run.delta} D, takes much of the energy of so young a ring, half of it at 0.1 D; ${SHORT_STROKE_DELTA} D is meant for such strokes.`
@@ -96,7 +97,7 @@ export const JET_CAUTIONS: readonly CautionDefinition[] = [
     source: 'rule of pinch-off in the starting jet',
     text: ({ jet }) => {
       if (jet === null || jet.formation?.status !== 'done' || jet.formation.formationNumber !== null) return null
-      return `No pinch-off was seen in the computed jet with a stroke of ${jet.formation.shown.strokeRatio.toFixed(1)} D, so it gives no formation number. A speed that rises to the end and a counter-flow let a ring take more; a longer stroke may show where it ends.`
+      return `No pinch-off was seen in the computed jet with a stroke of ${formatFixed(jet.formation.shown.strokeRatio, 1)} D, so it gives no formation number. A speed that rises to the end and a counter-flow let a ring take more; a longer stroke may show where it ends.`
     },
   },
   {

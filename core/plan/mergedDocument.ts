@@ -1,5 +1,5 @@
 /** Known values of a part of the document, with what the part held beyond them in the file it was read from. */
-import type { Json, JsonObject } from './types'
+import type { Json, JsonObject } from './json'
 
 /** Values of a part by key; a key with undefined is known and not written. */
 export type Part = Readonly<Record<string, Json | undefined>>

@@ -1,7 +1,8 @@
 /**
  * Older plans are brought up one version at a time by numbered pure steps; newer ones are refused.
  */
-import { PLAN_VERSION, type JsonObject } from './types'
+import type { JsonObject } from './json'
+import { PLAN_VERSION } from './types'
 
 /** One step: takes a document of version `from` and returns one of version `from + 1`. */
 export interface Migration {

@@ -2,6 +2,7 @@
  * Cautions about what the models can tell of this pulse. Each states its number and its limit.
  */
 import type { FormationNumbers, PulseNote, PulseResult } from '../pulse'
+import { formatFixed } from '../quantity'
 import { LAMINAR_BELOW, TURBULENT_ABOVE } from '../ring'
 import type { CautionDefinition } from './cautionTypes'
 
@@ -11,7 +12,7 @@ const LOW_JET_REYNOLDS = 500
 /** Tube boundary layer that quickens the core flow by this share is worth a note: common practice. */
 const BOUNDARY_LAYER_SHARE = 1.25
 
-const two = (value: number): string => (Math.abs(value) < 1000 ? value.toFixed(2) : value.toPrecision(3))
+const two = (value: number): string => formatFixed(value)
 /** Three figures, as the results are shown. */
 const whole = (value: number): string => String(Number(value.toPrecision(3)))
 

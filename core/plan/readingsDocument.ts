@@ -2,8 +2,8 @@
 import type { ReadingRow, ReadingsSection } from '../tank'
 import { forceDocument } from './decodeForceLog'
 import { READINGS_DEFAULTS } from './decodeReadings'
+import type { Json, JsonObject } from './json'
 import { merged, mergedList, objectOf, type Part } from './mergedDocument'
-import type { Json, JsonObject } from './types'
 
 export function readingsDocument(source: Json | undefined, section: ReadingsSection): JsonObject {
   const old = objectOf(source)

@@ -1,9 +1,8 @@
 /**
  * Lists of rings read from CSV or pasted cells.
  */
-import { DomainError, requireRange } from '../base'
 import type { WakeRing } from '../filament'
-import { parseQuantity } from '../quantity'
+import { formatQuantity, parseQuantity } from '../quantity'
 import type { CoreModel } from '../ring'
 import { headingUnit, readBare, readNumber, readTextTable, type Sniffed, type TextLine } from './csvReader'
 import { RING_TABLE_KEYS, SI_RING_UNITS, type RingTableKey, type RingTableUnits } from './ringTable'
@@ -42,6 +41,9 @@ const OTHER_WORDS: Readonly<Record<string, RingTableKey>> = {
   dy: 'directionY',
   dz: 'directionZ',
 }
+
+/** Largest core radius over ring radius that is read; the march may ask for less. */
+const THICKEST_CORE = 1.5
 
 /** Value of a column that is absent or empty. */
 const USUAL: Partial<Readonly<Record<RingColumnKey, number>>> = {
@@ -184,7 +186,9 @@ function ringOf({ cells }: TextLine, columns: readonly Column[], sniffed: Sniffe
     axisRatio: value('axisRatio'),
     startTime: value('startTime'),
   }
-  return whatIsWrong(ring) ?? ring
+  const unitOf = (key: RingColumnKey): string =>
+    columns.find((column) => column.key === key)?.unit ?? SI_RING_UNITS[key]
+  return whatIsWrong(ring, unitOf) ?? ring
 }
 
 function readCore(cell: string): CoreModel | null {
@@ -203,18 +207,19 @@ function readCell(cell: string, key: RingColumnKey, unit: string, sniffed: Sniff
   return parsed.ok ? parsed.value : parsed.message
 }
 
-/** What a ring by itself breaks, in a sentence; null for nothing. */
-function whatIsWrong(ring: WakeRing): string | null {
-  try {
-    if (ring.circulation === 0) return 'circulation must not be 0: a ring without it is no ring.'
-    requireRange('radius', ring.radius, { above: 0, unit: 'm' })
-    requireRange('core radius', ring.coreRadius, { above: 0, max: 1.5 * ring.radius, unit: 'm' })
-    requireRange('axis ratio', ring.axisRatio ?? 1, { above: 0 })
-    requireRange('start', ring.startTime ?? 0, { min: 0, unit: 's' })
-    if (ring.direction.every((value) => value === 0)) return 'the direction must point somewhere, got 0, 0, 0.'
-    return null
-  } catch (error) {
-    if (error instanceof DomainError) return `${error.message}.`
-    throw error
+/** What a ring by itself breaks, in a sentence in the units of its columns; null for nothing. */
+function whatIsWrong(ring: WakeRing, unitOf: (key: RingColumnKey) => string): string | null {
+  const got = (key: RingColumnKey, limit: string, bound: number, value: number): string => {
+    const shown = (base: number): string => formatQuantity(base, unitOf(key), 6)
+    return `${RING_COLUMNS[key].label.toLowerCase()} must be ${limit} ${shown(bound)}, got ${shown(value)}.`
   }
+  const { circulation, radius, coreRadius, axisRatio = 1, startTime = 0 } = ring
+  if (circulation === 0) return 'circulation must not be 0: a ring without it is no ring.'
+  if (!(radius > 0)) return got('radius', 'above', 0, radius)
+  if (!(coreRadius > 0)) return got('coreRadius', 'above', 0, coreRadius)
+  if (coreRadius > THICKEST_CORE * radius) return got('coreRadius', 'at most', THICKEST_CORE * radius, coreRadius)
+  if (!(axisRatio > 0)) return got('axisRatio', 'above', 0, axisRatio)
+  if (startTime < 0) return got('startTime', 'at least', 0, startTime)
+  if (ring.direction.every((value) => value === 0)) return 'the direction must point somewhere, got 0, 0, 0.'
+  return null
 }

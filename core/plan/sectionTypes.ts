@@ -1,7 +1,7 @@
 /**
  * Sections of the plan around the core of it: sweep, spread and what is held.
  */
-import type { JsonObject } from './types'
+import type { JsonObject } from './json'
 
 /** One field of the plan with the values it is to take. */
 export interface SweepField {

@@ -3,9 +3,10 @@
  */
 import type { PulseResult } from '../pulse'
 import type { SizingResult, ThrusterResult } from '../thruster'
-import type { TankRunResult } from '../tank'
+import type { ReadingsResult, TankRunResult } from '../tank'
 import type { WaterProperties } from '../water'
 import { jetSummary, type JetOutcome } from './jetTables'
+import { readingsSummary } from './readingsTables'
 import { spreadRunSummary, spreadSummary } from './spreadTables'
 import type { SpreadOutcome, SweepOutcome } from './variedTypes'
 import type { Caution } from './types'
@@ -28,6 +29,7 @@ export interface SummaryResults {
   readonly wake: WakeOutcome | null
   readonly thruster: ThrusterOutcome | null
   readonly tankRun: TankRunResult | null
+  readonly readings?: ReadingsResult | null
   readonly sweep: SweepOutcome | null
   readonly spread: SpreadOutcome | null
   readonly cautions: readonly Caution[]
@@ -56,7 +58,7 @@ export function summaryText(input: SummaryInput): string {
 
 /** The sections of the summary as one object; undefined where one was not computed. Dotted paths of results are read in it. */
 export function summaryDocument(results: SummaryResults): Readonly<Record<string, unknown>> {
-  const { water, pulse, jet, wake, thruster, tankRun, sweep, spread, cautions } = results
+  const { water, pulse, jet, wake, thruster, tankRun, readings = null, sweep, spread, cautions } = results
   return {
     water: waterSummary(water),
     pulse: pulse === null ? undefined : pulseSummary(pulse),
@@ -64,6 +66,7 @@ export function summaryDocument(results: SummaryResults): Readonly<Record<string
     wake: wake === null ? undefined : wakeSectionSummary(wake),
     thruster: thruster === null ? undefined : thrusterSummary(thruster),
     tankRun: tankRun === null ? undefined : tankRunSummary(tankRun, cautions),
+    readings: readings === null ? undefined : readingsSummary(readings),
     sweep: sweep === null ? undefined : { rows: sweep.total, fields: sweep.paths, results: sweep.results },
     spread: spread === null ? undefined : spreadSummary(spread),
     spreadRun: spread === null ? undefined : spreadRunSummary(spread),

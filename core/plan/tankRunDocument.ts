@@ -1,8 +1,8 @@
 /** The sections `tankRun`, `sweep`, `spread` and `held` as they are saved. */
 import type { MatrixInput, TankRunSection, TankTarget } from '../tank'
+import type { Json, JsonObject } from './json'
 import { merged, mergedList, objectOf, type Part } from './mergedDocument'
 import type { HeldDesign, SpreadSection, SweepSection } from './sectionTypes'
-import type { Json, JsonObject } from './types'
 
 export function tankRunDocument(source: Json | undefined, section: TankRunSection): JsonObject {
   const old = objectOf(source)

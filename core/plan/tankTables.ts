@@ -2,10 +2,9 @@
  * Tables of a tank run written out: the piston's profile with what to read first, the run matrix, arrivals and triggers.
  */
 import { at } from '../base'
-import { siUnit } from '../quantity'
 import type { PistonProfile, ProfileRows, RunMatrix, TankArrival, TriggerRow } from '../tank'
 import { writeCsv } from './csvWriter'
-import { quantityDefinition } from './planPaths'
+import { pathHeading } from './planPaths'
 import type { Caution } from './types'
 
 export const PROFILE_COLUMNS = [
@@ -52,18 +51,9 @@ export function profileReadFirst(profile: PistonProfile, cautions: readonly Caut
 /** run-matrix.csv: one row a run, in the order of the day. */
 export function runMatrixTable({ paths, runs }: RunMatrix): string {
   return writeCsv(
-    ['run', 'block', 'repeat', ...paths.map(heading)],
+    ['run', 'block', 'repeat', ...paths.map(pathHeading)],
     runs.map(({ run, block, repeat, values }) => [run, block, repeat, ...values]),
   )
-}
-
-/** A plan path with its SI unit; the bare path where the plan has no such number, or a pure one. */
-function heading(path: string): string {
-  const definition = quantityDefinition(path)
-  if (definition === null) return path
-  // Plain digits, as in the heads of the other tables.
-  const unit = siUnit(definition.dimension).replace('²', '2').replace('³', '3').replace('·', ' ')
-  return unit === '' ? path : `${path} (${unit})`
 }
 
 export const ARRIVAL_COLUMNS = [

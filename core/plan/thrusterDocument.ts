@@ -1,7 +1,7 @@
 /** The section `thruster` as it is saved: SI numbers, every key, what this version does not know kept. */
 import type { DragInput, DutyPoint, SearchInput, ThrusterSection, VehicleInput } from '../thruster'
+import type { Json, JsonObject } from './json'
 import { merged, mergedList, objectOf, type Part } from './mergedDocument'
-import type { Json, JsonObject } from './types'
 
 export function thrusterDocument(source: Json | undefined, section: ThrusterSection): JsonObject {
   const old = objectOf(source)

@@ -8,6 +8,7 @@ import type { FormationBasis, NozzleInput, OverPressureBasis, ProgrammeInput } f
 import type { ReadingsSection, TankRunSection } from '../tank'
 import type { ThrusterSection } from '../thruster'
 import type { WaterInput } from '../water'
+import type { JsonObject } from './json'
 import type { HeldDesign, SpreadSection, SweepSection } from './sectionTypes'
 
 export const PLAN_FORMAT = 'ringwright-plan'
@@ -64,17 +65,13 @@ export interface JetSection {
   readonly delta: number | null
 }
 
-/** Anything JSON can hold. */
-export type Json = null | boolean | number | string | readonly Json[] | JsonObject
-export interface JsonObject {
-  readonly [key: string]: Json
-}
-
 /**
  * A decoded plan. Keys this version does not know are kept as they came in `source` and written back on save.
  */
 export interface Plan {
   readonly title: string
+  /** Of the design, as its owner counts: printed in the record; '' for none. */
+  readonly revision: string
   readonly notes: string
   readonly water: WaterInput
   readonly nozzle: NozzleInput

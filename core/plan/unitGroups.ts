@@ -89,7 +89,7 @@ export const UNIT_KEYS: readonly UnitKey[] = [
 export type Units = Readonly<Record<UnitKey, string>>
 
 /** Fields whose group is not simply their dimension. */
-const FIELD_GROUPS: Partial<Record<FieldPath, UnitKey>> = {
+const FIELD_GROUPS: Readonly<Record<string, UnitKey>> = {
   'water.depth': 'depth',
   'programme.riseTime': 'rampTime',
   'programme.fallTime': 'rampTime',
@@ -107,10 +107,10 @@ const FIELD_GROUPS: Partial<Record<FieldPath, UnitKey>> = {
   'tankRun.tank.depth': 'bodyLength',
   'tankRun.tank.bore': 'bodyLength',
   'tankRun.nozzleDepth': 'bodyLength',
-}
+} satisfies Partial<Record<FieldPath, UnitKey>>
 
-/** Group of a field of the plan. */
-export function unitKeyOf(path: FieldPath, dimension: Dimension): UnitKey {
+/** Group of a number of the plan. */
+export function unitKeyOf(path: string, dimension: Dimension): UnitKey {
   return FIELD_GROUPS[path] ?? (isUnitKey(dimension) ? dimension : 'number')
 }
 
@@ -130,6 +130,7 @@ const SCALES: Partial<Record<UnitKey, readonly string[]>> = {
   power: ['µW', 'mW', 'W', 'kW'],
   storedEnergy: ['J', 'kJ', 'MJ'],
   flowRate: ['µL/s', 'mL/s', 'L/s', 'm³/s'],
+  bodyLength: ['mm', 'm', 'km'],
 }
 /** The usual unit stands while its number is between these. */
 const FITS = [0.1, 10000] as const

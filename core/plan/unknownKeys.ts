@@ -2,9 +2,10 @@
  * Keys of a plan that this version does not know. They are kept and written back, but a misspelt field would be among them, so
  * whoever reads a plan tells them.
  */
+import type { Json, JsonObject } from './json'
 import { planDocument } from './writePlan'
 import { isObject } from './decodeFields'
-import type { Json, JsonObject, Plan } from './types'
+import type { Plan } from './types'
 
 /** Sections whose every key this version knows; others belong to later capabilities and are not looked into. */
 const KNOWN_SECTIONS = [
@@ -73,7 +74,7 @@ function unknownOf(given: Json | undefined, taken: Json | undefined, path: strin
 }
 
 /** Known keys that a saved plan may leave out. */
-const OPTIONAL: JsonObject = { notes: '', title: '' }
+const OPTIONAL: JsonObject = { notes: '', title: '', revision: '' }
 function isOptional(section: string, key: string): boolean {
   return (
     (section === 'water' && ['density', 'kinematicViscosity', 'vapourPressure'].includes(key)) ||

@@ -1,17 +1,19 @@
 /**
  * A plan becomes its text: two-space indent, stable key order, SI numbers, what this version does not know kept.
  */
+import type { Json, JsonObject } from './json'
 import { merged, pair } from './mergedDocument'
 import { readingsDocument } from './readingsDocument'
 import { heldDocument, spreadDocument, sweepDocument, tankRunDocument } from './tankRunDocument'
 import { thrusterDocument } from './thrusterDocument'
-import { PLAN_FORMAT, PLAN_VERSION, type Json, type JsonObject, type Plan, type WakeSection } from './types'
+import { PLAN_FORMAT, PLAN_VERSION, type Plan, type WakeSection } from './types'
 
 /** Order of the sections in a file, as the contract lists them; unknown ones follow in their own order. */
 const SECTION_ORDER = [
   'format',
   'version',
   'title',
+  'revision',
   'notes',
   'water',
   'nozzle',
@@ -36,6 +38,7 @@ export function planDocument(plan: Plan): JsonObject {
     format: PLAN_FORMAT,
     version: PLAN_VERSION,
     title: plan.title,
+    revision: plan.revision === '' ? undefined : plan.revision,
     notes: plan.notes,
     water: merged(plan.source['water'], {
       ...plan.water,
@@ -89,11 +92,11 @@ export function writePlan(plan: Plan): string {
 }
 
 /**
- * What decides the results of a plan, as one text to be hashed: the document without title, notes and view.
+ * What decides the results of a plan, as one text to be hashed: the document without title, revision, notes and view.
  * Two plans with the same text compute the same numbers.
  */
 export function canonicalInput(plan: Plan): string {
-  const beside = new Set(['title', 'notes', 'view', 'held'])
+  const beside = new Set(['title', 'revision', 'notes', 'view', 'held'])
   return JSON.stringify(Object.fromEntries(Object.entries(planDocument(plan)).filter(([key]) => !beside.has(key))))
 }
 

@@ -81,3 +81,25 @@ export {
   type ReadingsSection,
   type ReadingsSource,
 } from './readings/types'
+export { createFieldAnalysis, frameVorticity, type FieldAnalysis } from './readings/fieldAnalysis'
+export type { FieldFrame } from './readings/fieldGrid'
+export type { FieldNumbers, FieldOptions, FieldResult, FieldRing, MeasuredValue } from './readings/fieldTypes'
+export type { FittedValue, ReadingResidual, RingFit } from './readings/fitTypes'
+export { compareReadings, type ReadingsInput, type ReadingsPath, type ReadingsResult } from './readings/compareReadings'
+export { fitRing, type RingFitInput } from './readings/fitRing'
+export {
+  analyseForce,
+  type ForceInput,
+  type ForceResult,
+  type ForceValue,
+  type ForceZero,
+} from './readings/forceAnalysis'
+export type { StandResonance } from './readings/forceSpectrum'
+export type { HeldParameter } from './readings/identify'
+export type { MeasuredQuantity } from './readings/measurements'
+export { ringAt, type RingStart, type RingState, type RingSurroundings } from './readings/pathModel'
+export { programmeOfLog, type AsRunProgramme } from './readings/pistonLog'
+export type { ComparedQuantity, PredictedRing, PredictedValue, Prediction } from './readings/predicted'
+export { fitRepeats, type Repeats, type RepeatValue, type RunFit } from './readings/repeats'
+export type { Cause, Sensitivity } from './readings/sensitivities'
+export { QUANTITY_WORDS, verdictOf, type ComparedValue, type Explanation, type Verdict } from './readings/verdict'

@@ -29,6 +29,8 @@ const FIRST_GUESS = 1.25
 const MOST_DOUBLINGS = 16
 /** A ring this much slower than it began has all but stopped. */
 const STOPPED_SHARE = 0.005
+/** A core wider than this over the ring's radius is no ring any more: Hill's vortex, the thickest steady one, has the root of 2. */
+const THICKEST_CORE = Math.SQRT2
 
 export interface RingPathInput {
   readonly ring: PulseRing
@@ -124,6 +126,8 @@ export async function ringPath(
     time *= 2
   }
   const passages = await passagesOf(wake, born, duration, marched)
+  const arrivals = wake.events.filter(({ event }) => event === 'arrival').length
+  if (passages.length < arrivals) shortOf = 'its core has grown wider than the ring before'
   return pathOf(input, wake, { x: born.x, tubeRadius, shortOf, passages })
 }
 
@@ -140,6 +144,8 @@ async function passagesOf(
   for (const event of wake.events) {
     if (event.event !== 'arrival' || event.x === null) continue
     const before = stateBefore(wake, event.time)
+    // Nothing of the thin-core law is left then: no time and speed are told.
+    if (before.ring.coreRadius > THICKEST_CORE * before.ring.radius) break
     const rest = event.time - before.time
     const path =
       rest > 0

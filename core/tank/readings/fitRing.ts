@@ -3,7 +3,8 @@
  */
 import { at } from '../../base'
 import type { FittedValue, ReadingResidual, RingFit } from './fitTypes'
-import { carriedByData, FIT_WORDS, notCarried, type HeldParameter } from './identify'
+import { fitNotes, OUTLIER_ABOVE } from './fitNotes'
+import { carriedByData, notCarried, type HeldParameter } from './identify'
 import { leastSquares, type LeastSquaresResult } from './leastSquares'
 import { countOf, MEASURED, measurementsOf, type MeasuredQuantity, type Measurement } from './measurements'
 import { ringAt, type RingStart, type RingSurroundings } from './pathModel'
@@ -12,17 +13,11 @@ import { correlationOf } from './smallMatrix'
 import { NORMAL_95, student95 } from './student'
 import type { FitName, ReadingRow } from './types'
 
-/** Robust normalised residual above which a reading is marked. */
-export const OUTLIER_ABOVE = 3.5
-/** Correlation above which two parameters are told to be hardly apart. */
-export const CORRELATED_ABOVE = 0.95
 /** Scatters of the quantities are estimated in this many turns: each reweights the next. */
 const TURNS = 5
 /** Scatter taken at first, over radius or circulation, and the least that is believed. */
 const FIRST_SCATTER = 0.02
 const LEAST_SCATTER = 1e-9
-/** Scatter over what the uncertainties say, from which it is told. */
-const TELL_SCATTER = 1.5
 
 export interface RingFitInput {
   /** Calibrated rows: time from the piston's start, SI. */
@@ -68,6 +63,7 @@ export function fitRing(input: RingFitInput): RingFit {
   const residuals = residualsOf(list, attempt.ring, around)
   const errors = errorsOf(attempt)
   const chi = sigma === 'given' && freedom > 0 ? attempt.solved.sumOfSquares / freedom : null
+  const inferred = names.includes('circulation') && !names.includes('radius') && countOf(list, 'circulation') === 0
   const correlation = attempt.solved.covariance === null ? [] : correlationOf(attempt.solved.covariance)
   return {
     status: attempt.solved.status,
@@ -87,7 +83,7 @@ export function fitRing(input: RingFitInput): RingFit {
     rows: new Set(list.map(({ row }) => row)).size,
     forming,
     iterations: attempt.solved.iterations,
-    notes: notesOf({ names, correlation, chi, freedom, sigma, borrowed, forming, residuals, ring: attempt.ring }),
+    notes: fitNotes({ names, correlation, chi, freedom, sigma, borrowed, forming, residuals, inferred }),
   }
 }
 
@@ -148,11 +144,17 @@ function weighted(
   }
   const floors = { x: start.radius, radius: start.radius, circulation: start.circulation }
   const unknown = MEASURED.filter((quantity) => countOf(list, quantity) > 0 && !hasSigma(list, quantity))
+  // The scatter of a single quantity only scales the errors: one turn tells it.
+  const alone = list.every(({ quantity }) => quantity === unknown[0])
+  const turns = unknown.length === 0 ? 0 : alone ? 1 : TURNS
   let ring = start
+  let iterations = 0
   for (let turn = 0; ; turn++) {
-    const solved = solve(names, list, ring, around, sigmas)
+    const last = solve(names, list, ring, around, sigmas)
+    iterations += last.iterations
+    const solved = { ...last, iterations }
     ring = ringOf(names, solved.parameters, start)
-    if (turn === (unknown.length === 0 ? 0 : TURNS)) return { names, ring, solved, sigmas }
+    if (turn === turns) return { names, ring, solved, sigmas }
     const share = Math.max(1, list.length - names.length) / list.length
     const next = { ...sigmas }
     for (const quantity of unknown) {
@@ -265,48 +267,4 @@ function rmsOf(residuals: readonly ReadingResidual[], quantity: MeasuredQuantity
   return own.length === 0
     ? null
     : Math.sqrt(own.reduce((sum, { residual }) => sum + residual * residual, 0) / own.length)
-}
-
-function notesOf(of: {
-  readonly names: readonly FitName[]
-  readonly correlation: readonly (readonly number[])[]
-  readonly chi: number | null
-  readonly freedom: number
-  readonly sigma: RingFit['sigma']
-  readonly borrowed: readonly MeasuredQuantity[]
-  readonly forming: number
-  readonly residuals: readonly ReadingResidual[]
-  readonly ring: RingStart
-}): string[] {
-  const notes: string[] = []
-  for (const [i, row] of of.correlation.entries())
-    for (let j = 0; j < i; j++) {
-      const value = at(row, j)
-      if (Math.abs(value) > CORRELATED_ABOVE)
-        notes.push(
-          `${capital(FIT_WORDS[at(of.names, i)])} and ${FIT_WORDS[at(of.names, j)]} are hardly told apart: correlation ${value.toFixed(3)}. Their errors belong together.`,
-        )
-    }
-  if (of.sigma !== 'given')
-    notes.push(
-      `${of.sigma === 'mixed' ? 'Some readings' : 'The readings'} come without uncertainties: the scatter about the fit stands for them, and 95 % intervals use Student's factor for ${of.freedom} degrees of freedom.`,
-    )
-  if (of.chi !== null && Math.sqrt(of.chi) > TELL_SCATTER)
-    notes.push(
-      `The readings scatter ${Math.sqrt(of.chi).toFixed(1)} times as much as their uncertainties say: the model, or the uncertainties, do not describe them, and the standard errors are too small.`,
-    )
-  if (of.borrowed.length > 0)
-    notes.push(`Rows without an uncertainty of ${of.borrowed.join(', ')} were given the median of the others.`)
-  if (of.forming > 0)
-    notes.push(`${of.forming} ${of.forming === 1 ? 'row is' : 'rows are'} left out: the ring is still forming then.`)
-  const outliers = of.residuals.filter(({ outlier }) => outlier).length
-  if (outliers > 0)
-    notes.push(
-      `${outliers} ${outliers === 1 ? 'reading lies' : 'readings lie'} more than ${OUTLIER_ABOVE} robust standard deviations off: marked, not dropped.`,
-    )
-  return notes
-}
-
-function capital(text: string): string {
-  return text.charAt(0).toUpperCase() + text.slice(1)
 }

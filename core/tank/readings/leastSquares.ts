@@ -11,8 +11,8 @@ import { at } from '../../base'
 import { dot, inverseOf, times } from './smallMatrix'
 
 /** Steps of the library in one round, and rounds. */
-const ROUND = 5
-const MOST_ROUNDS = 40
+const ROUND = 3
+const MOST_ROUNDS = 60
 /** Converged where a full step could gain less than this share of the sum of squares, or this much of it. */
 const GAIN_SHARE = 1e-10
 const GAIN = 1e-12

@@ -3,7 +3,7 @@
  *
  * Laminar: R and Gamma stay, a^2 grows by 4 nu t, and the thin-core law is integrated exactly. Turbulent: R grows by a fixed share of the
  * ring's own way at constant Gamma R^2 and a/R. The walls slow it as they do a dipole, by Gamma R^2, which neither law changes. Before
- * its start the ring is taken back at the speed it starts with.
+ * its start the law is carried back as far as half of the time the ring is old by it, and from there at the speed of then.
  */
 import type { WakeAgeing } from '../../coaxial'
 import { CORE_CONSTANT, TURBULENT_GROWTH_RATE } from '../../ring'
@@ -41,14 +41,28 @@ export interface RingState {
   readonly speed: number
 }
 
+/** The law is carried back by this share of the time since the ring would have been a point, or its core none. */
+const BACK_SHARE = 0.5
+
 /** The ring at a time [s]. Not a number where the core is so thick that the thin-core law has no forward speed. */
 export function ringAt(start: RingStart, around: RingSurroundings, time: number): RingState {
-  const { circulation, radius, coreRadius } = start
   const since = time - start.time
+  const back = -BACK_SHARE * ageAtStart(start, around)
+  if (since >= back) return lawAt(start, around, since)
+  const first = lawAt(start, around, back)
+  return { ...first, x: first.x + first.speed * (since - back) }
+}
+
+/** How long before its start the law would have begun [s]. */
+function ageAtStart({ circulation, radius, coreRadius }: RingStart, around: RingSurroundings): number {
+  if (around.ageing === 'laminar') return (coreRadius * coreRadius) / (4 * around.kinematicViscosity)
+  return radius / TURBULENT_GROWTH_RATE / (4 * ownSpeed(circulation, radius, coreRadius))
+}
+
+function lawAt(start: RingStart, around: RingSurroundings, since: number): RingState {
+  const { circulation, radius, coreRadius } = start
   const drift = around.axialFlow + around.wallSlowing * circulation * radius * radius
-  const first = ownSpeed(circulation, radius, coreRadius)
   const carried = start.x + drift * since
-  if (since <= 0) return { x: carried + first * since, radius, circulation, coreRadius, speed: first + drift }
   if (around.ageing === 'laminar') {
     const grown = Math.sqrt(coreRadius * coreRadius + 4 * around.kinematicViscosity * since)
     const way = (circulation / (4 * Math.PI * radius)) * since * meanShare(start, around.kinematicViscosity * since)
@@ -61,6 +75,7 @@ export function ringAt(start: RingStart, around: RingSurroundings, time: number)
     }
   }
   // (s / s0)^4 = 1 + 4 U0 t / s0 from the virtual origin; expm1 and log1p keep short ways.
+  const first = ownSpeed(circulation, radius, coreRadius)
   const origin = radius / TURBULENT_GROWTH_RATE
   const way = origin * Math.expm1(Math.log1p((4 * first * since) / origin) / 4)
   const size = 1 + way / origin

@@ -63,9 +63,10 @@ const TRIGGERS: Readonly<Record<string, Readonly<Record<string, unknown>>>> = {
 }
 
 describe('cautions', () => {
-  // Those of the starting jet have their triggers in jetCautions.test.ts.
+  // Those of the starting jet, the thruster, the tank, sizing and spread have their triggers in tests of their own.
+  const elsewhere = /^(?:jet|thruster|tank|sizing|spread)-/
   const ids = CAUTIONS.filter(({ group }) => group === 'model').map(({ id }) => id)
-  it.each(ids.filter((id) => !id.startsWith('jet-')))('%s fires on its trigger', async (id) => {
+  it.each(ids.filter((id) => !elsewhere.test(id)))('%s fires on its trigger', async (id) => {
     const trigger = TRIGGERS[id]
     if (trigger === undefined) throw new Error(`no trigger is written down for ${id}`)
     expect(await idsOf(trigger)).toContain(id)
@@ -104,6 +105,10 @@ describe('cautions', () => {
       jet: null,
       jetMissing: null,
       wakeNotes: [],
+      thruster: null,
+      sizing: null,
+      tankRun: null,
+      spread: null,
     }
     const hazards = [
       ...cautionsFor(context, 'laboratory'),

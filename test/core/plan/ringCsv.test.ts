@@ -91,7 +91,7 @@ describe('readRingTable', () => {
     expect(reading.skipped.map(({ line }) => line)).toEqual([3, 4, 5, 6, 7])
     const messages = reading.skipped.map(({ message }) => message)
     expect(at(messages, 0)).toMatch(/^Line 3: Radius needs a length/)
-    expect(at(messages, 1)).toMatch(/^Line 4: core radius must be at most 0\.03 m, got 0\.04 m/)
+    expect(at(messages, 1)).toMatch(/^Line 4: core radius must be at most 30\u00A0mm, got 40\u00A0mm\.$/)
     expect(at(messages, 2)).toMatch(/^Line 5: circulation must not be 0/)
     expect(at(messages, 3)).toMatch(/^Line 6: core radius must be given/)
     expect(at(messages, 4)).toMatch(/^Line 7: core must be one of uniform, hollow, Gaussian, got "solid"/)

@@ -86,8 +86,16 @@ describe('the section tankRun', () => {
     ],
     [{ matrix: { fields: [{ path: 'tankRun.matrix.seed', values: [1] }] } }, /fields\.0\.path must be the dotted path/],
     [
-      { matrix: { repeats: 1000, fields: [{ path: 'nozzle.diameter', from: 0.01, to: 0.02, count: 101 }] } },
-      /tankRun\.matrix must have at most 100000 runs with its repeats, got 101000/,
+      { matrix: { repeats: 1000, fields: [{ path: 'nozzle.diameter', from: 0.01, to: 0.02, count: 6 }] } },
+      /tankRun\.matrix\.fields must come to at most 5000 runs, got 6 combinations x 1000 repeats = 6000/,
+    ],
+    [
+      { matrix: { kind: 'latin', samples: 1700, fields: [{ path: 'nozzle.diameter', values: [0.01, 0.02] }] } },
+      /must come to at most 5000 runs, got 1700 combinations x 3 repeats = 5100/,
+    ],
+    [
+      { matrix: { fields: [{ path: 'nozzle.diameter', values: [0.01, 0.02, 0.01] }] } },
+      /fields\.0\.values\.2 must be a level of its own, got 0\.01 again/,
     ],
   ])('refuses %j with field, value and limit', (tankRun, message) => {
     expect(refusals(tankRun)).toMatch(message)

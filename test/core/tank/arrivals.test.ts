@@ -44,6 +44,25 @@ function bornOf(pulse: PulseInput) {
   return { ...born, duration }
 }
 
+describe('a small slow ring', () => {
+  // Its core outgrows it on the way: the march goes on, but what the thin-core law says of it then is nothing to plan a run by.
+  const slow: PulseInput = {
+    ...PLAIN,
+    nozzle: { ...PLAIN.nozzle, diameter: 0.0175, pistonDiameter: 0.07 },
+    programme: { shape: 'half-sine', stroke: 0.018, peakSpeed: 0.0088, riseTime: 0, fallTime: 0, rows: [] },
+  }
+
+  it('is not told at a station it reaches with a core wider than itself, and the reason stands there', async () => {
+    const { arrivals, status } = await arriving(slow, { ageing: 'laminar', stations: [0.03, 0.088] })
+    expect(status).toBe('done')
+    const [near, far] = arrivals
+    expect(near?.time).toBeGreaterThan(0)
+    expect((near?.coreRadius ?? NaN) / (near?.radius ?? NaN)).toBeLessThan(Math.SQRT2)
+    expect([far?.time, far?.speed, far?.radius]).toEqual([null, null, null])
+    expect(far?.reason).toMatch(/does not come to 0\.088 m: its core has grown wider than the ring before/)
+  })
+})
+
 describe('arrivals', () => {
   it.each([
     ['laminar', 0.1],
