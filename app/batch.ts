@@ -21,6 +21,7 @@ export async function main(list: readonly string[]): Promise<ExitCode> {
       // npm starts scripts in the project's folder and tells where the caller stood.
       folder: process.env['INIT_CWD'] ?? process.cwd(),
       signal: controller.signal,
+      date: new Date().toISOString().slice(0, 10),
       pause: () => new Promise((resolve) => setImmediate(resolve)),
       readStandardInput: () => readStandardInput(controller.signal),
       writtenLine: (text) => console.log(text),

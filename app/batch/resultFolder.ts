@@ -7,6 +7,7 @@ import { createSaver } from '../files/atomicSave'
 import { systemCode } from '../files/fileSentence'
 
 export const SUMMARY_NAME = 'summary.json'
+export const RECORD_NAME = 'report.html'
 
 /** A folder that may not be written to, with a sentence that says why. */
 export class FolderRefusal extends Error {
@@ -17,14 +18,21 @@ export class FolderRefusal extends Error {
 }
 
 export interface ResultFolder {
-  /** Refuse to touch files that are not an earlier run's. @throws {FolderRefusal} */
-  prepare(names: readonly string[]): Promise<void>
+  /**
+   * Refuse to touch files that are not an earlier run's.
+   *
+   * @param isOurs whether something else than a summary tells that they are; default false
+   * @throws {FolderRefusal}
+   */
+  prepare(names: readonly string[], isOurs?: boolean): Promise<void>
   /** Write one file under a temporary name and rename it. */
   write(name: string, content: string): Promise<void>
   /** Take away files that an earlier run's summary lists and this run does not write. */
   dropEarlier(keep: readonly string[]): Promise<void>
   /** Take away a summary that no longer describes what lies beside it. */
   dropSummary(): Promise<void>
+  /** Take away a record of an earlier run likewise. */
+  dropRecord(): Promise<void>
 }
 
 /**
@@ -39,11 +47,11 @@ export function resultFolder(folder: string, shown: string, summaryFormat: strin
     { durable: false, syncFolder: false, unique: () => `${process.pid}-${(count += 1)}` },
   )
   return {
-    async prepare(names) {
+    async prepare(names, isOurs = false) {
       const present = await makeOrList(folder, shown)
       const inTheWay = names.filter((name) => present.includes(name))
       const [first] = inTheWay
-      if (first === undefined || (await holdsOurSummary(folder, summaryFormat))) return
+      if (first === undefined || isOurs || (await holdsOurSummary(folder, summaryFormat))) return
       throw new FolderRefusal(
         `${path.join(shown, first)} exists already and ${shown} holds no summary of an earlier run: name another folder or move the file away.`,
       )
@@ -59,6 +67,7 @@ export function resultFolder(folder: string, shown: string, summaryFormat: strin
         if (!kept.has(name) && isInside(name)) await rm(path.join(folder, name), { force: true })
     },
     dropSummary: () => rm(path.join(folder, SUMMARY_NAME), { force: true }),
+    dropRecord: () => rm(path.join(folder, RECORD_NAME), { force: true }),
   }
 }
 

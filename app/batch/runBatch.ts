@@ -3,55 +3,32 @@
  */
 import { createHash } from 'node:crypto'
 import path from 'node:path'
-import type { Problem } from '../../core/base'
+import { DomainError, type Problem } from '../../core/base'
 import {
   canonicalInput,
-  eventTable,
-  jetTable,
-  pulseTable,
   readPlan,
   SUMMARY_FORMAT,
   summaryText,
-  trajectoryTable,
+  sweepFileNames,
   unknownKeysInWords,
-  wakeFile,
-  wakeFileName,
-  wakeTimesTable,
   type Plan,
+  type SweepOutcome,
 } from '../../core/plan'
-import { availableSections, run, SECTIONS, type RunData, type Section } from '../../core/run'
+import type { RecordData } from '../../core/report'
+import { availableSections, run, SECTIONS, sweepDesign, type RunData, type Section } from '../../core/run'
 import { fileSentence } from '../files/fileSentence'
 import { decodeText, readText } from '../files/readText'
 import { PROGRAM } from '../program'
-import { readBatchArguments } from './arguments'
-import { FolderRefusal, resultFolder, SUMMARY_NAME, type ResultFolder } from './resultFolder'
+import { HELP, readBatchArguments, type BatchRequest } from './arguments'
+import { EXIT, Stop, stopWhenInterrupted, type BatchEnvironment, type ExitCode } from './environment'
+import { mergedSweep } from './mergeParts'
+import { makesRecord, recordText } from './recordFile'
+import { readingsData, type ReadingsData } from './readingsData'
+import { FolderRefusal, RECORD_NAME, resultFolder, SUMMARY_NAME, type ResultFolder } from './resultFolder'
+import { fileNames, resultFiles, wanted } from './resultTables'
+import { dropSweepNote, holdsOurPart, writeSweep } from './sweepFile'
 
-export const EXIT = { done: 0, failed: 1, refused: 2, interrupted: 130 } as const
-export type ExitCode = (typeof EXIT)[keyof typeof EXIT]
-
-export interface BatchEnvironment {
-  /** Folder that paths on the command line are relative to. */
-  readonly folder: string
-  readonly signal: AbortSignal
-  /** Lets an interrupt in between the steps of a long computation. */
-  readonly pause: () => Promise<void>
-  readStandardInput(): Promise<Uint8Array>
-  /** One line per file written. */
-  writtenLine(text: string): void
-  /** Everything else: refusals, notes. */
-  note(text: string): void
-}
-
-/** A stop with its exit code and the sentence for standard error. */
-class Stop extends Error {
-  readonly code: ExitCode
-
-  constructor(code: ExitCode, message: string) {
-    super(message)
-    this.name = 'Stop'
-    this.code = code
-  }
-}
+export { EXIT, type BatchEnvironment, type ExitCode } from './environment'
 
 /** Run the runner. Every refusal and failure becomes a sentence and an exit code; nothing is thrown. */
 export async function runBatch(list: readonly string[], environment: BatchEnvironment): Promise<ExitCode> {
@@ -76,27 +53,108 @@ async function runOnce(list: readonly string[], environment: BatchEnvironment): 
   const reading = readBatchArguments(list)
   if (!reading.ok) throw new Stop(EXIT.refused, reading.message)
   const { request } = reading
+  if (request === 'help') {
+    environment.writtenLine(HELP)
+    return
+  }
   const plan = planOf(await readInput(request.plan, environment), request.plan)
   const unknown = unknownKeysInWords(plan)
   if (unknown !== null) environment.note(`${inputName(request.plan)}: ${unknown}`)
-  const sections = sectionsOf(plan, request.only)
-  if (request.only === null) noteUncomputed(plan, environment)
+  const absolute = path.resolve(environment.folder, request.out)
+  const target: Target = {
+    plan,
+    planName: inputName(request.plan),
+    inputHash: createHash('sha256').update(canonicalInput(plan)).digest('hex'),
+    absolute,
+    shown: request.out,
+    folder: resultFolder(absolute, request.out, SUMMARY_FORMAT),
+    environment,
+  }
+  if (request.merge !== null) await mergeRun(target, request.merge)
+  else if (request.part !== null) await partRun(target, request)
+  else {
+    const asked = request.only === null || request.only.includes('readings')
+    const read = asked ? await readingsData(plan, request.data, environment) : { plan, fields: null }
+    await wholeRun({ ...target, plan: read.plan }, request, read.fields)
+  }
+}
 
-  const folder = resultFolder(path.resolve(environment.folder, request.out), request.out, SUMMARY_FORMAT)
-  await folder.prepare([...fileNames(sections), SUMMARY_NAME])
+/** What is computed, and where it goes. */
+interface Target {
+  readonly plan: Plan
+  readonly planName: string
+  readonly inputHash: string
+  readonly absolute: string
+  /** The folder as the user named it. */
+  readonly shown: string
+  readonly folder: ResultFolder
+  readonly environment: BatchEnvironment
+}
+
+async function wholeRun(target: Target, { only }: BatchRequest, fields: ReadingsData['fields']): Promise<void> {
+  const { plan, planName, folder, absolute, environment } = target
+  const sections = sectionsOf(plan, only)
+  if (only === null) noteUncomputed(plan, sections, environment)
+  const sweeps = sections.includes('sweep')
+  // A sweep that cannot be is told before anything is computed.
+  if (sweeps) designOf(target)
+  const beside = sweeps ? [sweepFileNames(null).note, sweepFileNames(null).unfinished] : []
+  await folder.prepare(
+    [...fileNames(sections), ...beside, SUMMARY_NAME],
+    sweeps && (await holdsOurPart(absolute, null)),
+  )
   stopWhenInterrupted(environment)
 
-  const result = await run(plan, { sections }, { signal: environment.signal, pause: environment.pause })
+  // Rows of a sweep are written as they come, after what is computed once.
+  const once = sections.filter((section) => section !== 'sweep')
+  const result = await run(plan, { sections: once, fields }, { signal: environment.signal, pause: environment.pause })
   if (result.status === 'cancelled') throw new Stop(EXIT.interrupted, 'The run was interrupted.')
   if (result.status === 'done' && result.data !== null) {
-    await writeResults(folder, request.out, plan, wanted(result.data, sections), environment)
+    await writeResults(target, wanted(result.data, sections), sections)
     return
   }
   const refused = result.field !== undefined
   // What was finished before a failure is kept, without a summary: that comes last and tells of a whole run.
-  if (!refused && result.data !== null)
-    await writeTables(folder, request.out, plan, wanted(result.data, sections), environment)
-  throw new Stop(refused ? EXIT.refused : EXIT.failed, `${request.plan}: ${result.message}`)
+  if (!refused && result.data !== null) await writeTables(target, wanted(result.data, sections))
+  throw new Stop(refused ? EXIT.refused : EXIT.failed, `${planName}: ${result.message}`)
+}
+
+/** One part of the sweep, with its note; no summary, since other parts may lie in the same folder. */
+async function partRun(target: Target, { part }: BatchRequest): Promise<void> {
+  const { plan, folder, absolute } = target
+  sectionsOf(plan, ['sweep'])
+  const { table, note, unfinished } = sweepFileNames(part)
+  await folder.prepare([table, note, unfinished], await holdsOurPart(absolute, part))
+  await writeRows(target, part)
+}
+
+/** The parts as one sweep, with a summary. */
+async function mergeRun(target: Target, folders: readonly string[]): Promise<void> {
+  const { plan, folder, environment } = target
+  sectionsOf(plan, ['sweep'])
+  const sweep = designOf(target)
+  const text = await mergedSweep(folders, target.inputHash, environment)
+  const { table } = sweepFileNames(null)
+  await folder.prepare([table, SUMMARY_NAME])
+  const { data, message } = await run(plan, { sections: [] })
+  if (data === null) throw new Stop(EXIT.failed, `${target.planName}: ${message}`)
+  await writeFile(target, table, text)
+  await writeSummary(target, data, [table], sweep)
+}
+
+function writeRows(target: Target, part: BatchRequest['part']): Promise<readonly string[]> {
+  const { absolute, folder, environment } = target
+  return writeSweep({ ...target, folder: absolute, part, save: (name, text) => folder.write(name, text) }, environment)
+}
+
+/** @throws {Stop} where the sweep of the plan is refused */
+function designOf({ plan, planName }: Target): SweepOutcome {
+  try {
+    return sweepDesign(plan)
+  } catch (error) {
+    if (error instanceof DomainError) throw new Stop(EXIT.refused, `${planName}: ${error.message}`)
+    throw error
+  }
 }
 
 async function readInput(given: string, environment: BatchEnvironment): Promise<string> {
@@ -138,72 +196,44 @@ function sectionsOf(plan: Plan, only: readonly string[] | null): readonly Sectio
 }
 
 function missing(plan: Plan, section: Section): string {
-  return section === 'pulse' ? plan.absent.join(' and no ') : section
+  if (section === 'water' || section === 'pulse') return plan.absent.join(' and no ')
+  if (plan[section] === null) return section
+  if (section === 'sweep') return 'field to sweep'
+  if (section === 'readings' && plan.absent.length === 0) return 'rows, logs or fields among its readings'
+  return plan.absent.length > 0 ? plan.absent.join(' and no ') : 'number that scatters'
 }
 
-/** What was asked for: a section computed only because another needs it is not written. */
-function wanted(data: RunData, sections: readonly Section[]): RunData {
-  return sections.includes('pulse') ? data : { ...data, pulse: null }
-}
-
-/** Sections a plan may hold that later versions compute: said, so that their absence is no surprise. */
-function noteUncomputed(plan: Plan, environment: BatchEnvironment): void {
-  const later = ['thruster', 'tankRun', 'readings', 'sweep', 'spread']
-  const held = later.filter((name) => typeof plan.source[name] === 'object' && plan.source[name] !== null)
-  if (held.length > 0) environment.note(`Not computed by this version, and left out: ${held.join(', ')}.`)
-}
-
-function fileNames(sections: readonly Section[]): readonly string[] {
-  return [
-    ...(sections.includes('pulse') ? ['pulse.csv'] : []),
-    ...(sections.includes('jet') ? ['jet.csv'] : []),
-    ...(sections.includes('wake') ? ['trajectory.csv', 'wake', 'wake-times.csv'] : []),
-    ...(sections.includes('jet') || sections.includes('wake') ? ['events.csv'] : []),
-  ]
-}
-
-/** Tables of the finished sections in the order they are written, each made when its turn comes. */
-function* tablesOf(plan: Plan, { pulse, jet, wake }: RunData): Generator<readonly [name: string, content: string]> {
-  const ofPulse = plan.wake === null || plan.wake.rings.length === 0
-  if (pulse !== null) yield ['pulse.csv', pulseTable(pulse)]
-  if (jet !== null) yield ['jet.csv', jetTable(jet)]
-  if (wake !== null) yield ['trajectory.csv', trajectoryTable(wake.wake)]
-  if (jet !== null || wake !== null) yield ['events.csv', eventTable(wake?.wake ?? null, jet, ofPulse)]
-  if (wake === null) return
-  for (let index = 0; index < wake.wake.outputTimes.length; index++)
-    yield [`wake/${wakeFileName(index)}`, wakeFile(wake.wake, index)]
-  yield ['wake-times.csv', wakeTimesTable(wake.wake)]
+/** Sections a plan holds that are not computed: said, so that their absence is no surprise. */
+function noteUncomputed(
+  { readings, sweep, spread }: Plan,
+  sections: readonly Section[],
+  environment: BatchEnvironment,
+): void {
+  if (readings !== null && !sections.includes('readings'))
+    environment.note('The readings hold nothing to compare, and are left out.')
+  if (sweep !== null && !sections.includes('sweep'))
+    environment.note('The sweep names no field to vary, and is left out.')
+  if (spread !== null && !sections.includes('spread'))
+    environment.note('The spread names no number that scatters, and is left out.')
 }
 
 /** Write the tables of what was finished. @returns their names */
-async function writeTables(
-  folder: ResultFolder,
-  shown: string,
-  plan: Plan,
-  data: RunData,
-  environment: BatchEnvironment,
-): Promise<readonly string[]> {
+async function writeTables(target: Target, data: RunData): Promise<readonly string[]> {
   const files: string[] = []
   try {
-    for (const [name, content] of tablesOf(plan, data)) {
-      await writeFile(folder, shown, name, content, environment)
+    for (const [name, content] of resultFiles(target.plan, data)) {
+      await writeFile(target, name, content)
       files.push(name)
     }
     return files
   } catch (error) {
-    // What was finished stays, but an earlier run's summary does not describe it.
-    if (files.length > 0) await folder.dropSummary().catch(() => undefined)
+    // What was finished stays, but an earlier run's summary and record do not describe it.
+    if (files.length > 0) await dropTellers(target, true)
     throw error
   }
 }
 
-async function writeFile(
-  folder: ResultFolder,
-  shown: string,
-  name: string,
-  content: string,
-  environment: BatchEnvironment,
-): Promise<void> {
+async function writeFile({ folder, shown, environment }: Target, name: string, content: string): Promise<void> {
   stopWhenInterrupted(environment)
   try {
     await folder.write(name, content)
@@ -213,32 +243,49 @@ async function writeFile(
   environment.writtenLine(path.join(shown, name))
 }
 
-async function writeResults(
-  folder: ResultFolder,
-  shown: string,
-  plan: Plan,
-  data: RunData,
-  environment: BatchEnvironment,
-): Promise<void> {
-  const tables = await writeTables(folder, shown, plan, data, environment)
-  const files = [...tables, SUMMARY_NAME]
-  await folder.dropEarlier(files)
-  const summary = summaryText({
-    ...data,
-    title: plan.title,
-    files,
-    program: PROGRAM,
-    inputHash: createHash('sha256').update(canonicalInput(plan)).digest('hex'),
-  })
+async function writeResults(target: Target, data: RunData, sections: readonly Section[]): Promise<void> {
+  const tables = await writeTables(target, data)
+  let record: readonly string[] = []
   try {
-    await writeFile(folder, shown, SUMMARY_NAME, summary, environment)
+    const sweeps = sections.includes('sweep')
+    const rows = sweeps ? await writeRows(target, null) : []
+    const sweep = sweeps ? designOf(target) : null
+    if (makesRecord(sections)) record = await writeRecord(target, { ...data, sweep })
+    await writeSummary(target, data, [...tables, ...rows, ...record], sweep)
+    if (sweeps) await dropSweepNote(target.absolute)
   } catch (error) {
-    if (tables.length > 0) await folder.dropSummary().catch(() => undefined)
+    if (tables.length > 0) await dropTellers(target, record.length === 0)
     throw error
   }
 }
 
-function stopWhenInterrupted(environment: BatchEnvironment): void {
-  if (environment.signal.aborted)
-    throw new Stop(EXIT.interrupted, 'The run was interrupted; what was finished is kept.')
+/** Take away the summary of an earlier run, and its record unless this run has written its own. */
+async function dropTellers({ folder }: Target, withRecord: boolean): Promise<void> {
+  await folder.dropSummary().catch(() => undefined)
+  if (withRecord) await folder.dropRecord().catch(() => undefined)
+}
+
+/** @returns its name */
+async function writeRecord(target: Target, data: RecordData): Promise<readonly string[]> {
+  const { plan, inputHash, environment } = target
+  await writeFile(target, RECORD_NAME, recordText(plan, data, inputHash, environment.date ?? 'not given'))
+  return [RECORD_NAME]
+}
+
+async function writeSummary(
+  target: Target,
+  data: RunData,
+  tables: readonly string[],
+  sweep: SweepOutcome | null,
+): Promise<void> {
+  const { plan, folder, inputHash } = target
+  const files = [...tables, SUMMARY_NAME]
+  await folder.dropEarlier(files)
+  const summary = summaryText({ ...data, sweep, title: plan.title, files, program: PROGRAM, inputHash })
+  try {
+    await writeFile(target, SUMMARY_NAME, summary)
+  } catch (error) {
+    if (tables.length > 0) await folder.dropSummary().catch(() => undefined)
+    throw error
+  }
 }

@@ -21,6 +21,8 @@ import { wakeBlocks } from './record/wake'
 
 /** Digits of the hash that stand in the title block; all of it stands in the foot. */
 const HASH_SHOWN = 16
+/** Properties of water are known better than what is made of them. */
+const WATER_DIGITS = 5
 
 /**
  * The design record of a plan and its results.
@@ -34,12 +36,13 @@ export function designRecord(plan: Plan, data: RecordData, meta: RecordMeta): Pr
   const revision = plan.revision === '' ? 'none given' : plan.revision
   return {
     kind: plan.revision === '' ? 'Design record' : `Design record, revision ${plan.revision}`,
+    numbered: true,
     title: plan.title.trim() === '' ? 'Untitled plan' : plan.title,
     titleBlock: [
       ['Revision', revision],
       ['Date', date],
       ['Program', `${program.name} ${program.version}`],
-      ['Input hash (SHA-256)', `${inputHash.slice(0, HASH_SHOWN)}…`],
+      ['Input hash (SHA-256)', inputHash === '' ? 'not known here' : `${inputHash.slice(0, HASH_SHOWN)}…`],
     ],
     blocks: [
       { kind: 'boxes', labels: ['Prepared by (name, date, signature)', 'Checked by (name, date, signature)'] },
@@ -50,9 +53,12 @@ export function designRecord(plan: Plan, data: RecordData, meta: RecordMeta): Pr
       ...limitBlocks(context),
       ...cautionBlocks(data.cautions),
       ...formulaBlocks(context),
-      ...sourceBlocks(sourceTexts(context)),
+      ...sourceBlocks(
+        sourceTexts(context),
+        data.cautions.map(({ source }) => source),
+      ),
     ],
-    foot: `${program.name} ${program.version}. Input hash (SHA-256) ${inputHash}. The same input gives the same numbers in the same version of the program.`,
+    foot: `${program.name} ${program.version}. Input hash (SHA-256) ${inputHash === '' ? 'not known here' : inputHash}. The same input gives the same numbers in the same version of the program.`,
   }
 }
 
@@ -69,14 +75,20 @@ function summaryBlocks(context: RecordContext): readonly DocumentBlock[] {
     const { result } = thruster
     rows.push(...thrustFigures(result, show).slice(0, 1))
     rows.push(['Total power', '', show.result(result.power.total, 'power'), 'put into all actuators'])
-    rows.push(['Speed of the vehicle', '', show.result(result.speed, 'vehicleSpeed'), result.dragAtSpeed === null ? 'bench' : 'where thrust meets drag, or as held'])
+    rows.push([
+      'Speed of the vehicle',
+      '',
+      show.result(result.speed, 'vehicleSpeed'),
+      result.dragAtSpeed === null ? 'bench' : 'where thrust meets drag, or as held',
+    ])
   }
+  const laws = new Set(tankRun?.rings.map(({ ageing }) => ageing)).size
   for (const arrival of tankRun?.arrivals ?? [])
     rows.push([
       `Ring at ${show.result(arrival.station, 'length')}`,
       show.range(arrival.timeLow, arrival.timeHigh, 'wakeTime'),
       show.result(arrival.time, 'wakeTime'),
-      'ends of the ring’s range and both ageing laws',
+      laws > 1 ? 'ends of the ring’s range and both ageing laws' : 'ends of the ring’s range',
     ])
   if (tankRun === null)
     for (const { station, ring, time, timeLow, timeHigh } of (wake?.arrivals ?? []).slice(0, 4))
@@ -95,7 +107,13 @@ function summaryBlocks(context: RecordContext): readonly DocumentBlock[] {
   ]
 }
 
-const HEADLINES: ReadonlySet<string> = new Set(['Ring circulation', 'Ring speed', 'Ring radius', 'Ring impulse', 'Ring Reynolds number'])
+const HEADLINES: ReadonlySet<string> = new Set([
+  'Ring circulation',
+  'Ring speed',
+  'Ring radius',
+  'Ring impulse',
+  'Ring Reynolds number',
+])
 
 /** Whether limits hold, and how much there is to read before the design is relied on. */
 function verdict(context: RecordContext): DocumentBlock[] {
@@ -109,7 +127,10 @@ function verdict(context: RecordContext): DocumentBlock[] {
       : broken.length === 0
         ? `All ${rows.length} limits that were checked hold. `
         : `${broken.length} of ${rows.length} limits are broken: ${broken.map(({ name }) => name).join(', ')}. `
-  const formulas = outside === 0 ? '' : ` ${outside} of the formulas ${outside === 1 ? 'is' : 'are'} used outside or at the edge of where ${outside === 1 ? 'it holds' : 'they hold'}; each says so.`
+  const formulas =
+    outside === 0
+      ? ''
+      : ` ${outside} of the formulas ${outside === 1 ? 'is' : 'are'} used outside or at the edge of where ${outside === 1 ? 'it holds' : 'they hold'}; each says so.`
   return [
     {
       kind: 'paragraph',
@@ -124,15 +145,20 @@ function resultBlocks(context: RecordContext): readonly DocumentBlock[] {
   const { show } = context
   return [
     { kind: 'heading', text: 'Results' },
-    { kind: 'paragraph', tone: 'small', text: 'Ranges stand first, adopted values second. A range is what the models leave open, not a tolerance of manufacture, unless it says so.' },
+    {
+      kind: 'paragraph',
+      tone: 'small',
+      text: 'Ranges stand first, adopted values second. A range is what the models leave open, not a tolerance of manufacture, unless it says so.',
+    },
+    ...notComputed(context),
     { kind: 'subheading', text: 'Water' },
     {
       kind: 'pairs',
       rows: [
-        ['Density', show.result(water.density, 'density')],
-        ['Kinematic viscosity', show.result(water.kinematicViscosity, 'kinematicViscosity')],
-        ['Vapour pressure', show.result(water.vapourPressure, 'pressure')],
-        ['Pressure at the nozzle', show.result(water.absolutePressure, 'pressure')],
+        ['Density', show.result(water.density, 'density', WATER_DIGITS)],
+        ['Kinematic viscosity', show.result(water.kinematicViscosity, 'kinematicViscosity', WATER_DIGITS)],
+        ['Vapour pressure', show.result(water.vapourPressure, 'pressure', WATER_DIGITS)],
+        ['Pressure at the nozzle', show.result(water.absolutePressure, 'pressure', WATER_DIGITS)],
       ],
     },
     ...pulseBlocks(context),
@@ -143,6 +169,22 @@ function resultBlocks(context: RecordContext): readonly DocumentBlock[] {
     ...spreadBlocks(context),
     ...sweepBlocks(context),
   ]
+}
+
+const SECTIONS = [
+  ['jet', 'starting jet'],
+  ['wake', 'wake'],
+  ['thruster', 'thrusters'],
+  ['tankRun', 'tank run'],
+  ['spread', 'spread'],
+  ['sweep', 'sweep'],
+] as const
+
+/** Sections that stand in the plan and have no results here. */
+function notComputed({ plan, data }: RecordContext): DocumentBlock[] {
+  const names = SECTIONS.filter(([key]) => plan[key] !== null && data[key] === null).map(([, name]) => name)
+  if (names.length === 0) return []
+  return [{ kind: 'paragraph', tone: 'small', text: `In the plan, not computed for this record: ${names.join(', ')}.` }]
 }
 
 /** Every text of the record that names where something comes from. */

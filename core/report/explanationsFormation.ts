@@ -1,4 +1,5 @@
 /** Why pinch-off is put where it is: each estimate, its source and the kind of pulse it was made for. */
+import { formatFixed } from '../quantity'
 import { HILL_DIMENSIONLESS_ENERGY } from '../ring'
 import type { ExplanationContext, ExplanationMaker } from './explanationTypes'
 import { formula, over, power, root, row, sub } from './mathml'
@@ -22,7 +23,7 @@ function verdict(
   const notes = pulse.formationNumber.notes.filter((candidate) => candidate.estimate === estimate)
   const note = notes.length === 0 ? undefined : notes.map(({ text }) => text).join(' ')
   if (value === null) return { inside: false, verdict: note ?? 'This estimate has no crossing for this programme.' }
-  const stands = `The estimate is ${value.toFixed(2)}; this stroke is ${pulse.strokeRatio.toFixed(2)}.`
+  const stands = `The estimate is ${formatFixed(value)}; this stroke is ${formatFixed(pulse.strokeRatio)}.`
   return {
     inside: estimate === 'energyLimit' || pulse.quickStart,
     verdict: note === undefined ? stands : `${stands} ${note}`,
@@ -134,7 +135,7 @@ const dimensionlessEnergy: ExplanationMaker = (context) => ({
   mark: 'identity',
   range: 'Any programme; no steady ring exists below 0.160 (Hill’s vortex).',
   inside: context.pulse.dimensionlessEnergy >= HILL_DIMENSIONLESS_ENERGY,
-  verdict: `The whole slug has ${context.pulse.dimensionlessEnergy.toFixed(3)}.`,
+  verdict: `The whole slug has ${formatFixed(context.pulse.dimensionlessEnergy, 3)}.`,
 })
 
 export const FORMATION_EXPLANATIONS = {

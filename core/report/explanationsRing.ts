@@ -1,4 +1,5 @@
 /** Why the ring is what it is: slug sums, over-pressure, the match to the steady family. */
+import { formatFixed } from '../quantity'
 import type { ExplanationContext, ExplanationMaker } from './explanationTypes'
 import { formula, over, power, row, sub } from './mathml'
 import type { Explanation } from './types'
@@ -31,8 +32,8 @@ function slugVerdict({ pulse }: ExplanationContext): { readonly inside: boolean;
   return {
     inside,
     verdict: inside
-      ? `Inside: the stroke ratio ${pulse.strokeRatio.toFixed(2)} is below the adopted formation number, so the whole pulse is one ring.`
-      : `Beyond it: the stroke ratio ${pulse.strokeRatio.toFixed(2)} is past the adopted formation number; the ring holds what left before it.`,
+      ? `Inside: the stroke ratio ${formatFixed(pulse.strokeRatio)} is below the adopted formation number, so the whole pulse is one ring.`
+      : `Beyond it: the stroke ratio ${formatFixed(pulse.strokeRatio)} is past the adopted formation number; the ring holds what left before it.`,
   }
 }
 

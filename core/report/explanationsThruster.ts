@@ -34,7 +34,12 @@ const meanThrust: ThrusterExplanationMaker = (context) => {
     source: `Momentum balance over one period. Low end: the slug alone, less what close nozzles cost (Athanassiadis & Hart 2016, arXiv 1604.05382). High end: with the over-pressure of a quick start (Krueger 2005, J. Fluid Mech. 545:427).`,
     mark: 'published',
     range: SLUG_PULSES,
-    ...pulseVerdict(context, `${figure(low)} to ${figure(high)} N, ${figure(thruster.meanThrust)} N adopted.`),
+    ...pulseVerdict(
+      context,
+      figure(low) === figure(high)
+        ? `${figure(low)} N.`
+        : `${figure(low)} to ${figure(high)} N, ${figure(thruster.meanThrust)} N adopted.`,
+    ),
   }
 }
 

@@ -13,6 +13,7 @@ export {
   type PlacedLabel,
 } from './boxes'
 export { drawingColours, type DrawingColours, type DrawingTheme } from './colours'
+export { fittedLine, imprintColour, imprintSvg } from './imprint'
 export { plotTable, plotToCsv, type PlotTable } from './plotCsv'
 export { lineEnds, plotLabels, type PlotLabel } from './plotLabels'
 export { markedPoints, markerPath, MARKERS, type MarkedPoint } from './plotMarkers'
@@ -98,6 +99,7 @@ export { explainThruster, THRUSTER_EXPLANATION_IDS, type ThrusterExplanationId }
 export type { ThrusterExplanationContext } from './thrusterExplanationParts'
 export {
   powerBar,
+  sizePlot,
   thrusterPlots,
   type PowerPart,
   type ThrusterPlotInput,
@@ -117,7 +119,8 @@ export {
   type ThrustMapModel,
   type ThrustMapUnits,
 } from './thrustMap'
-export { MARK_RADIUS, thrustMapDrawing, type MapDrawing, type MapText } from './thrustMapDrawing'
+export { thrustMapDrawing, type MapDrawing, type MapText } from './thrustMapDrawing'
+export { MARK_RADIUS, type PlacedMark } from './thrustMapMarks'
 export { inkOn, paintText, thrustMapToSvg } from './thrustMapSvg'
 export { dayText, runSheet, type RunSheetInput } from './runSheet'
 export { bytesText } from './runSheetBlocks'
@@ -133,3 +136,15 @@ export {
 } from './tankExplanations'
 export { designRecord } from './designRecord'
 export type { RecordData, RecordMeta } from './record/types'
+export { measuredPulseRows, type MeasuredPulseRow } from './measuredPulse'
+export {
+  cyclePlot,
+  fieldPlot,
+  forcePlot,
+  residualPlot,
+  trackPlots,
+  type JetTrack,
+  type ReadingsPlotUnits,
+  type TrackOptions,
+} from './readingsPlots'
+export { comparisonBlocks, comparisonRecord } from './comparisonRecord'

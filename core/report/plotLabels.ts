@@ -4,13 +4,15 @@
 import { placeLabels, pointsAlong, type LabelRequest, type Pixel, type Place } from './boxes'
 import { MARKER_RADIUS, markedPoints } from './plotMarkers'
 import { seriesParts, type PlotScale } from './plotScale'
-import type { PlotBand, PlotLine, PlotModel, SeriesRole } from './types'
+import type { PlotBand, PlotLine, PlotMarker, PlotModel, SeriesRole } from './types'
 
 export interface PlotLabel {
   readonly text: string
   readonly place: Place
   /** What it names, which decides its colour. */
   readonly wears: SeriesRole | 'limit' | 'mark'
+  /** Mark drawn before it: a line of the legend of measured points. */
+  readonly marker?: { readonly marker: PlotMarker; readonly x: number; readonly y: number }
 }
 
 type Measure = (text: string) => number
@@ -33,7 +35,7 @@ export function plotLabels(
     for (const part of parts) points.push(...(marks === null ? pointsAlong(part, 4) : part.flatMap(aroundMark)))
     const longest = parts.at(-1)
     // A lone series is named by the title of its plot.
-    if (model.series.length < 2 || longest === undefined || series.unnamed === true) return
+    if (model.series.length < 2 || longest === undefined || series.unnamed === true || marks !== null) return
     const places = placesAtEnd(longest, measure(series.name), lineHeight)
     wanted.push({ request: { id: `series-${index}`, places }, text: series.name, wears: series.role })
   })
@@ -46,12 +48,15 @@ export function plotLabels(
     const places = placesOnBand(band, scale, measure(band.label), lineHeight)
     wanted.push({ request: { id: `band-${index}`, places }, text: band.label, wears: 'limit' })
   })
+  const legend = legendOf(model, scale, measure, lineHeight)
+  if (legend !== null) wanted.unshift({ request: { id: 'legend', places: legend.places }, text: '', wears: 'mark' })
   const placed = placeLabels(
     wanted.map(({ request }) => request),
     { bounds: scale.frame, boxes: [], points },
   )
   return placed.flatMap(({ id, place }) => {
     const label = wanted.find(({ request }) => request.id === id)
+    if (id === 'legend' && legend !== null) return legend.labels(place)
     return label === undefined ? [] : [{ text: label.text, place, wears: label.wears }]
   })
 }
@@ -63,6 +68,48 @@ function aroundMark({ x, y }: Pixel): readonly Pixel[] {
     { x: x + MARKER_RADIUS, y: y + MARKER_RADIUS },
     { x, y },
   ]
+}
+
+/** Room of the mark before its name [px]. */
+const MARK_ROOM = 14
+
+interface Legend {
+  readonly places: readonly Place[]
+  labels(place: Place): readonly PlotLabel[]
+}
+
+/** Measured points lie among one another, so that their names stand together in the corner that is freest. */
+function legendOf(model: PlotModel, scale: PlotScale, measure: Measure, lineHeight: number): Legend | null {
+  const entries = model.series.flatMap(({ name, marker, role, unnamed }) =>
+    marker === undefined || unnamed === true ? [] : [{ name, marker, role }],
+  )
+  if (entries.length === 0 || model.series.length < 2) return null
+  const line = lineHeight * 1.15
+  const width = MARK_ROOM + entries.reduce((most, { name }) => Math.max(most, measure(name)), 0)
+  const height = line * entries.length
+  const { left, top, width: across, height: down } = scale.frame
+  const [right, bottom] = [left + across - width - 6, top + down - height - 6]
+  const corners = [
+    [left + 8, top + 4],
+    [right, bottom],
+    [right, top + 4],
+    [left + 8, bottom],
+    [left + (across - width) / 2, top + 4],
+    [left + (across - width) / 2, bottom],
+  ] as const
+  return {
+    places: corners.map(([x, y]) => ({ left: x, top: y, width, height, vertical: false })),
+    labels: (place) =>
+      entries.map(({ name, marker, role }, index) => {
+        const y = place.top + index * line
+        return {
+          text: name,
+          place: { left: place.left + MARK_ROOM, top: y, width: width - MARK_ROOM, height: line, vertical: false },
+          wears: role,
+          marker: { marker, x: place.left + 4, y: y + line / 2 },
+        }
+      }),
+  }
 }
 
 /** End points in pixels of a line across the plot. */

@@ -221,6 +221,10 @@ function labelText(label: PlotLabel, font: number, colours: DrawingColours): str
     mark: colours.ink,
   }
   const colour = worn[label.wears]
+  const mark =
+    label.marker === undefined
+      ? ''
+      : `<path d="${markerPath(label.marker.marker, label.marker.x, label.marker.y)}" stroke="${colour}" stroke-width="1.3" fill="${colours.ground}"/>`
   if (place.vertical) {
     return svgText(label.text, place.left + place.width * 0.78, place.top + place.height, {
       size: font,
@@ -228,5 +232,8 @@ function labelText(label: PlotLabel, font: number, colours: DrawingColours): str
       vertical: true,
     })
   }
-  return svgText(label.text, place.left, place.top + place.height * 0.78, { size: font, colour, halo: colours.ground })
+  return (
+    mark +
+    svgText(label.text, place.left, place.top + place.height * 0.78, { size: font, colour, halo: colours.ground })
+  )
 }

@@ -66,8 +66,8 @@ export function runSheet(input: RunSheetInput): PrintDocument | null {
     ],
     blocks: [
       { kind: 'boxes', labels: ['Run by', 'Second person', 'Water temperature read', 'First run at'] },
-      drawing('whole', 320, `Tank, ring and camera to scale; D is the exit diameter. ${scene.conventions.join(' ')}`),
-      drawing('path', 275, 'Where the ring runs, to a larger scale. Bars: where it may be at the time it is expected.'),
+      drawing('whole', 250, `Tank, ring and camera to scale; D is the exit diameter. ${scene.conventions.join(' ')}`),
+      drawing('path', 250, 'Where the ring runs, to a larger scale. Bars: where it may be at the time it is expected.'),
       ...cautionBlocks(cautions, HAZARDS),
       ...pistonBlocks(plan, result, units),
       ...triggerBlocks(result, units),

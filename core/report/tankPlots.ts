@@ -53,7 +53,7 @@ function positionPlot({ path, arrivals }: TankRunResult, units: TankPlotUnits, s
   return {
     id: 'tank-position',
     title: 'Place of the ring',
-    x: { title: 'Time after the piston starts', unit: units.wakeTime, min: 0 },
+    x: { title: 'Time', unit: units.wakeTime, min: 0 },
     y: { title: 'Distance from the exit', unit: units.length, min: 0 },
     series: list,
     bands: [],
@@ -113,7 +113,7 @@ function speedPlot({ path, arrivals }: TankRunResult, units: TankPlotUnits): Plo
   return {
     id: 'tank-speed',
     title: 'Speed of the ring',
-    x: { title: 'Distance from the exit', unit: units.length, min: 0 },
+    x: { title: 'Distance', unit: units.length, min: 0 },
     y: { title: 'Speed', unit: units.ringSpeed, min: 0 },
     series: list,
     bands: [],
@@ -135,7 +135,7 @@ export function pistonPlots(profile: PistonProfile, units: TankPlotUnits): reado
   const plot = (name: string, values: Values, unit: string, limit: DriveLimitName): PlotModel => ({
     id: `piston-${name}`,
     title: `Piston ${name}`,
-    x: { title: 'Time after the piston starts', unit: units.wakeTime },
+    x: { title: 'Time', unit: units.wakeTime },
     y: { title: `Piston ${name}`, unit },
     series: [
       series(

@@ -16,6 +16,8 @@ const CAMERA_ROW = 24
 /** Station labels above one another, at most. */
 const MOST_LEVELS = 6
 const GAPS = [6, 16, 28, 42, 60]
+/** Room kept on both sides of words. */
+const PAD = 4
 
 export interface TankLayout {
   readonly width: number
@@ -44,40 +46,60 @@ export interface TankWord {
 
 export function tankLayout(model: TankSceneModel, part: TankExtentName, width: number, height: number): TankLayout {
   const { xMin, xMax, across } = model.extents[part]
-  const [plan, side] = across.map(([low, high]) => high - low)
-  const whole = part === 'whole'
-  const right = MARGIN.right + (whole && model.views.some(({ size }) => size !== null) ? DIMENSION : 0)
-  const bottom = MARGIN.bottom + DIMENSION
+  const [planSpan, sideSpan] = [across[0][1] - across[0][0], across[1][1] - across[1][0]]
+  const right = MARGIN.right + (part === 'whole' && model.views.some(({ size }) => size !== null) ? DIMENSION : 0)
+  const sides = MARGIN.left + right
+  const ends = MARGIN.top + MARGIN.bottom + DIMENSION
   const camera = model.views[0].camera === null ? 8 : CAMERA_ROW
   let levels = 1
   let made: TankLayout | null = null
   // The words over the stations take height, which takes scale, which brings the stations together.
   for (let tries = 0; tries < MOST_LEVELS; tries += 1) {
-    const rail = camera + levels * LINE + 15
-    const room = height - MARGIN.top - bottom - rail
-    const scale = Math.max(
-      1e-6,
-      Math.min((width - MARGIN.left - right) / (xMax - xMin), room / ((plan ?? 0) + (side ?? 0))),
-    )
-    const used = scale * (xMax - xMin)
-    const left = MARGIN.left + (width - MARGIN.left - right - used) / 2
-    const top = MARGIN.top + Math.max(0, room - scale * ((plan ?? 0) + (side ?? 0))) / 2
-    const frame = (index: 0 | 1): Box => ({
-      left,
-      top: index === 0 ? top : top + scale * (plan ?? 0) + rail,
-      width: used,
-      height: scale * ((index === 0 ? plan : side) ?? 0),
-    })
-    const frames = [frame(0), frame(1)] as const
+    const words = levels * LINE + 15
+    const long = xMax - xMin
+    const stacked = Math.min((width - sides) / long, (height - ends - camera - words) / (planSpan + sideSpan))
+    // Side by side their axes are level; the words stand over the view from the side, the camera under that from above.
+    const above = (scale: number): number => Math.max(across[0][1] * scale, across[1][1] * scale + words)
+    const below = (scale: number): number =>
+      Math.max(-across[0][0] * scale + camera, -across[1][0] * scale + MARGIN.bottom + DIMENSION)
+    const most =
+      (height - MARGIN.top - words - MARGIN.bottom - DIMENSION) /
+      (Math.max(across[0][1], across[1][1]) - Math.min(across[0][0], across[1][0]))
+    const level = Math.min((width - 2 * sides) / (2 * long), most)
+    const beside = level > stacked
+    const scale = Math.max(1e-6, beside ? level : stacked)
+    const used = scale * long
+    const frames = beside ? besideFrames() : stackedFrames()
+
+    function stackedFrames(): readonly [Box, Box] {
+      const left = MARGIN.left + (width - sides - used) / 2
+      const spare = height - ends - camera - words - scale * (planSpan + sideSpan)
+      const top = MARGIN.top + Math.max(0, spare) / 2
+      const upper = { left, top, width: used, height: scale * planSpan }
+      return [upper, { ...upper, top: top + upper.height + camera + words, height: scale * sideSpan }]
+    }
+    function besideFrames(): readonly [Box, Box] {
+      const spare = Math.max(0, width - 2 * sides - 2 * used) / 4
+      const left = MARGIN.left + spare
+      const axis = MARGIN.top + above(scale) + Math.max(0, height - MARGIN.top - above(scale) - below(scale)) / 2
+      const frame = (index: 0 | 1, x: number): Box => ({
+        left: x,
+        top: axis - across[index][1] * scale,
+        width: used,
+        height: scale * (index === 0 ? planSpan : sideSpan),
+      })
+      return [frame(0, left), frame(1, left + used + sides + 2 * spare)]
+    }
+
     const map =
       (index: 0 | 1) =>
       ({ x, r }: ScenePoint): Pixel => ({
-        x: left + (x - xMin) * scale,
+        x: frames[index].left + (x - xMin) * scale,
         y: frames[index].top + (across[index][1] - r) * scale,
       })
     const maps = [map(0), map(1)] as const
     const stations = stationLabels(model, maps[1], frames[1].top, width)
-    const needed = Math.max(0, ...stations.map(({ level }) => level)) + 1
+    const needed = Math.max(0, ...stations.map((station) => station.level)) + 1
     made = { width, height, scale, maps, frames, stations }
     if (needed <= levels) break
     levels = needed
@@ -97,29 +119,31 @@ function stationLabels(
   width: number,
 ): readonly (StationLabel & { readonly level: number })[] {
   const most = Math.max(0, ...stations.map(({ labels }) => labels.length))
+  let best: readonly (StationLabel & { readonly level: number })[] = []
   for (let short = 0; short < most; short += 1) {
-    const placed = levelled(
-      stations.map(({ x, labels }) => ({ x, text: labels[Math.min(short, labels.length - 1)] ?? '' })),
-      map,
-      top,
-      width,
-    )
-    if (short === most - 1 || placed.length === stations.length) return placed
+    const labels = stations.map((one) => ({ x: one.x, text: one.labels[Math.min(short, one.labels.length - 1)] ?? '' }))
+    for (const side of ['right', 'left'] as const) {
+      const placed = levelled(labels, side, map, top, width)
+      if (placed.length === stations.length) return placed
+      if (placed.length > best.length) best = placed
+    }
   }
-  return []
+  return best
 }
 
+/** Words to one side of their leaders, the station farthest to that side at the bottom. */
 function levelled(
   labels: readonly { readonly x: number; readonly text: string }[],
+  side: 'left' | 'right',
   map: (point: ScenePoint) => Pixel,
   top: number,
   width: number,
 ): readonly (StationLabel & { readonly level: number })[] {
   const placed: (StationLabel & { readonly level: number; readonly foot: number })[] = []
-  for (const { x, text } of labels.toSorted((a, b) => b.x - a.x)) {
+  for (const { x, text } of labels.toSorted((a, b) => (side === 'right' ? b.x - a.x : a.x - b.x))) {
     const foot = map({ x, r: 0 }).x
     const wide = textWidth(text, TANK_FONT)
-    const left = Math.max(4, Math.min(foot - 3, width - wide - 4))
+    const left = Math.max(4, Math.min(side === 'right' ? foot - 3 : foot + 3 - wide, width - wide - 4))
     const free = (level: number): boolean =>
       placed.every((other) => {
         const apart = left + wide + 6 < other.place.left || other.place.left + other.place.width + 6 < left
@@ -133,6 +157,12 @@ function levelled(
     placed.push({ x, text, level, foot, place })
   }
   return placed
+}
+
+/** A view's title runs upward beside it, at the middle of its height where that keeps it on the drawing. */
+export function titlePlace(title: string, { left, top, height }: Box): Box {
+  const long = textWidth(title, TANK_FONT)
+  return { left: left - 26, top: Math.max(4, top + (height - long) / 2), width: 24, height: long }
 }
 
 type Spot = 'above' | 'below' | 'left' | 'right'
@@ -151,8 +181,9 @@ export function tankWords(model: TankSceneModel, part: TankExtentName, layout: T
   model.views.forEach((view, index) => {
     const map = layout.maps[index === 0 ? 0 : 1]
     const frame = layout.frames[index === 0 ? 0 : 1]
-    if (part === 'whole') wanted.push(...view.clearances.map((line) => along(line, map)))
     wanted.push(...fieldWords(view, map, frame))
+    // After what has fewer places to go.
+    if (part === 'whole') wanted.push(...view.clearances.map((line) => along(line, map)))
     const foot = frame.top + frame.height
     points.push(...linesOf(model, view, part, map).filter(({ y }) => y < foot + 3))
     for (const x of [frame.left, frame.left + frame.width])
@@ -171,7 +202,7 @@ export function tankWords(model: TankSceneModel, part: TankExtentName, layout: T
     if (part === 'whole' && view.size !== null)
       boxes.push({ left: frame.left + frame.width + 6, top: frame.top, width: DIMENSION, height: frame.height })
     // The view's title upright beside it, and the mark of the water's surface.
-    boxes.push({ left: frame.left - 26, top: frame.top, width: 24, height: frame.height })
+    boxes.push(titlePlace(view.title, frame))
     if (index === 1) {
       boxes.push({ left: frame.left + 6, top: frame.top - 10, width: 18, height: 18 })
       boxes.push({ left: frame.left, top: foot + 4, width: frame.width, height: DIMENSION })
@@ -186,7 +217,9 @@ export function tankWords(model: TankSceneModel, part: TankExtentName, layout: T
   return placeLabels(requests, { bounds, boxes, points }).flatMap(({ id, place, overlap }) => {
     const word = wanted[Number(id)]
     // What finds no free place is left out: sizes stand in the tables as well.
-    return word === undefined || overlap > 0 ? [] : [{ text: word.text, tone: word.tone, place }]
+    return word === undefined || overlap > 0
+      ? []
+      : [{ ...word, place: { ...place, left: place.left + PAD, width: place.width - 2 * PAD } }]
   })
 }
 
@@ -210,7 +243,7 @@ function fieldWords({ field, camera }: TankView, map: (point: ScenePoint) => Pix
     const seen = field.half > 0
     const top = Math.max(corner(0, field.half).y, frame.top)
     const foot = Math.min(corner(0, -field.half).y, frame.top + frame.height)
-    const xs = [middle, field.xMin + 0.75 * (field.xMax - field.xMin), field.xMin + 0.25 * (field.xMax - field.xMin)]
+    const xs = [0, 0.25, -0.25, 0.6, 1.1].map((part) => middle + part * (field.xMax - field.xMin))
     words.push({
       text: seen ? field.label : field.sheetLabel,
       tone: 'muted',
@@ -237,7 +270,7 @@ function fieldWords({ field, camera }: TankView, map: (point: ScenePoint) => Pix
 }
 
 function placesOf({ text, spots }: Wanted): Place[] {
-  const width = textWidth(text, TANK_FONT)
+  const width = textWidth(text, TANK_FONT) + 2 * PAD
   return GAPS.flatMap((gap) =>
     spots.map(([spot, { x, y }]): Place => {
       const left = spot === 'right' ? x + gap : spot === 'left' ? x - gap - width : x - width / 2

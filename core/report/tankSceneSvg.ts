@@ -5,7 +5,7 @@ import type { Box, Pixel } from './boxes'
 import type { DrawingColours } from './colours'
 import type { ScenePoint } from './sceneTypes'
 import { coordinate, escapeXml, FONT_FAMILY, pathThrough, svgText } from './svgText'
-import { TANK_FONT, tankLayout, tankWords, type TankLayout } from './tankSceneLayout'
+import { TANK_FONT, tankLayout, tankWords, titlePlace, type TankLayout } from './tankSceneLayout'
 import { textWidth } from './textWidth'
 import type { TankDimension, TankExtentName, TankSceneModel, TankView } from './tankSceneTypes'
 
@@ -62,6 +62,7 @@ function viewShapes(
 ): string[] {
   const map = layout.maps[index]
   const frame = layout.frames[index]
+  const title = titlePlace(view.title, frame)
   return [
     rectangle(frame, `fill="${colours.accent}" fill-opacity="0.06"`),
     ...wallShapes(model, view, frame, map, colours),
@@ -75,16 +76,11 @@ function viewShapes(
     ...nozzleShapes(model, frame, map, colours),
     ...(part === 'whole' ? view.clearances.map((bar) => dimensionLine(bar, map, colours)) : []),
     ...(part === 'whole' ? sizeMarks(view.size, frame, map, colours) : []),
-    svgText(
-      view.title,
-      frame.left - 12,
-      Math.max(frame.top + frame.height / 2 + turnedHalf(view.title), 2 * turnedHalf(view.title) + 4),
-      {
-        size: TANK_FONT,
-        colour: colours.muted,
-        vertical: true,
-      },
-    ),
+    svgText(view.title, frame.left - 12, title.top + title.height, {
+      size: TANK_FONT,
+      colour: colours.muted,
+      vertical: true,
+    }),
   ]
 }
 

@@ -108,12 +108,14 @@ export interface ThrustMapInput {
   readonly candidates: readonly Design[]
   /** Formation numbers between which published experiments put pinch-off; null: none for this nozzle. */
   readonly published: readonly [number, number] | null
+  /** True where that band is the one in the stream of a vehicle under way. */
+  readonly underWay: boolean
 }
 
 /** Largest over smallest value from which colours go by powers of ten. */
 const LOGARITHMIC_FROM = 30
 /** Steps of a linear scale. */
-const STEPS = 8
+const STEPS = 12
 /** Most lines on a logarithmic scale. */
 const MOST_LEVELS = 10
 /** Room beyond which a broken choice has no say in the range of the colours. */
@@ -130,6 +132,7 @@ export function thrustMap(input: ThrustMapInput): ThrustMapModel {
   const least = leastRoom(map)
   const colours = colourRange(values, least)
   const title = MAP_RESULTS[result].title
+  const bandName = input.underWay ? 'published pinch-off band, at this speed' : 'published pinch-off band'
   const feasible = map.feasible.reduce((sum, one) => sum + one, 0)
   return {
     id: 'thrust-map',
@@ -144,7 +147,7 @@ export function thrustMap(input: ThrustMapInput): ThrustMapModel {
       lines: contourLines(grid, level),
     })),
     broken: regionAbove({ ...grid, values: least.map((room) => -room) }, 0),
-    edges: edgesOf(map, grid, least, feasible > 0),
+    edges: edgesOf(map, grid, feasible > 0),
     limits: brokenLimits(map),
     feasibleShare: feasible / map.feasible.length,
     strips:
@@ -152,7 +155,7 @@ export function thrustMap(input: ThrustMapInput): ThrustMapModel {
         ? []
         : (['x', 'y'] as const).flatMap((axis) =>
             map[`${axis}Field`] === 'strokeRatio'
-              ? [{ axis, from: published[0], to: published[1], label: 'published pinch-off band' }]
+              ? [{ axis, from: published[0], to: published[1], label: bandName }]
               : [],
           ),
     marks: [
@@ -178,13 +181,14 @@ function unitOf(key: keyof ThrustMapUnits | null, units: ThrustMapUnits): string
   return key === null ? '' : units[key]
 }
 
-/** The least room of every choice over all its limits; 1 where none is asked. */
-function leastRoom({ rooms, feasible }: DesignMap): Float64Array {
+/** The least room of every choice over all its limits but one; 1 where none is asked. */
+function leastRoom({ rooms, feasible }: DesignMap, but: LimitName | null = null): Float64Array {
   const least = new Float64Array(feasible.length).fill(1)
-  for (const room of rooms.values())
-    room.forEach((value, cell) => {
-      if (value < at(least, cell)) least[cell] = value
-    })
+  for (const [name, room] of rooms)
+    if (name !== but)
+      room.forEach((value, cell) => {
+        if (value < at(least, cell)) least[cell] = value
+      })
   return least
 }
 
@@ -240,12 +244,13 @@ export function valueAtShare({ low, high, logarithmic }: ThrustMapModel['result'
 const HELD = -0.01
 
 /** Each limit's edge where it is what stands in the way; all of it where nothing is feasible. */
-function edgesOf(map: DesignMap, grid: ContourGrid, least: Float64Array, some: boolean): MapEdge[] {
+function edgesOf(map: DesignMap, grid: ContourGrid, some: boolean): MapEdge[] {
   const edges: MapEdge[] = []
   for (const [name, room] of map.rooms) {
     const lines = contourLines({ ...grid, values: room }, 0)
+    const others = leastRoom(map, name)
     const active = some
-      ? lines.flatMap((line) => partsWhere(line, (place) => valueBetween({ ...grid, values: least }, place) >= HELD))
+      ? lines.flatMap((line) => partsWhere(line, (place) => valueBetween({ ...grid, values: others }, place) >= HELD))
       : lines
     if (active.length > 0) edges.push({ name, lines: active })
   }

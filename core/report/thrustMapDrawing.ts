@@ -6,6 +6,7 @@ import { placeLabels, pointsAlong, type Box, type LabelRequest, type Pixel, type
 import { fieldColour, type Paint } from './fieldColours'
 import { axisTicks } from './plotSvg'
 import { coordinate, pathThrough } from './svgText'
+import { MARK_RADIUS, placedMarks, type PlacedMark } from './thrustMapMarks'
 import { colourShare, valueAtShare, type ThrustMapModel } from './thrustMap'
 import { regionAbove, type ContourLine } from './contours'
 
@@ -35,12 +36,8 @@ export interface MapDrawing {
   readonly strips: readonly { readonly d: string; readonly box: Box }[]
   /** Ticks of both axes. */
   readonly ticks: string
-  readonly marks: readonly (Pixel & {
-    readonly id: string
-    readonly kind: string
-    readonly label: string
-    readonly onMap: boolean
-  })[]
+  /** Designs, each beside its place where another stands there already. */
+  readonly marks: readonly PlacedMark[]
   /** Steps of the colour scale, from the lowest up, and the ticks on it. */
   readonly scale: {
     readonly box: Box
@@ -69,7 +66,6 @@ const SCALE_WIDTH = 14
 const HATCH_EVERY = 9
 const HATCH_LENGTH = 7
 const STRIP = 5
-export const MARK_RADIUS = 9
 
 /** Lay a map out. */
 export function thrustMapDrawing(model: ThrustMapModel, size: MapSize): MapDrawing {
@@ -104,9 +100,7 @@ export function thrustMapDrawing(model: ThrustMapModel, size: MapSize): MapDrawi
   ]
   const xTicks = axisTicks(x.min, x.max, Math.max(2, Math.min(10, Math.floor(frame.width / 70))))
   const bottom = frame.top + frame.height
-  const marks = model.marks
-    .map((mark) => ({ ...mark, x: toX(mark.x), y: toY(mark.y) }))
-    .filter((mark) => inside(mark, frame))
+  const marks = placedMarks(model, toX, toY, frame)
   const scaleBox: Box = {
     left: frame.left + frame.width + 18,
     top: frame.top,
@@ -257,12 +251,6 @@ function levelLabel({ result, contours }: ThrustMapModel, level: number): string
   return label
     .replace(/^/u, result.beyondLow && level === result.low ? '≤ ' : '')
     .replace(/^/u, result.beyondHigh && level === result.high ? '≥ ' : '')
-}
-
-function inside({ x, y }: Pixel, frame: Box): boolean {
-  return (
-    x >= frame.left - 1 && x <= frame.left + frame.width + 1 && y >= frame.top - 1 && y <= frame.top + frame.height + 1
-  )
 }
 
 /** Short strokes from a line into what breaks the limit: on its right where y runs upward, so on its left here. */

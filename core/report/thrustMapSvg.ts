@@ -7,7 +7,8 @@ import type { DrawingSize } from './plotSvg'
 import { coordinate, escapeXml, FONT_FAMILY, svgText } from './svgText'
 import { textWidth } from './textWidth'
 import { describeThrustMap, type ThrustMapModel } from './thrustMap'
-import { MARK_RADIUS, thrustMapDrawing, type MapDrawing, type MapText } from './thrustMapDrawing'
+import { thrustMapDrawing, type MapDrawing, type MapText } from './thrustMapDrawing'
+import { MARK_RADIUS } from './thrustMapMarks'
 
 /** Black or white, whichever is read better on a paint. */
 export function inkOn(paint: Paint): string {
@@ -47,6 +48,7 @@ export function thrustMapToSvg(model: ThrustMapModel, size: DrawingSize): string
     `<g transform="translate(0 ${HEADING})">`,
     ...field(drawing, colours),
     ...drawing.texts.map((text) => label(text, font, colours)),
+    ...drawing.marks.map((mark) => tieOf(mark, colours)),
     ...drawing.marks.map((mark) => markOf(mark, font, colours)),
     '</g></svg>\n',
   ].join('')
@@ -94,6 +96,12 @@ function label({ text, x, y, anchor, wears, plate }: MapText, font: number, colo
       ? ''
       : `<rect x="${coordinate(plate.left)}" y="${coordinate(plate.top)}" width="${coordinate(plate.width)}" height="${coordinate(plate.height)}" fill="${plate.paint === null ? colours.ground : paintText(plate.paint)}"/>`
   return under + svgText(text, x, y, { size: font, colour, anchor })
+}
+
+function tieOf({ tie }: MapDrawing['marks'][number], colours: DrawingColours): string {
+  return tie === ''
+    ? ''
+    : `<path d="${tie}" fill="none" stroke="${colours.ground}" stroke-width="3.5"/><path d="${tie}" fill="none" stroke="${colours.ink}"/>`
 }
 
 function markOf(

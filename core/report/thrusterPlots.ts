@@ -4,13 +4,22 @@
 import { at, equallySpaced } from '../base'
 import { exitPerPiston, type NozzleInput } from '../pulse'
 import { fromBase } from '../quantity'
-import { compileDrag, MEASURED_BEST_STROKE, type ThrusterResult, type ThrusterSection } from '../thruster'
+import {
+  compileDrag,
+  MEASURED_BEST_STROKE,
+  type SizingResult,
+  type ThrusterResult,
+  type ThrusterSection,
+} from '../thruster'
 import type { WaterProperties } from '../water'
 import type { PlotLine, PlotModel, PlotSeries } from './types'
 
 export interface ThrusterPlotUnits {
   readonly time: string
+  /** Of the vehicle. */
   readonly speed: string
+  /** Of the jet; absent: as that of the vehicle. */
+  readonly exitSpeed?: string
   readonly pressure: string
   readonly force: string
   readonly power: string
@@ -59,7 +68,7 @@ function cyclePlots({ section, nozzle, thruster, units }: ThrusterPlotInput): re
     return {
       id: `thruster-${column.replace(/[A-Z]/gu, (letter) => `-${letter.toLowerCase()}`)}`,
       title,
-      x: { title: 'Time in the period', unit: units.time, min: 0, max: fromBase(thruster.period, units.time) },
+      x: { title: 'Time', unit: units.time, min: 0, max: fromBase(thruster.period, units.time) },
       y: { title, unit },
       series: [
         {
@@ -79,7 +88,7 @@ function cyclePlots({ section, nozzle, thruster, units }: ThrusterPlotInput): re
   // Suction below this boils the water.
   const boiling = vapourPressure === null ? null : vapourPressure - ambientPressure
   return [
-    plot('exitSpeed', 'Exit speed', units.speed, [
+    plot('exitSpeed', 'Exit speed', units.exitSpeed ?? units.speed, [
       [maxSpeed === null ? null : maxSpeed * exitPerPiston(nozzle), 'plunger speed limit'],
     ]),
     plot('cavityPressure', 'Cavity pressure', units.pressure, [[boiling, 'vapour pressure']]),
@@ -114,7 +123,7 @@ function thrustInTime({ section, thruster, units }: ThrusterPlotInput): PlotMode
   return {
     id: 'thruster-thrust',
     title: several ? `Thrust of all ${section.count}` : 'Thrust',
-    x: { title: 'Time in the period', unit: units.time, min: 0, max: fromBase(thruster.period, units.time) },
+    x: { title: 'Time', unit: units.time, min: 0, max: fromBase(thruster.period, units.time) },
     y: { title: 'Thrust', unit: units.force },
     series: [
       line(
@@ -161,7 +170,7 @@ function thrustAgainstSpeed({ section, water, thruster, units }: ThrusterPlotInp
   return [
     {
       id: 'thruster-speed',
-      title: 'Thrust and drag against speed',
+      title: 'Thrust and drag',
       x: { title: 'Speed', unit: units.speed, min: 0, max: fromBase(end, units.speed) },
       y: { title: 'Force', unit: units.force, min: 0 },
       series: [
@@ -244,6 +253,38 @@ function ringPerWork({ thruster }: ThrusterPlotInput): readonly PlotModel[] {
   ]
 }
 
+/** Power, or thrust, of the smallest designs: the front of a sizing, with its candidates. */
+export function sizePlot(
+  { goal, front, candidates }: Pick<SizingResult, 'goal' | 'front' | 'candidates'>,
+  units: Pick<ThrusterPlotUnits, 'force' | 'power'> & { readonly volume: string },
+): readonly PlotModel[] {
+  if (front.length < 2) return []
+  const [title, unit] = goal === 'power' ? ['Total power', units.power] : ['Mean thrust', units.force]
+  const worth = ({ power, thrust }: { readonly power: number; readonly thrust: number }): number =>
+    fromBase(goal === 'power' ? power : thrust, unit)
+  const size = ({ sweptVolume }: { readonly sweptVolume: number }): number => fromBase(sweptVolume, units.volume)
+  const inOrder = [...candidates].sort((a, b) => a.sweptVolume - b.sweptVolume)
+  return [
+    {
+      id: 'thruster-size',
+      title: `${title} of the smallest designs`,
+      x: { title: 'Swept volume of all plungers', unit: units.volume, min: 0 },
+      y: { title, unit, min: 0 },
+      series: [
+        line('front', 'front', front.map(size), front.map(worth)),
+        ...inOrder.map((candidate) => {
+          const number = candidates.indexOf(candidate) + 1
+          // A short upright stroke, since a plot knows lines only.
+          const [x, y] = [size(candidate), worth(candidate)]
+          return line(`candidate-${number}`, `${number}`, [x, x], [0, y], { role: 'secondary', line: 'dotted' })
+        }),
+      ],
+      bands: [],
+      lines: [],
+    },
+  ]
+}
+
 /** One part of the power, to be drawn as a piece of a bar. */
 export interface PowerPart {
   readonly id: 'jet' | 'nozzleLoss' | 'refill' | 'column' | 'actuator'
@@ -261,8 +302,8 @@ export function powerBar({ power }: Pick<ThrusterResult, 'power'>): readonly Pow
     ['jet', 'jet', jet],
     ['nozzleLoss', 'nozzle loss', nozzleLoss],
     ['refill', 'refill', refill],
-    ['column', 'water in the nozzle', column],
-    ['actuator', 'lost in the actuator', total - jet - nozzleLoss - refill - column],
+    ['column', 'water column', column],
+    ['actuator', 'actuator loss', total - jet - nozzleLoss - refill - column],
   ] as const
   return parts
     .filter(([, , watts]) => watts > 1e-12 * total)

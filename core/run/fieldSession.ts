@@ -3,20 +3,40 @@
  * looked at, its picture are kept.
  */
 import { at, bracket, DomainError } from '../base'
-import { readFieldFrame, READINGS_DEFAULTS, type FieldFrameChoices, type Plan } from '../plan'
+import { eachFieldFrame, READINGS_DEFAULTS, type FieldFrameChoices, type Plan } from '../plan'
 import type { PulseHistory } from '../pulse'
-import { createFieldAnalysis, type FieldNumbers, type FieldOptions, type FieldResult } from '../tank'
+import {
+  createFieldAnalysis,
+  type FieldNumbers,
+  type FieldOptions,
+  type FieldResult,
+  type ReadingsColumn,
+} from '../tank'
 import { waterProperties } from '../water'
 import { fieldPicture, type FieldPicture } from './fieldPicture'
 import { pulseOf } from './pulse'
 
-export type FrameOutcome =
-  | { readonly ok: true; readonly numbers: FieldNumbers; readonly picture: FieldPicture | null }
+/** One frame as it was analysed. */
+export interface AnalysedField {
+  readonly numbers: FieldNumbers
+  /** null where it is not to be looked at. */
+  readonly picture: FieldPicture | null
+}
+
+export type FileOutcome =
+  | {
+      readonly ok: true
+      readonly frames: readonly AnalysedField[]
+      /** Columns as they were read, to be kept. */
+      readonly columns: readonly ReadingsColumn[]
+      /** Frames and rows that were left out, a sentence each. */
+      readonly skipped: readonly string[]
+    }
   | { readonly ok: false; readonly message: string }
 
 export interface FieldSession {
-  /** Take in one file. @param time of the frame where its file does not tell one [s] */
-  add(text: string, time: number, choices: FieldFrameChoices): FrameOutcome
+  /** Take in one file of one or several frames. @param timeOf time of a frame that tells none, by its number in the file from 0 [s] */
+  add(text: string, timeOf: (frame: number) => number, choices: FieldFrameChoices): FileOutcome
   result(): FieldResult
 }
 
@@ -26,20 +46,30 @@ export function fieldSession(plan: Plan, pictures: boolean): FieldSession {
   const options = fieldOptionsOf(plan)
   const analysis = createFieldAnalysis(options)
   return {
-    add(text, time, choices) {
-      const reading = readFieldFrame(text, time, choices)
+    add(text, timeOf, choices) {
+      const frames: AnalysedField[] = []
+      const skipped: string[] = []
+      const reading = eachFieldFrame(text, timeOf, choices, (frame) => {
+        try {
+          const numbers = analysis.add(frame)
+          frames.push({ numbers, picture: pictures ? fieldPicture(frame, options.diameter, calibration) : null })
+        } catch (error) {
+          if (!(error instanceof DomainError)) throw error
+          skipped.push(sentenceOf(error.message))
+        }
+      })
       if (!reading.ok) return reading
-      try {
-        const numbers = analysis.add(reading.frame)
-        const picture = pictures ? fieldPicture(reading.frame, options.diameter, calibration) : null
-        return { ok: true, numbers, picture }
-      } catch (error) {
-        if (error instanceof DomainError) return { ok: false, message: error.message }
-        throw error
-      }
+      if (frames.length === 0) return { ok: false, message: skipped[0] ?? 'it holds no frame' }
+      if (reading.skippedCount > 0)
+        skipped.push(`${reading.skippedCount} rows were skipped. ${reading.skipped[0]?.message ?? ''}`)
+      return { ok: true, frames, columns: reading.columns, skipped }
     },
     result: () => analysis.result(),
   }
+}
+
+function sentenceOf(text: string): string {
+  return `${text.charAt(0).toUpperCase()}${text.slice(1)}.`
 }
 
 function fieldOptionsOf(plan: Plan): FieldOptions {

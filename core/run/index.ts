@@ -2,11 +2,12 @@
  * A plan in, results out: the one door that window, browser and runner share.
  */
 export { fieldPicture, type FieldPicture } from './fieldPicture'
-export { fieldSession, type FieldSession, type FrameOutcome } from './fieldSession'
+export { fieldSession, type AnalysedField, type FieldSession, type FileOutcome } from './fieldSession'
 export { computedJet, jetOf, knownJetOf, type JetRunOptions, type KnownJet } from './jet'
 export { createJetCache, type JetCache } from './jetCache'
 export type { JetData } from './jetTypes'
 export { pulseOf } from './pulse'
+export { holdsReadings } from './readings'
 export { availableSections, run, sweepOf } from './run'
 export type { SpreadData } from './spread'
 export type { DrawnField } from './spreadDraw'

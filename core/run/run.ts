@@ -4,7 +4,7 @@
 import { DomainError } from '../base'
 import { cautionsFor, startsFromJet, type Plan, type SpreadSection } from '../plan'
 import type { ComputedJet } from '../pulse'
-import { planTankRun } from '../tank'
+import { compareReadings, planTankRun } from '../tank'
 import { analyseThruster } from '../thruster'
 import { waterProperties } from '../water'
 import { freezeDeep } from './freeze'
@@ -12,6 +12,7 @@ import { adoptsJet, computedJet, jetOf, knownJetOf, type JetRunOptions } from '.
 import { createJetCache } from './jetCache'
 import type { JetData } from './jetTypes'
 import { pulseOf } from './pulse'
+import { holdsReadings, readingsInputOf } from './readings'
 import { sharesOf, type CostlyPart, type Share } from './shares'
 import { checkSpread, spreadOf } from './spread'
 import { sweepDesign, sweepRows, type SweepData, type SweepOptions } from './sweep'
@@ -31,6 +32,7 @@ export function availableSections(plan: Plan): readonly Section[] {
     wake: plan.wake !== null,
     thruster: pulsed && plan.thruster !== null,
     tankRun: pulsed && plan.tankRun !== null,
+    readings: pulsed && holdsReadings(plan),
     sweep: plan.sweep !== null && plan.sweep.fields.length > 0,
     spread: pulsed && plan.spread !== null && drawsAnything(plan.spread),
   }
@@ -54,6 +56,7 @@ const NOTHING_YET = {
   wake: null,
   thruster: null,
   tankRun: null,
+  readings: null,
   sweep: null,
   spread: null,
   formed: null,
@@ -131,6 +134,21 @@ export async function run(plan: Plan, request: RunRequest, options: JetRunOption
       state = { ...state, tankRun }
       if (tankRun.status !== 'done') return ended(tankRun.status, tankRun.message)
     }
+    if (wants('readings')) {
+      const { from } = progress('readings')
+      options.onProgress?.({ share: from, what: 'readings' })
+      const readings = compareReadings(
+        readingsInputOf(plan, {
+          water,
+          jet: adopted,
+          // A pulse that was asked for may read a jet that the plan does not adopt.
+          pulse: null,
+          thruster: state.thruster?.result ?? null,
+          fields: request.fields ?? null,
+        }),
+      )
+      state = { ...state, readings }
+    }
     if (wants('sweep')) {
       const sweep = await sweepRows(plan, run, part('sweep'))
       state = { ...state, sweep }
@@ -169,6 +187,8 @@ function missingPart(plan: Plan, sections: readonly Section[], wantsPulse: boole
     return 'The plan has no thruster section: there is no thruster to compute.'
   if (sections.includes('tankRun') && plan.tankRun === null)
     return 'The plan has no tankRun section: there is no day to plan.'
+  if (sections.includes('readings') && !holdsReadings(plan))
+    return 'The plan holds no readings: there is nothing to compare.'
   if (sections.includes('sweep') && plan.sweep === null)
     return 'The plan has no sweep section: there are no rows to compute.'
   if (sections.includes('spread') && plan.spread === null)
@@ -179,7 +199,7 @@ function missingPart(plan: Plan, sections: readonly Section[], wantsPulse: boole
     : null
 }
 
-const NEED_PULSE: readonly Section[] = ['jet', 'thruster', 'tankRun', 'spread']
+const NEED_PULSE: readonly Section[] = ['jet', 'thruster', 'tankRun', 'readings', 'spread']
 
 /** Refusals that need no computation, told before a long one begins. @throws {DomainError} */
 function refuseEarly(plan: Plan, sections: readonly Section[]): void {
@@ -202,6 +222,7 @@ function costlyParts(plan: Plan, request: RunRequest, readsJet: boolean): readon
     ['thruster', wants('thruster')],
     ['sizing', wants('thruster') && makesSizing(plan, request)],
     ['tankRun', wants('tankRun')],
+    ['readings', wants('readings')],
     ['sweep', wants('sweep')],
     ['spread', wants('spread')],
   ]
@@ -244,7 +265,7 @@ function within(options: JetRunOptions, { from, share }: Share): JetRunOptions {
 }
 
 /** Sections with a pulse of their own, which reads the jet where the plan adopts it. */
-const ADOPT_JET: readonly Section[] = ['thruster', 'tankRun', 'spread']
+const ADOPT_JET: readonly Section[] = ['thruster', 'tankRun', 'readings', 'spread']
 
 /** Whether the wake follows the rings of the pulse. */
 function needsPulse(plan: Plan): boolean {

@@ -8,6 +8,7 @@ export const COST = {
   thruster: 1,
   sizing: 40,
   tankRun: 10,
+  readings: 5,
   sweep: 400,
   spread: 100,
 } as const

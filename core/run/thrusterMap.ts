@@ -30,7 +30,8 @@ export type ThrusterMapResult =
   | { readonly status: 'failed'; readonly message: string; readonly field: string }
 
 /**
- * The plan as a design of its own map: the eject share is what its stroke takes, so that the map is the plan's own where it stands.
+ * The plan as a design of its own map. Pulsing as planned, the eject share is what its stroke takes, so that the map is the plan's own
+ * where it stands; pulsing as asked, it is the actuator's, as for the candidates of a sizing.
  *
  * @throws {DomainError} on a programme that is refused, or train.period
  */
@@ -39,11 +40,12 @@ export function designOfPlan(plan: Plan, pulsing: ThrusterMapRequest['pulsing'])
   if (thruster === null || train === null)
     throw new DomainError('train.period', 'train.period must be given for a thruster: the plan has no train')
   const { stroke, duration } = compileProgramme(plan.programme)
+  const { valveLag, ejectShare } = thruster.actuator
   return {
     diameter: nozzle.diameter,
     strokeRatio: stroke / nozzle.diameter,
     count: thruster.count,
-    ejectShare: (duration + thruster.actuator.valveLag) / train.period,
+    ejectShare: pulsing === 'planned' ? (duration + valveLag) / train.period : ejectShare,
     frequency: pulsing === 'planned' ? 1 / train.period : null,
   }
 }

@@ -1,7 +1,7 @@
 import type { RunStatus } from '../base'
 import type { Caution } from '../plan'
 import type { PulseResult } from '../pulse'
-import type { TankRunResult } from '../tank'
+import type { FieldResult, ReadingsResult, TankRunResult } from '../tank'
 import type { WaterProperties } from '../water'
 import type { JetData } from './jetTypes'
 import type { SpreadData } from './spread'
@@ -10,7 +10,7 @@ import type { ThrusterData } from './thruster'
 import type { WakeData } from './wake'
 
 /** Sections of results that this version computes, in the order they depend on one another. */
-export const SECTIONS = ['water', 'pulse', 'jet', 'wake', 'thruster', 'tankRun', 'sweep', 'spread'] as const
+export const SECTIONS = ['water', 'pulse', 'jet', 'wake', 'thruster', 'tankRun', 'readings', 'sweep', 'spread'] as const
 export type Section = (typeof SECTIONS)[number]
 
 export interface RunRequest {
@@ -26,6 +26,8 @@ export interface RunRequest {
    * stands is computed. For runs at every change.
    */
   readonly sizing?: 'run' | 'off'
+  /** What the velocity fields that belong to the readings gave; absent or null: none were read. */
+  readonly fields?: FieldResult | null
 }
 
 /** Everything computed from one plan. A section not asked for is null. Frozen; replaced whole. */
@@ -37,6 +39,7 @@ export interface RunData {
   readonly wake: WakeData | null
   readonly thruster: ThrusterData | null
   readonly tankRun: TankRunResult | null
+  readonly readings: ReadingsResult | null
   readonly sweep: SweepData | null
   readonly spread: SpreadData | null
   readonly cautions: readonly Caution[]

@@ -84,9 +84,9 @@ export interface Budget {
   /** From the slug alone, with the loss of close neighbours, to the slug with the start over-pressure of a quick start [N]. */
   readonly meanThrustLow: number
   readonly meanThrustHigh: number
-  /** rho A (f L)^2: one steady jet of equal mean flow, at rest [N]. */
+  /** rho A (f L)^2 of every thruster together: steady jets of equal mean flow through the same exits, at rest [N]. */
   readonly steadyJetThrust: number
-  /** Mean thrust of one thruster over that. */
+  /** Mean thrust over that. */
   readonly thrustRatio: number
   /** Share of thrust that close neighbours may cost. */
   readonly proximityLoss: number
@@ -178,7 +178,7 @@ export function vehicleBudget(moments: StrokeMoments, setting: BudgetSetting): B
   const lowest = Math.min(slugImpulse, impulse) * (1 - proximity)
   const highest = Math.max(impulse, quickStart ? slugImpulse + start.impulse : slugImpulse)
   const flow = frequency * volume
-  const steadyJetThrust = (density * flow * flow) / area
+  const steadyJetThrust = (count * density * flow * flow) / area
 
   const refillTime = 1 / frequency - moments.duration - 2 * setting.valveLag
   const intakeArea = setting.intakeArea ?? area
@@ -210,7 +210,7 @@ export function vehicleBudget(moments: StrokeMoments, setting: BudgetSetting): B
     meanThrustLow: pulses * (lowest * direction - intakeLoss),
     meanThrustHigh: pulses * (highest * direction - intakeLoss),
     steadyJetThrust,
-    thrustRatio: (frequency * thrustPerPulse) / steadyJetThrust,
+    thrustRatio: meanThrust / steadyJetThrust,
     proximityLoss: proximity,
     power: { jet, nozzleLoss, refill, column, total },
     froudeEfficiency: moves && balance > 0 ? useful / balance : null,

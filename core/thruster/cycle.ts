@@ -18,6 +18,9 @@ const BESIDE = 1e-6
 const SLOPE = 2e-7
 /** Corners of the other thrusters' strokes are marked in a common period up to this many. */
 const MOST_CORNERS = 12
+/** Sections of a search between two times: to 1e-6 of their distance, where a smooth top is good to 1e-12. */
+const GOLDEN_STEPS = 28
+const GOLDEN = (Math.sqrt(5) - 1) / 2
 
 /** One period at rising times; every array has one length. Single thruster unless said otherwise. */
 export interface CycleHistory {
@@ -167,14 +170,40 @@ export function thrusterCycle(
     history.thrust.push(thrustAt(t))
     history.totalThrust.push(totalAt(t))
   }
-  const peakThrust = Math.max(...history.totalThrust)
-  const lowestThrust = Math.min(...history.totalThrust)
+  // Corners hold the extremes of one thruster; of several in turn they may lie anywhere, also between two times.
+  const between = inTurn && count > 1 ? { time, at: totalAt } : null
+  const peakThrust = highestOf(history.totalThrust, 1, between)
+  const lowestThrust = -highestOf(history.totalThrust, -1, between)
   return {
     history: { time, ...history },
     peakThrust,
     lowestThrust,
     ripple: budget.meanThrust > 0 ? (peakThrust - lowestThrust) / budget.meanThrust : null,
   }
+}
+
+/** Largest of sign times the values; with a curve, also between the times beside the largest, by golden sections. */
+function highestOf(
+  values: readonly number[],
+  sign: number,
+  between: { readonly time: readonly number[]; readonly at: (time: number) => number } | null,
+): number {
+  const signed = values.map((value) => sign * value)
+  const highest = Math.max(...signed)
+  if (between === null) return highest
+  const where = signed.indexOf(highest)
+  let low = at(between.time, Math.max(0, where - 1))
+  let high = at(between.time, Math.min(values.length - 1, where + 1))
+  let best = highest
+  for (let k = 0; k < GOLDEN_STEPS; k++) {
+    const inner = GOLDEN * (high - low)
+    const [left, right] = [high - inner, low + inner]
+    const [onLeft, onRight] = [sign * between.at(left), sign * between.at(right)]
+    best = Math.max(best, onLeft, onRight)
+    if (onLeft > onRight) high = right
+    else low = left
+  }
+  return best
 }
 
 /** Time folded into 0..period. */

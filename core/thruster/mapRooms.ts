@@ -45,12 +45,16 @@ export class MapRooms {
 
   /**
    * Slack over the limit. Two limits are met exactly wherever they can be: their room is then that of what is left to meet them with,
-   * so that it goes through 0 where they begin to be broken.
+   * so that it goes through 0 where they begin to be broken. Thrust grows with the square of the frequency, so a thrust that is missing
+   * is told as the frequency that is missing: one slope on both sides of the edge.
    */
   private roomOf(limit: Limit, { held }: PointFigures): number {
     const { valveLag } = this.designs.problem.section.actuator
     if (limit.ok && limit.name === 'eject time') return held.ejectShare - valveLag * held.frequency
-    if (limit.ok && limit.name === 'thrust' && this.found) return 1 - held.frequency / this.fastest
+    if (limit.name === 'thrust' && this.found) {
+      if (limit.ok) return 1 - held.frequency / this.fastest
+      if (limit.value > 0) return 1 - Math.sqrt(limit.limit / limit.value)
+    }
     return slackOf(limit, limitScales(this.designs, held.frequency))
   }
 }

@@ -78,9 +78,9 @@ export interface ThrusterResult {
   readonly meanThrustRange: readonly [number, number]
   /** Highest in the period. */
   readonly peakThrust: number
-  /** One steady jet of equal mean flow, at rest: rho A (f L)^2. */
+  /** Steady jets of equal mean flow through the same exits, at rest: rho A (f L)^2 of every thruster. */
   readonly steadyJetThrust: number
-  /** Mean thrust of one thruster over that. */
+  /** Mean thrust over that. */
   readonly thrustRatio: number
   readonly power: ThrusterPower
   /** Null at rest and without thrust, both. */

@@ -39,7 +39,7 @@ export interface RingImpulseCurve {
   readonly strokeRatio: readonly number[]
   /** [N s/J] */
   readonly impulsePerWork: readonly number[]
-  /** Stroke ratio at which it is largest. */
+  /** Stroke ratio at which it is largest; the longest of those that are alike, since at constant speed it is level until the ring is full. */
   readonly best: number
 }
 
@@ -47,6 +47,8 @@ export interface RingImpulseCurve {
 const FROM = 0.5
 const TO = 10
 const POINTS = 96
+/** Values this close, relative, are one: rounding of sums must not choose among them. */
+const ALIKE = 1e-9
 
 /** Stroke ratios at which plunger thrusters gave most (Krieg, Coley, Hart & Mohseni 2005, conference), shown beside the curve. */
 export const MEASURED_BEST_STROKE: readonly [number, number] = [4, 5.5]
@@ -77,10 +79,8 @@ export function ringImpulsePerWork(
     const share = ratio <= formationNumber ? 1 : full.integralSpeedSquared / moments.integralSpeedSquared
     return (budget.impulse * share) / (budget.power.total / frequency)
   })
-  let best = 0
-  impulsePerWork.forEach((value, i) => {
-    if (value > (impulsePerWork[best] ?? 0)) best = i
-  })
+  const least = (1 - ALIKE) * Math.max(...impulsePerWork)
+  const best = impulsePerWork.findLastIndex((value) => value >= least)
   return { strokeRatio, impulsePerWork, best: strokeRatio[best] ?? NaN }
 }
 

@@ -167,7 +167,9 @@ function dutiesOf(input: ThrusterInput, moments: StrokeMoments, setting: BudgetS
     const speed = 'speed' in duty ? duty.speed : null
     const { meanThrust: thrust } = vehicleBudget(moments, { ...setting, speed: speed ?? 0 })
     const needed = 'thrust' in duty ? duty.thrust : (drag?.dragAt(duty.speed) ?? 0)
-    return { speed, thrust, needed, shortfall: Math.max(0, needed - thrust) }
+    // As for the limit: sums that should meet exactly may differ in their last digits.
+    const met = atLeast('thrust', thrust, needed).every(({ ok }) => ok)
+    return { speed, thrust, needed, shortfall: met ? 0 : needed - thrust }
   })
 }
 

@@ -62,8 +62,7 @@ export interface BayInput {
 
 /** One thing the vehicle must do: hold a speed against its drag, or give a thrust while standing. */
 export type DutyPoint =
-  | { readonly speed: number; readonly share: number }
-  | { readonly thrust: number; readonly share: number }
+  { readonly speed: number; readonly share: number } | { readonly thrust: number; readonly share: number }
 
 /** Low and high end. */
 export type Span = readonly [number, number]

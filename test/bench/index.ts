@@ -5,6 +5,7 @@ import { jetFigures } from './jet'
 import { kernelBench } from './kernel'
 import type { Figure } from './measure'
 import { thrusterFigures } from './thruster'
+import { varietyFigures } from './variety'
 import { wakePlaybackFigures } from './wakePlayback'
 
 /** Groups by name, so that one can be asked for alone: `npm run bench -- core`. */
@@ -13,6 +14,7 @@ export const GROUPS: Readonly<Record<string, () => Promise<readonly Figure[]>>> 
   kernel: kernelBench,
   jet: jetFigures,
   thruster: thrusterFigures,
+  variety: varietyFigures,
   playback: wakePlaybackFigures,
   commands: commandFigures,
 }

@@ -7,9 +7,9 @@ import type { DocumentBlock, DocumentColumn, Paper, PrintDocument } from './type
 
 /** The article alone, for a window that brings the style itself. */
 export function documentBody(document: PrintDocument): string {
-  const { kind, title, titleBlock, blocks, foot } = document
+  const { kind, title, titleBlock, blocks, foot, numbered = false } = document
   return [
-    '<article class="print-document">',
+    `<article class="print-document${numbered ? ' numbered' : ''}">`,
     `<header><p class="kind">${escapeXml(kind)}</p><h1>${escapeXml(title)}</h1>`,
     `${pairs(titleBlock, 'title-block')}</header>`,
     ...blocks.map(block),
@@ -18,8 +18,8 @@ export function documentBody(document: PrintDocument): string {
   ].join('\n')
 }
 
-/** A whole file that stands alone: no script, nothing loaded. */
-export function documentHtml(document: PrintDocument, paper: Paper): string {
+/** A whole file that stands alone: no script, nothing loaded. @param paper null: that of the printer */
+export function documentHtml(document: PrintDocument, paper: Paper | null): string {
   return `<!doctype html>
 <html lang="en">
 <head>
@@ -47,7 +47,7 @@ function block(item: DocumentBlock): string {
     case 'checklist':
       return list(item.items, ' class="ticks"')
     case 'table':
-      return table(item.caption, item.columns, item.rows)
+      return table(item.caption, item.columns, item.rows, item.flows === true)
     case 'pairs':
       return pairs(item.rows, '')
     case 'figure':
@@ -83,6 +83,7 @@ function table(
   caption: string | null,
   columns: readonly DocumentColumn[],
   rows: readonly (readonly string[])[],
+  flows: boolean,
 ): string {
   const numeric = (index: number): string => {
     const { numeric: right = false, blank = false } = columns[index] ?? {}
@@ -94,7 +95,7 @@ function table(
     (cells) => `<tr>${cells.map((cell, index) => `<td${numeric(index)}>${escapeXml(cell)}</td>`).join('')}</tr>`,
   )
   return [
-    rows.length > KEPT_WHOLE ? '<table>' : '<table class="whole">',
+    flows || rows.length > KEPT_WHOLE ? '<table>' : '<table class="whole">',
     caption === null ? '' : `<caption>${escapeXml(caption)}</caption>`,
     `<thead><tr>${head.join('')}</tr></thead><tbody>`,
     ...body,

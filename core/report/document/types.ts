@@ -24,6 +24,8 @@ export type DocumentBlock =
       readonly caption: string | null
       readonly columns: readonly DocumentColumn[]
       readonly rows: readonly (readonly string[])[]
+      /** True: rows of several lines, so that even a short table may go on over the page. */
+      readonly flows?: boolean
     }
   /** A name and its value a line, in two columns where there is room. */
   | { readonly kind: 'pairs'; readonly rows: readonly (readonly [name: string, value: string])[] }
@@ -52,6 +54,8 @@ export interface PrintDocument {
   readonly title: string
   readonly titleBlock: readonly (readonly [name: string, value: string])[]
   readonly blocks: readonly DocumentBlock[]
+  /** True: headings, figures and tables with a caption carry numbers. */
+  readonly numbered?: boolean
   /** Last line of the document: program, version, input hash. */
   readonly foot: string
 }

@@ -45,14 +45,19 @@ export function adoptedModels({ plan, data }: RecordContext): readonly Adopted[]
   if (wake !== null)
     rows.push([
       'Motion of rings',
-      wake.wake.model === 'coaxial' ? `one axis, ${CHOICES['wake.law'][plan.wake?.law ?? 'thin']} law` : 'filaments in space, regularised',
+      wake.wake.model === 'coaxial'
+        ? `one axis, ${CHOICES['wake.law'][plan.wake?.law ?? 'thin']} law`
+        : 'filaments in space, regularised',
       'Lamb, Hydrodynamics, art. 163; Rosenhead 1930 and Moore 1972 for the regularised kernel.',
     ])
-  if (wake !== null || tankRun !== null)
-    rows.push(['Ageing of rings', ageing({ plan, data }), AGEING_SOURCES])
+  if (wake !== null || tankRun !== null) rows.push(['Ageing of rings', ageing({ plan, data }), AGEING_SOURCES])
   if (thruster !== null)
     rows.push(
-      ['Thrust and power', 'momentum and energy over one period, pulses that do not disturb one another', 'Momentum balance; close neighbours: Athanassiadis & Hart 2016, arXiv 1604.05382.'],
+      [
+        'Thrust and power',
+        'momentum and energy over one period, pulses that do not disturb one another',
+        'Momentum balance; close neighbours: Athanassiadis & Hart 2016, arXiv 1604.05382.',
+      ],
       ...dragModel(plan.thruster?.vehicle?.drag?.kind ?? null),
     )
   return rows
@@ -87,12 +92,16 @@ export function leftOut({ plan, data }: RecordContext): readonly string[] {
   const { pulse } = data
   return [
     ...(pulse !== null && plan.models.overPressure === 'off'
-      ? ['Circulation, impulse and energy beyond the slug: the adopted values are those of the slug, the ranges show the quick start.']
+      ? [
+          'Circulation, impulse and energy beyond the slug: the adopted values are those of the slug, the ranges show the quick start.',
+        ]
       : []),
     ...(pulse !== null && data.jet === null && plan.models.formationNumber !== 'computed'
       ? ['The starting jet: this record has none computed.']
       : []),
-    ...(pulse === null ? [] : ['Viscosity while the ring forms, the boundary layer in the nozzle, waves round the ring.']),
+    ...(pulse === null
+      ? []
+      : ['Viscosity while the ring forms, the boundary layer in the nozzle, waves round the ring.']),
     ...(data.wake !== null && plan.wake?.viscous === false ? ['Viscosity in the wake: rings keep their cores.'] : []),
     ...(data.thruster === null ? [] : ['What one pulse does to the next, and what the hull does to intake and jet.']),
     ...(data.tankRun === null ? [] : ['Vorticity that tank walls shed, motion left over from earlier runs.']),
@@ -109,6 +118,7 @@ export function assumptionBlocks(context: RecordContext): readonly DocumentBlock
       caption: 'Adopted models',
       columns: [{ title: 'Subject' }, { title: 'Adopted' }, { title: 'Source' }],
       rows: adoptedModels(context).map((row) => [...row]),
+      flows: true,
     },
     ...(items.length === 0
       ? []

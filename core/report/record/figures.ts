@@ -16,7 +16,10 @@ const MOST_POINTS = 400
 export function plotFigures(models: readonly PlotModel[]): readonly DocumentBlock[] {
   if (models.length === 0) return []
   const size = models.length === 1 ? LONE : HALF
-  const items = models.map((model) => ({ svg: plotToSvg(thinPlot(model, MOST_POINTS), size), caption: captionOf(model) }))
+  const items = models.map((model) => ({
+    svg: plotToSvg(thinPlot(model, MOST_POINTS), size),
+    caption: captionOf(model),
+  }))
   return [{ kind: 'figures', items }]
 }
 

@@ -22,7 +22,12 @@ const PULSE: readonly ExplanationId[] = [
   'ringReynolds',
   'ring.corePressure',
 ]
-const JET: readonly JetExplanationId[] = ['jet.formationNumber', 'jet.ringCirculation', 'jet.ringEnergy', 'jet.beyondSlug']
+const JET: readonly JetExplanationId[] = [
+  'jet.formationNumber',
+  'jet.ringCirculation',
+  'jet.ringEnergy',
+  'jet.beyondSlug',
+]
 const THRUSTER: readonly ThrusterExplanationId[] = [
   'meanThrust',
   'speed',
@@ -44,7 +49,9 @@ export function recordExplanations({ plan, data }: RecordContext): readonly Expl
   return [
     ...(pulse === null
       ? []
-      : PULSE.filter((id) => pulse.ring !== null || !id.startsWith('ring')).map((id) => explain(id, { plan, water, pulse }))),
+      : PULSE.filter((id) => pulse.ring !== null || !id.startsWith('ring')).map((id) =>
+          explain(id, { plan, water, pulse }),
+        )),
     ...(pulse === null || pulse.pinchedOff !== true ? [] : [explain('trailingJet', { plan, water, pulse })]),
     ...(jet === null ? [] : JET.map((id) => explainJet(id, { plan, own: jet.own, formation: jet.formation }))),
     ...(thruster === null || section === null
@@ -65,20 +72,23 @@ function concerns(id: ThrusterExplanationId, { speed, costOfTransport, endurance
   return id !== 'ringSpacing' || ringSpacing !== null
 }
 
+/** Stands for what the formula before has too. */
+const AS_ABOVE = 'as above'
+
 export function formulaBlocks(context: RecordContext): readonly DocumentBlock[] {
   const explanations = recordExplanations(context)
   if (explanations.length === 0) return []
   return [
     { kind: 'heading', text: 'Formulas' },
-    ...explanations.map(({ title, mathml, formula, source, mark, range, inside, verdict }): DocumentBlock => ({
+    ...explanations.map(({ title, mathml, formula, source, mark, range, inside, verdict }, i): DocumentBlock => ({
       kind: 'derivation',
       title,
       mathml,
       rows: [
         ['In words', formula],
-        ['Source', `${source} Mark: ${mark}.`],
-        ['Holds for', range],
-        [inside ? 'This plan' : 'NOTE', verdict],
+        ['Source', explanations[i - 1]?.source === source ? AS_ABOVE : `${source} Mark: ${mark}.`],
+        ['Holds for', explanations[i - 1]?.range === range ? AS_ABOVE : range],
+        [inside ? 'This plan' : 'Take care', verdict],
       ],
     })),
   ]

@@ -9,8 +9,8 @@ export interface InputRow {
   readonly path: string
   readonly label: string
   readonly value: string
-  /** unread: the formulas of this plan do not look at it. absent: not given. */
-  readonly state: 'read' | 'unread' | 'absent'
+  /** unread: the formulas of this plan do not look at it. absent: not given. moot: both. */
+  readonly state: 'read' | 'unread' | 'absent' | 'moot'
 }
 
 /** A list of alike objects, one row each. */
@@ -77,19 +77,24 @@ const COLUMNS: Readonly<Record<string, FieldDefinition>> = {
 export function inputGroups(plan: Plan, show: Show): readonly InputGroup[] {
   const groups = new Map<string, { path: string; rows: InputRow[]; lists: InputList[] }>()
   const groupOf = (path: string): { rows: InputRow[]; lists: InputList[] } => {
-    const found = groups.get(path) ?? { path, rows: [], lists: [] }
-    groups.set(path, found)
+    const name = path === 'ambient' ? 'nozzle' : path
+    const found = groups.get(name) ?? { path: name, rows: [], lists: [] }
+    groups.set(name, found)
     return found
   }
   const walk = (node: Json, path: string, group: string): void => {
     if (isList(node) && node.some(isPart)) {
       groupOf(group).lists.push(listOf(node, path, show))
-    } else if (isList(node) && (node.length === 0 || quantityDefinition(`${path}.0`)?.label === undefined || !isPlaced(path))) {
+    } else if (
+      isList(node) &&
+      (node.length === 0 || quantityDefinition(`${path}.0`)?.label === undefined || !isPlaced(path))
+    ) {
       groupOf(group).rows.push(row(plan, path, node, show))
     } else if (isList(node)) {
       node.forEach((item, index) => walk(item, `${path}.${index}`, group))
     } else if (isPart(node)) {
-      if (path === 'spread.relative' || path === 'spread.absolute') groupOf(group).lists.push(deviations(node, path, show))
+      if (path === 'spread.relative' || path === 'spread.absolute')
+        groupOf(group).lists.push(deviations(node, path, show))
       else for (const [key, value] of Object.entries(node)) walk(value, `${path}.${key}`, path)
     } else {
       groupOf(group).rows.push(row(plan, path, node, show))
@@ -101,7 +106,9 @@ export function inputGroups(plan: Plan, show: Show): readonly InputGroup[] {
 
 /** Lists whose places have names of their own: the ends of a span, columns and rows of a camera. */
 function isPlaced(path: string): boolean {
-  return /^(?:thruster\.search\.(?:diameter|strokeRatio|frequency|count|ejectShare)|tankRun\.camera\.pixels)$/u.test(path)
+  return /^(?:thruster\.search\.(?:diameter|strokeRatio|frequency|count|ejectShare)|tankRun\.camera\.pixels)$/u.test(
+    path,
+  )
 }
 
 /** What is known of a number; a lone duty point is saved without its place in the list. */
@@ -111,7 +118,7 @@ function definitionOf(path: string): FieldDefinition | null {
 
 function row(plan: Plan, path: string, value: Json, show: Show): InputRow {
   const label = labelOf(path)
-  if (value === null) return { path, label, value: NONE, state: 'absent' }
+  if (value === null) return { path, label, value: NONE, state: isRead(plan, path) ? 'absent' : 'moot' }
   if (isList(value) && value.length === 0) return { path, label, value: 'none', state: 'absent' }
   return { path, label, value: valueText(path, value, show), state: isRead(plan, path) ? 'read' : 'unread' }
 }
@@ -200,7 +207,9 @@ function listOf(items: readonly Json[], path: string, show: Show): InputList {
     if (varied && key !== 'count' && typeof named === 'string') return levelText(named, value, show)
     const at = `${path}.${index}.${key}`
     const column = definitionOf(at) === null ? COLUMNS[key] : undefined
-    return typeof value === 'number' && column !== undefined ? show.input(value, at, column) : valueText(at, value, show)
+    return typeof value === 'number' && column !== undefined
+      ? show.input(value, at, column)
+      : valueText(at, value, show)
   }
   return {
     path,
@@ -242,7 +251,9 @@ function deviations(node: { readonly [key: string]: Json }, path: string, show: 
     ],
     rows: Object.entries(node).map(([field, value]) => [
       pathInWords(field),
-      relative && typeof value === 'number' ? `${Number((100 * value).toPrecision(6))}\u00A0%` : levelText(field, value, show),
+      relative && typeof value === 'number'
+        ? `${Number((100 * value).toPrecision(6))}\u00A0%`
+        : levelText(field, value, show),
     ]),
     further: 0,
   }

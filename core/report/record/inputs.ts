@@ -7,7 +7,6 @@ const TITLES: Readonly<Record<string, string>> = {
   water: 'Water',
   nozzle: 'Nozzle',
   programme: 'Speed programme',
-  ambient: 'Flow past the nozzle',
   models: 'Adopted models',
   jet: 'Starting jet',
   train: 'Pulse train',
@@ -74,7 +73,9 @@ function groupBlocks({ path, rows, lists }: InputGroup): DocumentBlock[] {
 }
 
 function told(words: string, items: readonly string[]): string[] {
-  return items.length === 0 ? [] : [`${words}: ${items.map((item, index) => (index === 0 ? item : lowered(item))).join(', ')}.`]
+  return items.length === 0
+    ? []
+    : [`${words}: ${items.map((item, index) => (index === 0 ? item : lowered(item))).join(', ')}.`]
 }
 
 /** A label inside a sentence; names of one letter stay. */
@@ -91,7 +92,9 @@ function listBlocks({ path, columns, rows, further }: InputList): DocumentBlock[
 function besideBlocks({ held, readings }: RecordContext['plan']): DocumentBlock[] {
   const names = held.map(({ name }) => name).join(', ')
   const sentences = [
-    ...(readings === null ? [] : ['Readings stand in the plan file; they are no inputs of the design and are not printed here.']),
+    ...(readings === null
+      ? []
+      : ['Readings stand in the plan file; they are no inputs of the design and are not printed here.']),
     ...(held.length === 0 ? [] : [`Designs held beside this one, not printed here: ${names}.`]),
   ]
   return sentences.length === 0 ? [] : [{ kind: 'paragraph', tone: 'small', text: sentences.join(' ') }]

@@ -30,13 +30,28 @@ export function jetBlocks(context: RecordContext): readonly DocumentBlock[] {
       plain(formation?.formationNumber),
       formation === null || formation.byDelta.length > 1 ? 'over the smoothing lengths' : basis,
     ],
-    ['Ring circulation', show.range(...ends(range(byDelta, 'ringCirculation')), 'circulation'), show.result(own.ringCirculation, 'circulation'), basis],
-    ['Dimensionless energy of the ring', show.range(...ends(range(byDelta, 'ringDimensionlessEnergy')), 'number'), plain(own.ringDimensionlessEnergy), basis],
-    ['Ring speed', show.range(...ends(range(byDelta, 'ringSpeed')), 'ringSpeed'), show.result(own.ringSpeed, 'ringSpeed'), basis],
+    [
+      'Ring circulation',
+      show.range(...ends(range(byDelta, 'ringCirculation')), 'circulation'),
+      show.result(own.ringCirculation, 'circulation'),
+      basis,
+    ],
+    [
+      'Dimensionless energy of the ring',
+      show.range(...ends(range(byDelta, 'ringDimensionlessEnergy')), 'number'),
+      plain(own.ringDimensionlessEnergy),
+      basis,
+    ],
+    [
+      'Ring speed',
+      show.range(...ends(range(byDelta, 'ringSpeed')), 'ringSpeed'),
+      show.result(own.ringSpeed, 'ringSpeed'),
+      basis,
+    ],
   ]
   return [
     { kind: 'subheading', text: 'Starting jet' },
-    { kind: 'paragraph', tone: jet.status === 'done' ? 'small' : 'limit', text: jet.message },
+    ...(jet.status === 'done' ? [] : [{ kind: 'paragraph', tone: 'limit', text: jet.message } as const]),
     figureTable(null, rows),
     {
       kind: 'pairs',
@@ -48,7 +63,10 @@ export function jetBlocks(context: RecordContext): readonly DocumentBlock[] {
         ['Pinch-off seen at', show.result(own.pinchOffTime, 'time')],
         ['Trailing jet', own.trailingJet === null ? 'not told' : own.trailingJet ? 'yes' : 'none'],
         ['Stopping vortex', show.result(own.shown.stoppingCirculation, 'circulation')],
-        ['Drift of impulse, of energy', own.drift === null ? 'not measured' : `${plain(own.drift.impulse)}, ${plain(own.drift.energy)}`],
+        [
+          'Drift of impulse, of energy',
+          own.drift === null ? 'not measured' : `${plain(own.drift.impulse)}, ${plain(own.drift.energy)}`,
+        ],
       ],
     },
     ...drawings(context, jet),

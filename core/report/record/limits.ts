@@ -35,13 +35,17 @@ const LEAST: ReadonlySet<string> = new Set<LimitName>(['refill time', 'core cavi
 
 /** Every limit that was checked, broken ones first. */
 export function limitRows({ plan, data, show }: RecordContext): readonly LimitRow[] {
-  const thruster = (data.thruster?.result.limits ?? []).map(({ name, value, limit, ok }): LimitRow => ({
-    name: sentence(name),
-    value: show.result(value, THRUSTER_UNITS[name]),
-    limit: `${LEAST.has(name) ? 'at least' : 'at most'} ${show.result(limit, THRUSTER_UNITS[name])}`,
-    room: roomOf(value, limit, LEAST.has(name)),
-    ok,
-  }))
+  const checked = data.thruster?.result.limits ?? []
+  // Thrust at the duty points stands with their numbers below.
+  const thruster = checked
+    .filter(({ name }) => name !== 'thrust')
+    .map(({ name, value, limit, ok }): LimitRow => ({
+      name: sentence(name),
+      value: show.result(value, THRUSTER_UNITS[name]),
+      limit: `${LEAST.has(name) ? 'at least' : 'at most'} ${show.result(limit, THRUSTER_UNITS[name])}`,
+      room: roomOf(value, limit, LEAST.has(name)),
+      ok,
+    }))
   const duties = (data.thruster?.result.duties ?? []).map(({ thrust, needed, shortfall }, i): LimitRow => ({
     name: `Thrust at duty point ${i + 1}`,
     value: show.result(thrust, 'force'),

@@ -37,10 +37,13 @@ const RING_ROWS = [
 /** Rows of the ring, range first and adopted value second. */
 export function ringFigures(pulse: PulseResult, show: Show): readonly FigureRow[] {
   const ends = ringEnds(pulse)
-  const basis = pulse.ringWithOverPressure === null ? 'slug; the start is too slow for over-pressure' : 'slug, to slug with quick start'
+  const basis =
+    pulse.ringWithOverPressure === null
+      ? 'one value: the start is too slow for over-pressure'
+      : 'slug, to slug with quick start'
   return RING_ROWS.map(([name, key, unit]): FigureRow => {
     const [low, high] = endsOf(ends.map((ring) => ring[key]))
-    return [name, show.range(low, high, unit), show.result(pulse.ring?.[key], unit), basis]
+    return [name, low === high ? NONE : show.range(low, high, unit), show.result(pulse.ring?.[key], unit), basis]
   })
 }
 
@@ -50,7 +53,12 @@ export function formationFigures({ plan, show }: RecordContext, pulse: PulseResu
   const basis = adoptedBasisInWords(plan).formationNumber
   const margin = pulse.margin
   return [
-    ['Formation number', show.range(low, high, 'number'), plain(adopted), `published band and estimates; ${basis} adopted`],
+    [
+      'Formation number',
+      show.range(low, high, 'number'),
+      plain(adopted),
+      `published band and estimates; ${basis} adopted`,
+    ],
     [
       'Stroke left before pinch-off (D)',
       margin === null ? NONE : show.range(margin.low, margin.high, 'number'),
@@ -116,10 +124,9 @@ export function pulseBlocks(context: RecordContext): readonly DocumentBlock[] {
         ['Limiting circulation', plain(pulse.limitingCirculation)],
       ],
     },
-    figureTable('The ring', pulse.ring === null ? [] : ringFigures(pulse, show)),
-    ...(pulse.ring === null
-      ? [{ kind: 'paragraph', tone: 'limit', text: 'No ring is expected from this pulse.' } as const]
-      : [{ kind: 'paragraph', tone: 'small', text: `The ring was matched by: ${pulse.ring.model}.` } as const]),
+    pulse.ring === null
+      ? { kind: 'paragraph', tone: 'limit', text: 'No ring is expected from this pulse.' }
+      : ringTable(pulse, show),
     {
       kind: 'table',
       caption: 'Sums over the whole pulse',
@@ -150,6 +157,16 @@ export function pulseBlocks(context: RecordContext): readonly DocumentBlock[] {
   ]
 }
 
+function ringTable(pulse: PulseResult, show: Show): DocumentBlock {
+  const rows = ringFigures(pulse, show)
+  return {
+    kind: 'table',
+    caption: `The ring, matched by: ${pulse.ring?.model ?? NONE}. Range: ${rows[0]?.[3] ?? NONE}`,
+    columns: [{ title: 'Figure' }, { title: 'Range', numeric: true }, { title: 'Adopted', numeric: true }],
+    rows: rows.map(([name, range, adopted]) => [name, range, adopted]),
+  }
+}
+
 const ESTIMATES = [
   ['energyLimit', 'Energy limit'],
   ['carriedVolume', 'Carried volume'],
@@ -174,7 +191,9 @@ function estimates({ plan }: RecordContext, pulse: PulseResult): DocumentBlock {
       plan.models.formationNumber === key ? `${name}, adopted` : name,
       text,
       key === 'published' ? NONE : plain(before),
-      key === 'computed' && value === null && noteOf(key) === '' ? 'the starting jet is not computed here' : noteOf(key),
+      key === 'computed' && value === null && noteOf(key) === ''
+        ? 'the starting jet is not computed here'
+        : noteOf(key),
     ]
   })
   return {
@@ -187,5 +206,6 @@ function estimates({ plan }: RecordContext, pulse: PulseResult): DocumentBlock {
       { title: 'Note' },
     ],
     rows,
+    flows: true,
   }
 }

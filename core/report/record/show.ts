@@ -18,8 +18,8 @@ type Known = number | null | undefined
 export interface Show {
   /** A value as it was typed, to six digits. */
   input(value: number, path: string, definition: FieldDefinition): string
-  /** A result to three digits; a dash where there is none. */
-  result(value: Known, key: UnitKey): string
+  /** A result to three digits where no other count is given; a dash where there is none. */
+  result(value: Known, key: UnitKey, digits?: number): string
   /** Two ends, told once where they look the same. */
   range(low: Known, high: Known, key: UnitKey): string
   /** Unit for all of these together. */
@@ -48,33 +48,53 @@ export function showOf(plan: Plan): Show {
       const chosen = unitAt(key, value)
       return formatQuantity(value, readable(value, chosen, key), INPUT_DIGITS)
     },
-    result: (value, key) => {
+    result: (value, key, digits = RESULT_DIGITS) => {
       if (value === null || value === undefined) return NONE
       if (!Number.isFinite(value)) return Number.isNaN(value) ? NONE : UNBOUNDED
-      return formatQuantity(value, unitAt(key, value), RESULT_DIGITS)
+      return formatQuantity(value, unitAt(key, value), digits)
     },
     range(low, high, key) {
       const ends = [low, high].filter(isKnown)
       const [first, second = first] = ends
       if (first === undefined || second === undefined) return NONE
-      const { text, unit: shown } = formatRange(first, second, unit(key, ends), RESULT_DIGITS)
+      const { text, unit: shown } = formatRange(
+        first,
+        second,
+        unit(key, ends),
+        key === 'number' ? RESULT_DIGITS : digitsOf(first, second),
+      )
       return shown === '' ? text : `${text}\u00A0${shown}`
     },
     unit,
     column(title, key, values, digits = RESULT_DIGITS) {
       const shown = unit(key, values)
+      const numbers = values.map((value) => (isKnown(value) ? fromBase(value, shown) : value))
       return {
         column: { title: shown === '' ? title : `${title} (${shown})`, numeric: true },
-        cells: values.map((value) =>
-          value === null || value === undefined
-            ? NONE
-            : Number.isFinite(value)
-              ? formatNumber(fromBase(value, shown), digits)
-              : UNBOUNDED,
-        ),
+        cells: aligned(numbers, digits),
       }
     },
   }
+}
+
+/** Numbers of a column with one count of decimals, as many as the largest needs; each its own way where one would show as nothing. */
+function aligned(values: readonly Known[], digits: number): string[] {
+  const known = values.filter(isKnown)
+  const most = known.reduce((size, value) => Math.max(size, Math.abs(value)), 0)
+  const decimals = most === 0 ? 0 : digits - 1 - Math.floor(Math.log10(most))
+  const least = 0.5 * 10 ** -decimals
+  const alike = decimals >= 0 && decimals <= 6 && known.every((value) => value === 0 || Math.abs(value) >= 20 * least)
+  return values.map((value) => {
+    if (value === null || value === undefined || Number.isNaN(value)) return NONE
+    if (!Number.isFinite(value)) return UNBOUNDED
+    return alike ? value.toFixed(decimals).replace('-', '\u2212') : formatNumber(value, digits)
+  })
+}
+
+/** One digit more where the smaller end has one order less: else it would show less than the adopted value beside it. */
+function digitsOf(a: number, b: number): number {
+  const [low, high] = [a, b].map((value) => Math.floor(Math.log10(Math.abs(value))))
+  return low !== undefined && high !== undefined && Math.abs(high - low) === 1 ? RESULT_DIGITS + 1 : RESULT_DIGITS
 }
 
 function isKnown(value: Known): value is number {
@@ -86,8 +106,10 @@ function readable(value: number, unit: string, key: UnitKey): string {
   return UNIT_GROUPS[key].dimension === 'length' && unit === 'mm' && value !== 0 && Math.abs(value) < 1e-4 ? 'µm' : unit
 }
 
-/** Percent of a share, to three digits. */
+/** Percent of a share, to three digits; what is next to nothing or far beyond all is told in words. */
 export function percent(share: Known): string {
+  if (isKnown(share) && share !== 0 && Math.abs(share) < 1e-4) return 'below 0.01\u00A0%'
+  if (isKnown(share) && share > 9.995) return 'above 1000\u00A0%'
   return isKnown(share) ? `${formatNumber(100 * share, RESULT_DIGITS)}\u00A0%` : NONE
 }
 

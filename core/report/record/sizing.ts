@@ -1,23 +1,29 @@
 /** The sizing in print: candidates side by side, what binds them, the front of power against size. */
-import type { Candidate, SizingResult } from '../../thruster'
+import type { Candidate, CandidatePoint, SizingResult } from '../../thruster'
 import type { DocumentBlock } from '../document/types'
+import type { UnitKey } from '../../plan'
 import type { PlotModel } from '../types'
 import { fromBase } from '../../quantity'
 import { plotFigures } from './figures'
-import { NONE, percent, plain, type Show } from './show'
+import { NONE, percent, plain, tableOf, type Show, type ShownColumn } from './show'
 import type { RecordContext } from './types'
 
 /** Points of the front that are printed as rows. */
 const FRONT_ROWS = 12
 
 export function sizingBlocks({ show }: RecordContext, sizing: SizingResult): readonly DocumentBlock[] {
-  const shown = sizing.candidates.length > 0 ? sizing.candidates : sizing.nearest === null ? [] : [sizing.nearest.candidate]
+  const shown =
+    sizing.candidates.length > 0 ? sizing.candidates : sizing.nearest === null ? [] : [sizing.nearest.candidate]
   const found = sizing.candidates.length > 0
   const goal = sizing.goal === 'power' ? 'least power' : 'most thrust'
   return [
     { kind: 'subheading', text: 'Sizing' },
-    { kind: 'paragraph', tone: sizing.status === 'done' && found ? 'small' : 'limit', text: `${sizing.message} Looked for: ${goal}.` },
-    ...(shown.length === 0 ? [] : [candidateTable(shown, found, show), ...shown.map((one, i) => pointTable(one, found ? String(i + 1) : 'nearest', show))]),
+    {
+      kind: 'paragraph',
+      tone: sizing.status === 'done' && found ? 'small' : 'limit',
+      text: `${sizing.message} Looked for: ${goal}.`,
+    },
+    ...(shown.length === 0 ? [] : [candidateTable(shown, found, show), pointTable(shown, show)]),
     ...frontBlocks(sizing, show),
   ]
 }
@@ -28,11 +34,13 @@ function candidateTable(candidates: readonly Candidate[], found: boolean, show: 
   return {
     kind: 'table',
     caption: found ? 'Candidates, best first' : 'The design nearest to holding every limit; it breaks at least one',
-    columns: [{ title: '' }, ...candidates.map((_, i) => ({ title: found ? `No. ${i + 1}` : 'Nearest', numeric: true }))],
+    columns: [{ title: '' }, ...candidates.map((_, i) => ({ title: found ? `No. ${i + 1}` : 'Nearest' }))],
     rows: [
       line('Power', ({ power }) => show.result(power, 'power')),
       line('Thrust at the first duty point', ({ thrust }) => show.result(thrust, 'force')),
-      line('Thrust range there', ({ points }) => show.range(points[0]?.thrustRange[0], points[0]?.thrustRange[1], 'force')),
+      line('Thrust range there', ({ points }) =>
+        show.range(points[0]?.thrustRange[0], points[0]?.thrustRange[1], 'force'),
+      ),
       line('Thrusters', ({ design }) => String(design.count)),
       line('Exit diameter', ({ design }) => show.result(design.diameter, 'length')),
       line('Piston diameter', ({ pistonDiameter }) => show.result(pistonDiameter, 'length')),
@@ -41,7 +49,9 @@ function candidateTable(candidates: readonly Candidate[], found: boolean, show: 
       line('Plunger travel', ({ plungerTravel }) => show.result(plungerTravel, 'length')),
       line('Eject share', ({ design }) => percent(design.ejectShare)),
       line('Swept volume, all', ({ sweptVolume }) => show.result(sweptVolume, 'volume')),
-      line('Binds', ({ binding }) => (binding === null ? 'no limit' : `${binding.name}, room ${percent(binding.slack)}`)),
+      line('Binds', ({ binding }) =>
+        binding === null ? 'no limit' : `${binding.name}, room ${percent(binding.slack)}`,
+      ),
       line('At the end of its range', ({ rangeEnds }) =>
         rangeEnds.length === 0 ? NONE : rangeEnds.map(({ field, end }) => `${FIELD_WORDS[field]} ${end}`).join(', '),
       ),
@@ -58,26 +68,41 @@ const FIELD_WORDS = {
   frequency: 'frequency',
 } as const
 
-function pointTable({ points }: Candidate, name: string, show: Show): DocumentBlock {
-  return {
-    kind: 'table',
-    caption: `Candidate ${name} at its duty points`,
-    columns: ['Speed', 'Thrust asked', 'Thrust', 'Range', 'Scatter as made', 'Frequency', 'Power', 'Froude eff.', 'Overall eff.', 'Stroke left (D)'].map(
-      (title) => ({ title, numeric: true }),
-    ),
-    rows: points.map((point) => [
-      show.result(point.speed, 'vehicleSpeed'),
-      show.result(point.thrustAsked, 'force'),
-      show.result(point.thrust, 'force'),
-      show.range(point.thrustRange[0], point.thrustRange[1], 'force'),
-      show.range(point.spread.low, point.spread.high, 'force'),
-      show.result(point.frequency, 'frequency'),
-      show.result(point.power.total, 'power'),
-      percent(point.froudeEfficiency),
-      percent(point.overallEfficiency),
-      point.formationMargin === null ? NONE : show.range(point.formationMargin.low, point.formationMargin.high, 'number'),
-    ]),
-  }
+function pointTable(candidates: readonly Candidate[], show: Show): DocumentBlock {
+  const points = candidates.flatMap((candidate, i) =>
+    candidate.points.map((point) => ({ ...point, name: String(i + 1) })),
+  )
+  const ranges = (
+    title: string,
+    key: UnitKey,
+    read: (point: CandidatePoint) => readonly [number, number] | null,
+  ): ShownColumn => ({
+    column: { title, numeric: true },
+    cells: points.map((point) => {
+      const ends = read(point)
+      return ends === null || ends[0] === ends[1] ? NONE : show.range(ends[0], ends[1], key)
+    }),
+  })
+  const numbers = (title: string, key: UnitKey, read: (point: CandidatePoint) => number | null): ShownColumn =>
+    show.column(title, key, points.map(read))
+  const percents = (value: number | null): number | null => (value === null ? null : 100 * value)
+  return tableOf(
+    'The same designs at their duty points. Scatter: two standard deviations of manufacture. Stroke left: before pinch-off in exit diameters, in the stream of the vehicle’s speed',
+    { title: 'No.', cells: points.map(({ name }) => name) },
+    [
+      numbers('Speed', 'vehicleSpeed', ({ speed }) => speed),
+      ranges('Thrust range', 'force', ({ thrustRange }) => thrustRange),
+      numbers('Thrust', 'force', ({ thrust }) => thrust),
+      ranges('Scatter', 'force', ({ spread }) => [spread.low, spread.high]),
+      numbers('Frequency', 'frequency', ({ frequency }) => frequency),
+      numbers('Power', 'power', ({ power }) => power.total),
+      numbers('Froude eff. (%)', 'number', ({ froudeEfficiency }) => percents(froudeEfficiency)),
+      numbers('Overall eff. (%)', 'number', ({ overallEfficiency }) => percents(overallEfficiency)),
+      ranges('Stroke left', 'number', ({ formationMargin }) =>
+        formationMargin === null ? null : [formationMargin.low, formationMargin.high],
+      ),
+    ],
+  )
 }
 
 function frontBlocks({ front, goal }: SizingResult, show: Show): DocumentBlock[] {
@@ -87,25 +112,55 @@ function frontBlocks({ front, goal }: SizingResult, show: Show): DocumentBlock[]
   const model = frontPlot(front, goal, show)
   return [
     ...plotFigures([model]),
-    {
-      kind: 'table',
-      caption: `Front of ${goal === 'power' ? 'power' : 'thrust'} against size${rows.length < front.length ? `: ${rows.length} of ${front.length} designs` : ''}`,
-      columns: ['Swept volume', 'Power', 'Thrust', 'Thrusters', 'Exit diameter', 'Stroke ratio', 'Frequency'].map((title) => ({ title, numeric: true })),
-      rows: rows.map(({ design, sweptVolume, power, thrust, frequencies }) => [
-        show.result(sweptVolume, 'volume'),
-        show.result(power, 'power'),
-        show.result(thrust, 'force'),
-        String(design.count),
-        show.result(design.diameter, 'length'),
-        plain(design.strokeRatio),
-        show.range(Math.min(...frequencies), Math.max(...frequencies), 'frequency'),
-      ]),
-    },
+    tableOf(
+      `Front of ${goal === 'power' ? 'power' : 'thrust'} against size${rows.length < front.length ? `: ${rows.length} of ${front.length} designs` : ''}`,
+      { title: 'Thrusters', cells: rows.map(({ design }) => String(design.count)) },
+      [
+        show.column(
+          'Swept volume',
+          'volume',
+          rows.map((row) => row.sweptVolume),
+        ),
+        show.column(
+          'Power',
+          'power',
+          rows.map((row) => row.power),
+        ),
+        show.column(
+          'Thrust',
+          'force',
+          rows.map((row) => row.thrust),
+        ),
+        show.column(
+          'Exit diameter',
+          'length',
+          rows.map(({ design }) => design.diameter),
+        ),
+        show.column(
+          'Stroke ratio',
+          'number',
+          rows.map(({ design }) => design.strokeRatio),
+        ),
+        show.column(
+          'Frequency, least',
+          'frequency',
+          rows.map(({ frequencies }) => Math.min(...frequencies)),
+        ),
+        show.column(
+          'largest',
+          'frequency',
+          rows.map(({ frequencies }) => Math.max(...frequencies)),
+        ),
+      ],
+    ),
   ]
 }
 
 function frontPlot(front: SizingResult['front'], goal: SizingResult['goal'], show: Show): PlotModel {
-  const volume = show.unit('volume', front.map(({ sweptVolume }) => sweptVolume))
+  const volume = show.unit(
+    'volume',
+    front.map(({ sweptVolume }) => sweptVolume),
+  )
   const byPower = goal === 'power'
   const values = front.map(({ power, thrust }) => (byPower ? power : thrust))
   const unit = show.unit(byPower ? 'power' : 'force', values)

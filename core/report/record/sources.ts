@@ -6,8 +6,9 @@ import type { DocumentBlock } from '../document/types'
 
 /** Authors, year, and the place in print that may follow. */
 const CITATION =
-  /(\p{Lu}[\p{L}’'-]+(?:(?:, | & | and |, de | & de )\p{Lu}[\p{L}’'-]+| et al\.)*),? (1[89]\d\d|20\d\d)(?:, ((?:[\p{L}.]+ ?)+ \d+:[\dA-Z]+|arXiv [\d.]+|[A-Z][\p{L}. ]+?(?=[;,.(]|$)))?/gu
-const STANDARD = /IAPWS[ -][A-Z0-9-]+|EOS-80|UNESCO 44|ITTC[ -]1957|Lamb, Hydrodynamics(?:, [^;.]*?art\. \d+)?|Norbury/gu
+  /((?:de |van |von )?\p{Lu}[\p{L}’'-]+(?:(?:, | & | and )(?:de |van |von )?\p{Lu}[\p{L}’'-]+| et al\.)*),? (1[89]\d\d|20\d\d)(?: and (1[89]\d\d|20\d\d))?(?:, ((?:[\p{L}.]+ ?)+ \d+:[\dA-Z]+|arXiv \d+\.\d+|[A-Z][\p{L}. ]+?(?=[;,.(]|$)))?/gu
+const STANDARD =
+  /IAPWS[ -][A-Z0-9-]+|EOS-80|UNESCO 44|ITTC[ -]1957|Lamb, Hydrodynamics(?:, [^;.]*?art\. \d+)?|Norbury/gu
 const RECALLED = /\(recalled, not re-read\)|\(recalled\)/u
 
 export interface SourceList {
@@ -31,9 +32,14 @@ export function sourceList(texts: readonly string[]): SourceList {
   for (const text of texts) {
     let named = false
     for (const match of text.matchAll(CITATION)) {
-      const [, authors = '', year = '', place] = match
+      const [, authors = '', year = '', second, place] = match
       const rest = text.slice(match.index + match[0].length, match.index + match[0].length + 40)
-      keep(`${authors} ${year}`, `${authors} ${year}${place === undefined ? '' : `, ${place.trim()}`}`, RECALLED.test(firstClause(rest)))
+      keep(
+        `${authors} ${year}`,
+        `${authors} ${year}${place === undefined ? '' : `, ${place.trim()}`}`,
+        RECALLED.test(firstClause(rest)),
+      )
+      if (second !== undefined) keep(`${authors} ${second}`, `${authors} ${second}`, false)
       named = true
     }
     for (const [standard] of text.matchAll(STANDARD)) {
@@ -42,7 +48,9 @@ export function sourceList(texts: readonly string[]): SourceList {
     }
     if (!named) others.add(text.replace(/\.$/u, ''))
   }
-  const references = [...found.values()].map(({ text, recalled }) => (recalled ? `${text} (recalled, not re-read)` : text))
+  const references = [...found.values()].map(({ text, recalled }) =>
+    recalled ? `${text} (recalled, not re-read)` : text,
+  )
   return { references: references.sort((a, b) => a.localeCompare(b, 'en')), others: [...others] }
 }
 
@@ -51,11 +59,15 @@ function firstClause(text: string): string {
   return text.split(';')[0] ?? ''
 }
 
-export function sourceBlocks(texts: readonly string[]): readonly DocumentBlock[] {
-  const { references, others } = sourceList(texts)
+/** @param texts that name sources, @param besides those of them whose own words are worth listing where they name no publication */
+export function sourceBlocks(texts: readonly string[], besides: readonly string[]): readonly DocumentBlock[] {
+  const { references } = sourceList(texts)
+  const { others } = sourceList(besides)
   return [
     { kind: 'heading', text: 'Sources' },
     { kind: 'list', items: references },
-    ...(others.length === 0 ? [] : [{ kind: 'paragraph', tone: 'small', text: `Besides publications: ${others.join('; ')}.` } as const]),
+    ...(others.length === 0
+      ? []
+      : [{ kind: 'paragraph', tone: 'small', text: `Besides publications: ${others.join('; ')}.` } as const]),
   ]
 }

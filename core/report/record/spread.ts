@@ -65,7 +65,7 @@ export function spreadBlocks({ plan, data, show }: RecordContext): readonly Docu
     {
       kind: 'paragraph',
       tone: spread.status === 'done' ? 'small' : 'limit',
-      text: `${spread.message} Samples used: ${spread.used} of ${spread.samples}, seed ${spread.seed}. Percentiles over the deviations among the inputs.`,
+      text: `${spread.used} of ${spread.samples} samples used, seed ${spread.seed}.${spread.status === 'done' && spread.refused === 0 ? '' : ` ${spread.message}`} Percentiles over the deviations among the inputs.`,
     },
     {
       kind: 'table',
@@ -86,19 +86,36 @@ export function spreadBlocks({ plan, data, show }: RecordContext): readonly Docu
           show.range(p05, p95, key),
           show.result(p50, key),
           show.result(mean, key),
-          mean === null || standardDeviation === null || mean === 0 ? NONE : percent(Math.abs(standardDeviation / mean)),
+          mean === null || standardDeviation === null || mean === 0
+            ? NONE
+            : percent(Math.abs(standardDeviation / mean)),
           show.result(nominal, key),
         ]
       }),
     },
-    ...(spread.circulation === null ? [] : plotFigures([bandPlot(spread.circulation, show)])),
+    ...(spread.circulation === null || !isWide(spread.circulation)
+      ? []
+      : plotFigures([bandPlot(spread.circulation, show)])),
   ]
+}
+
+/** Width over height from which a band can be seen in print. */
+const SEEN = 0.03
+
+function isWide({ p05, p95, nominal }: SpreadBand): boolean {
+  const most = Math.max(...nominal)
+  return p95.some((high, i) => high - (p05[i] ?? high) > SEEN * most)
 }
 
 /** Circulation of the slug with its percentiles. */
 function bandPlot({ x, nominal, p05, p95 }: SpreadBand, show: Show): PlotModel {
   const unit = show.unit('circulation', nominal)
-  const series = (id: string, name: string, values: readonly number[], look: Pick<PlotSeries, 'role' | 'line'>): PlotSeries => ({
+  const series = (
+    id: string,
+    name: string,
+    values: readonly number[],
+    look: Pick<PlotSeries, 'role' | 'line'>,
+  ): PlotSeries => ({
     id,
     name,
     x,
@@ -132,6 +149,9 @@ export function sweepBlocks({ plan, data, show }: RecordContext): readonly Docum
   })
   return [
     { kind: 'subheading', text: 'Sweep' },
-    { kind: 'paragraph', text: `${sweep.total} rows over ${fields.join('; ')}. The rows stand in sweep.csv beside this record.` },
+    {
+      kind: 'paragraph',
+      text: `${sweep.total} rows over ${fields.join('; ')}. The rows stand in sweep.csv beside this record.`,
+    },
   ]
 }

@@ -27,13 +27,18 @@ export function tankBlocks(context: RecordContext): readonly DocumentBlock[] {
   const colours = drawingColours('print')
   return [
     { kind: 'subheading', text: 'Tank run' },
-    { kind: 'paragraph', tone: result.status === 'done' ? 'small' : 'limit', text: result.message },
+    ...(result.status === 'done' ? [] : [{ kind: 'paragraph', tone: 'limit', text: result.message } as const]),
+    ...arrivals(result, show),
     {
       kind: 'figure',
       svg: tankSceneToSvg(scene, { width: FULL, height: 380, colours, part: 'whole', id: 'record-tank' }),
       caption: `Tank, ring and camera to one scale; D is the exit diameter. ${scene.conventions.join(' ')}`,
     },
-    ...arrivals(result, show),
+    {
+      kind: 'paragraph',
+      tone: 'small',
+      text: `Rings followed: ${result.rings.map(({ basis, ageing }) => `${basis} under the ${ageing} law`).join('; ')}.`,
+    },
     { kind: 'pairs', rows: figures(result, show) },
     ...clearances(result, show),
     ...solutions(result, show),
@@ -48,33 +53,69 @@ export function tankBlocks(context: RecordContext): readonly DocumentBlock[] {
 
 function arrivals({ arrivals: rows }: TankRunResult, show: Show): DocumentBlock[] {
   if (rows.length === 0) return []
-  const stations = show.column('Station', 'length', rows.map(({ station }) => station), 4)
+  const stations = show.column(
+    'Station',
+    'length',
+    rows.map(({ station }) => station),
+  )
   const table = tableOf(
     'Arrivals at the stations, time after the piston starts: ends of the range, then the adopted ring',
     { title: stations.column.title, cells: stations.cells },
     [
-      show.column('Earliest', 'wakeTime', rows.map(({ timeLow }) => timeLow)),
-      show.column('Latest', 'wakeTime', rows.map(({ timeHigh }) => timeHigh)),
-      show.column('Adopted', 'wakeTime', rows.map(({ time }) => time)),
-      show.column('Speed, lowest', 'ringSpeed', rows.map(({ speedLow }) => speedLow)),
-      show.column('highest', 'ringSpeed', rows.map(({ speedHigh }) => speedHigh)),
-      show.column('adopted', 'ringSpeed', rows.map(({ speed }) => speed)),
-      show.column('Radius', 'length', rows.map(({ radius }) => radius)),
+      show.column(
+        'Earliest',
+        'wakeTime',
+        rows.map(({ timeLow }) => timeLow),
+      ),
+      show.column(
+        'Latest',
+        'wakeTime',
+        rows.map(({ timeHigh }) => timeHigh),
+      ),
+      show.column(
+        'Adopted',
+        'wakeTime',
+        rows.map(({ time }) => time),
+      ),
+      show.column(
+        'Speed, lowest',
+        'ringSpeed',
+        rows.map(({ speedLow }) => speedLow),
+      ),
+      show.column(
+        'highest',
+        'ringSpeed',
+        rows.map(({ speedHigh }) => speedHigh),
+      ),
+      show.column(
+        'adopted',
+        'ringSpeed',
+        rows.map(({ speed }) => speed),
+      ),
+      show.column(
+        'Radius',
+        'length',
+        rows.map(({ radius }) => radius),
+      ),
     ],
   )
-  const reasons = rows.flatMap(({ reason, station }) => (reason === null ? [] : [`${show.result(station, 'length')}: ${reason}.`]))
+  const reasons = rows.flatMap(({ reason, station }) =>
+    reason === null ? [] : [`${show.result(station, 'length')}: ${reason}.`],
+  )
   return reasons.length === 0 ? [table] : [table, { kind: 'paragraph', tone: 'limit', text: reasons.join(' ') }]
 }
 
-function figures({ imaging, profile, rings, ...result }: TankRunResult, show: Show): (readonly [string, string])[] {
+function figures({ imaging, profile, ...result }: TankRunResult, show: Show): (readonly [string, string])[] {
   const across = imaging.fieldOfView
   return [
-    ['Rings followed', rings.map(({ basis, ageing }) => `${basis}, ${ageing}`).join('; ') || NONE],
     ['Walls change the speed by', percent(result.wallShare)],
     ['Time between frames of a pair', show.result(imaging.pairInterval, 'rampTime')],
     ['Frame rate', show.result(imaging.frameRate, 'frequency')],
     ['Image scale', show.result(imaging.scale, 'imageScale')],
-    ['Field of view', across === null ? NONE : `${show.result(across[0], 'length')} × ${show.result(across[1], 'length')}`],
+    [
+      'Field of view',
+      across === null ? NONE : `${show.result(across[0], 'length')} × ${show.result(across[1], 'length')}`,
+    ],
     ['Magnification', plain(imaging.magnification)],
     ['Largest displacement of a pair', `${plain(imaging.largestDisplacement)}\u00A0px`],
     ['Vectors across the core', plain(imaging.vectorsAcrossCore)],
@@ -123,14 +164,42 @@ function solutions({ solutions: rows }: TankRunResult, show: Show): DocumentBloc
   const column = show.column
   return [
     {
-      ...tableOf('Strokes and peak speeds that meet the target', { title: 'Stroke ratio', cells: rows.map(({ strokeRatio }) => plain(strokeRatio)) }, [
-        column('Stroke', 'length', rows.map(({ stroke }) => stroke)),
-        column('Peak exit speed', 'speed', rows.map(({ peakSpeed }) => peakSpeed)),
-        column('Circulation', 'circulation', rows.map(({ circulation }) => circulation)),
-        column('Ring Reynolds number', 'number', rows.map(({ reynolds }) => reynolds)),
-        column('Piston speed', 'speed', rows.map(({ pistonSpeed }) => pistonSpeed)),
-        column('Piston travel', 'length', rows.map(({ pistonTravel }) => pistonTravel)),
-      ]),
+      ...tableOf(
+        'Strokes and peak speeds that meet the target',
+        { title: 'Stroke ratio', cells: rows.map(({ strokeRatio }) => plain(strokeRatio)) },
+        [
+          column(
+            'Stroke',
+            'length',
+            rows.map(({ stroke }) => stroke),
+          ),
+          column(
+            'Peak exit speed',
+            'speed',
+            rows.map(({ peakSpeed }) => peakSpeed),
+          ),
+          column(
+            'Circulation',
+            'circulation',
+            rows.map(({ circulation }) => circulation),
+          ),
+          column(
+            'Ring Reynolds number',
+            'number',
+            rows.map(({ reynolds }) => reynolds),
+          ),
+          column(
+            'Piston speed',
+            'speed',
+            rows.map(({ pistonSpeed }) => pistonSpeed),
+          ),
+          column(
+            'Piston travel',
+            'length',
+            rows.map(({ pistonTravel }) => pistonTravel),
+          ),
+        ],
+      ),
     },
     ...rows.flatMap(({ reason, strokeRatio }): DocumentBlock[] =>
       reason === null ? [] : [{ kind: 'paragraph', tone: 'small', text: `${plain(strokeRatio)} D: ${reason}` }],

@@ -17,9 +17,14 @@ export function thrustFigures(thruster: ThrusterResult, show: Show): readonly Fi
       'Mean thrust',
       show.range(low, high, 'force'),
       show.result(thruster.meanThrust, 'force'),
-      'slug with the loss of close neighbours, to slug with quick start',
+      `slug with the loss of close neighbours, to slug${thruster.quickStart ? ' with quick start' : '; the start is too slow for over-pressure'}`,
     ],
-    ['Share of the impulse in the ring', shareRange(share.low, share.high), percent(share.adopted), 'between the formation numbers'],
+    [
+      'Share of the impulse in the ring',
+      shareRange(share.low, share.high),
+      percent(share.adopted),
+      'between the formation numbers',
+    ],
   ]
 }
 
@@ -33,9 +38,10 @@ export function thrusterBlocks(context: RecordContext): readonly DocumentBlock[]
   const section = plan.thruster
   if (data.thruster === null || section === null) return []
   const { result, sizing } = data.thruster
-  const { time, speed, pressure, force, power } = {
+  const units = {
     time: show.unit('time', [result.period]),
-    speed: show.unit('speed', [result.pulse.peakSpeed]),
+    speed: show.unit('vehicleSpeed', [result.speed]),
+    exitSpeed: show.unit('speed', [result.pulse.peakSpeed]),
     pressure: show.unit('pressure', [result.cavity.pressureHigh]),
     force: show.unit('force', [result.meanThrust]),
     power: show.unit('power', [result.power.total]),
@@ -45,7 +51,7 @@ export function thrusterBlocks(context: RecordContext): readonly DocumentBlock[]
     nozzle: plan.nozzle,
     water: data.water,
     thruster: result,
-    units: { time, speed, pressure, force, power },
+    units,
   })
   return [
     { kind: 'subheading', text: section.count === 1 ? 'Thruster' : `Thrusters, ${section.count} together` },
@@ -77,7 +83,10 @@ function figures(thruster: ThrusterResult, show: Show): (readonly [string, strin
     ['Froude efficiency', percent(thruster.froudeEfficiency)],
     ['Overall efficiency', percent(thruster.overallEfficiency)],
     ['Cost of transport', plain(thruster.costOfTransport)],
-    ['Energy per distance', thruster.energyPerDistance === null ? NONE : `${plain(thruster.energyPerDistance)}\u00A0J/m`],
+    [
+      'Energy per distance',
+      thruster.energyPerDistance === null ? NONE : `${plain(thruster.energyPerDistance)}\u00A0J/m`,
+    ],
     ['Endurance', duration(thruster.endurance)],
     ['Range', show.result(thruster.range, 'bodyLength')],
     ...turning(thruster, show),
@@ -159,7 +168,10 @@ function flowFigures(thruster: ThrusterResult, show: Show): (readonly [string, s
     ['Cavitation number, exit', plain(cavitation.exitNumber)],
     ['Cavitation number, intake', plain(cavitation.intakeNumber)],
     ['Loss to close neighbours', percent(thruster.proximityLoss)],
-    ['Ring spacing over ring radius', ringSpacing === null ? NONE : `${plain(ringSpacing.ratio)}${ringSpacing.close ? ', close' : ''}`],
+    [
+      'Ring spacing over ring radius',
+      ringSpacing === null ? NONE : `${plain(ringSpacing.ratio)}${ringSpacing.close ? ', close' : ''}`,
+    ],
     ['Best stroke ratio for ring per work', plain(thruster.ringImpulsePerWork?.best)],
   ]
 }

@@ -27,10 +27,10 @@ export function wakeBlocks(context: RecordContext): readonly DocumentBlock[] {
   if (outcome === null) return []
   const { wake, ageing, turbulent } = outcome
   const ages = turbulent === null ? ageing : 'laminar and turbulent, both shown between them'
-  const { drift } = wake
+  const drifts = [wake.drift.circulation, wake.drift.impulse, wake.drift.energy]
   return [
     { kind: 'subheading', text: 'Wake' },
-    { kind: 'paragraph', tone: wake.status === 'done' ? 'small' : 'limit', text: wake.message },
+    ...(wake.status === 'done' ? [] : [{ kind: 'paragraph', tone: 'limit', text: wake.message } as const]),
     {
       kind: 'pairs',
       rows: [
@@ -39,10 +39,15 @@ export function wakeBlocks(context: RecordContext): readonly DocumentBlock[] {
         ['Followed for', show.result(wake.time, 'wakeTime')],
         ['Holds until', show.result(wake.validUntil, 'wakeTime')],
         ['Passes', String(wake.events.filter(({ event }) => event === 'pass').length)],
-        ['Drift of circulation, impulse, energy', [drift.circulation, drift.impulse, drift.energy].map((one) => (one === null ? 'not conserved' : plain(one))).join(', ')],
+        [
+          'Drift of circulation, impulse, energy',
+          drifts.every((one) => one === null)
+            ? 'none is conserved here'
+            : drifts.map((one) => (one === null ? 'not conserved' : plain(one))).join(', '),
+        ],
       ],
     },
-    { kind: 'paragraph', tone: 'small', text: `${wake.modelReason} ${wake.reason}` },
+    { kind: 'paragraph', tone: 'small', text: `${asSentence(wake.modelReason)} ${asSentence(wake.reason)}` },
     ...ringTable(context, outcome),
     ...arrivalTable(context, outcome),
     ...eventTable(context, outcome),
@@ -50,20 +55,57 @@ export function wakeBlocks(context: RecordContext): readonly DocumentBlock[] {
   ]
 }
 
+function asSentence(clause: string): string {
+  const text = clause.charAt(0).toUpperCase() + clause.slice(1)
+  return /[.!?]$/u.test(text) ? text : `${text}.`
+}
+
 /** Rings as they begin and as they end. */
 function ringTable({ show }: RecordContext, { wake, rings }: RecordWake): DocumentBlock[] {
   const ends = wakeSummary(wake).rings
   const shown = ends.slice(0, MOST_ROWS)
   const born = shown.map(({ ring }) => rings[ring - 1])
-  const table = tableOf('Rings at the beginning and at the last time', { title: 'Ring', cells: shown.map(({ ring }) => String(ring)) }, [
-    show.column('Appears', 'wakeTime', born.map((ring) => ring?.startTime ?? 0)),
-    show.column('Circulation', 'circulation', shown.map(({ circulation }) => circulation)),
-    show.column('Radius, first', 'length', born.map((ring) => (ring?.curve === undefined ? ring?.radius : null))),
-    show.column('last', 'length', shown.map(({ radius }) => radius)),
-    show.column('Core radius, first', 'length', born.map((ring) => ring?.coreRadius)),
-    show.column('last', 'length', shown.map(({ coreRadius }) => coreRadius)),
-    show.column('Speed, last', 'ringSpeed', shown.map(({ speed }) => speed)),
-  ])
+  const table = tableOf(
+    'Rings at the beginning and at the last time',
+    { title: 'Ring', cells: shown.map(({ ring }) => String(ring)) },
+    [
+      show.column(
+        'Appears',
+        'wakeTime',
+        born.map((ring) => ring?.startTime ?? 0),
+      ),
+      show.column(
+        'Circulation',
+        'circulation',
+        shown.map(({ circulation }) => circulation),
+      ),
+      show.column(
+        'Radius, first',
+        'length',
+        born.map((ring) => (ring?.curve === undefined ? ring?.radius : null)),
+      ),
+      show.column(
+        'last',
+        'length',
+        shown.map(({ radius }) => radius),
+      ),
+      show.column(
+        'Core radius, first',
+        'length',
+        born.map((ring) => ring?.coreRadius),
+      ),
+      show.column(
+        'last',
+        'length',
+        shown.map(({ coreRadius }) => coreRadius),
+      ),
+      show.column(
+        'Speed, last',
+        'ringSpeed',
+        shown.map(({ speed }) => speed),
+      ),
+    ],
+  )
   return shown.length === 0 ? [] : [table, ...furtherRows(ends.length, 'rings', 'trajectory.csv')]
 }
 
@@ -76,12 +118,32 @@ function arrivalTable({ show }: RecordContext, { arrivals }: RecordWake): Docume
   if (arrivals.length === 0) return []
   const shown = arrivals.slice(0, MOST_ROWS)
   return [
-    tableOf('Arrivals, with the range between the ageing laws where both were run', { title: 'Ring', cells: shown.map(({ ring }) => String(ring)) }, [
-      show.column('Station', 'length', shown.map(({ station }) => station)),
-      show.column('Earliest', 'wakeTime', shown.map(({ timeLow }) => timeLow)),
-      show.column('Latest', 'wakeTime', shown.map(({ timeHigh }) => timeHigh)),
-      show.column('Adopted', 'wakeTime', shown.map(({ time }) => time)),
-    ]),
+    tableOf(
+      'Arrivals, with the range between the ageing laws where both were run',
+      { title: 'Ring', cells: shown.map(({ ring }) => String(ring)) },
+      [
+        show.column(
+          'Station',
+          'length',
+          shown.map(({ station }) => station),
+        ),
+        show.column(
+          'Earliest',
+          'wakeTime',
+          shown.map(({ timeLow }) => timeLow),
+        ),
+        show.column(
+          'Latest',
+          'wakeTime',
+          shown.map(({ timeHigh }) => timeHigh),
+        ),
+        show.column(
+          'Adopted',
+          'wakeTime',
+          shown.map(({ time }) => time),
+        ),
+      ],
+    ),
     ...furtherRows(arrivals.length, 'arrivals', 'events.csv'),
   ]
 }
@@ -90,8 +152,16 @@ function eventTable({ show }: RecordContext, { wake }: RecordWake): DocumentBloc
   const others = wake.events.filter(({ event }) => event !== 'arrival')
   const shown = others.length > MOST_ROWS ? [...others.slice(0, MOST_ROWS - 1), ...others.slice(-1)] : others
   const [time, x] = [
-    show.column('Time', 'wakeTime', shown.map((one) => one.time)),
-    show.column('x', 'length', shown.map((one) => one.x)),
+    show.column(
+      'Time',
+      'wakeTime',
+      shown.map((one) => one.time),
+    ),
+    show.column(
+      'x',
+      'length',
+      shown.map((one) => one.x),
+    ),
   ]
   return [
     {
@@ -112,12 +182,19 @@ function eventTable({ show }: RecordContext, { wake }: RecordWake): DocumentBloc
 
 function drawings({ plan, data, show }: RecordContext, { wake, rings }: RecordWake): DocumentBlock[] {
   if (wake.outputTimes.length === 0) return []
-  const length = show.unit('length', rings.map(({ radius }) => radius))
+  const length = show.unit(
+    'length',
+    rings.map(({ radius }) => radius),
+  )
   const scene = wakeScene({ rings, wake }, plan, { length, speed: show.unit('ringSpeed', [data.pulse?.ring?.speed]) })
   const last = wake.outputTimes.length - 1
   const choice = { selected: null, trails: true, stations: true }
   const plots = wakePlots(wake, rings, {
-    units: { length, time: show.unit('wakeTime', [wake.time]), impulse: show.unit('impulse', [data.pulse?.ring?.impulse]) },
+    units: {
+      length,
+      time: show.unit('wakeTime', [wake.time]),
+      impulse: show.unit('impulse', [data.pulse?.ring?.impulse]),
+    },
     density: data.water.density,
     duration: wake.time,
     selected: null,
@@ -125,7 +202,7 @@ function drawings({ plan, data, show }: RecordContext, { wake, rings }: RecordWa
   return [
     {
       kind: 'figure',
-      svg: wakeSceneToSvg(scene, last, { width: FULL, height: 300, theme: 'print' }, choice),
+      svg: wakeSceneToSvg(scene, last, { width: FULL, height: 250, theme: 'print' }, choice),
       caption: `The rings at the last time, ${show.result(wake.outputTimes[last], 'wakeTime')}, seen from the side, with the paths they came by.`,
     },
     ...plotFigures(plots),

@@ -27,6 +27,7 @@ async function batch(list: readonly string[], input = '', signal = new AbortCont
   const code = await runBatch(list, {
     folder,
     signal,
+    date: '4 June 2031',
     pause: () => new Promise((resolve) => setImmediate(resolve)),
     readStandardInput: async () => new TextEncoder().encode(input),
     writtenLine: (text) => written.push(text),
@@ -44,14 +45,14 @@ async function summary(out = 'out'): Promise<Record<string, unknown>> {
 }
 
 describe('a run', () => {
-  it('writes pulse.csv, then summary.json, names each on standard output and says nothing else', async () => {
+  it('writes pulse.csv, the record, then summary.json, names each on standard output and says nothing else', async () => {
     await writePlanFile()
     expect(await batch(['plan.json', '--out', 'out'])).toEqual({
       code: 0,
-      written: [path.join('out', 'pulse.csv'), path.join('out', 'summary.json')],
+      written: ['pulse.csv', 'report.html', 'summary.json'].map((name) => path.join('out', name)),
       notes: [],
     })
-    expect((await readdir(path.join(folder, 'out'))).toSorted()).toEqual(['pulse.csv', 'summary.json'])
+    expect((await readdir(path.join(folder, 'out'))).toSorted()).toEqual(['pulse.csv', 'report.html', 'summary.json'])
     const table = await readFile(path.join(folder, 'out', 'pulse.csv'), 'utf8')
     expect(table.split('\r\n')[0]).toBe(
       'time (s),exit speed (m/s),formation time,circulation (m2/s),impulse (N s),energy (J)',
@@ -69,7 +70,7 @@ describe('a run', () => {
     expect(await summary()).toMatchObject({
       format: 'ringwright-summary',
       version: 1,
-      files: ['pulse.csv', 'summary.json'],
+      files: ['pulse.csv', 'report.html', 'summary.json'],
       program: { name: 'Ringwright', version: expect.stringMatching(/^\d+\.\d+\.\d+$/) },
       inputHash: createHash('sha256').update(canonicalInput(reading.plan)).digest('hex'),
       water: { density: expect.any(Number) },
@@ -91,6 +92,9 @@ describe('a run', () => {
         ...(wake ? ['trajectory.csv'] : []),
         ...(jet || wake ? ['events.csv'] : []),
         ...(wake ? ['wake-times.csv'] : []),
+        ...(text.includes('"tankRun"') ? ['profile-read-first.txt', 'profile.csv'] : []),
+        ...(text.includes('"matrix"') ? ['run-matrix.csv'] : []),
+        'report.html',
         'summary.json',
       ])
     },
@@ -104,11 +108,26 @@ describe('a run', () => {
     expect(notes).toEqual(['plan.json: Not known to this version, kept and not read: programme.riseTme.'])
   })
 
+  it('puts the record beside the results: what the plan is, the day, the whole hash, its cautions, its plots', async () => {
+    await writePlanFile({ title: 'Aft <thruster>', revision: 'C' })
+    await batch(['plan.json', '--out', 'out'])
+    const record = await readFile(path.join(folder, 'out', 'report.html'), 'utf8')
+    const { inputHash, cautions } = await summary()
+    expect(record).toContain('<h1>Aft &lt;thruster&gt;</h1>')
+    expect(record).toContain('Design record, revision C')
+    expect(record).toContain('4 June 2031')
+    expect(record).toContain(String(inputHash))
+    expect(Array.isArray(cautions) && cautions.length > 0).toBe(true)
+    expect(record.match(/<svg /g)?.length).toBeGreaterThanOrEqual(4)
+    // Loads nothing, runs nothing.
+    expect(record).not.toMatch(/<script|(?:src|href)=/)
+  })
+
   it('repeats to the byte', async () => {
     await writePlanFile()
     await batch(['plan.json', '--out', 'a'])
     await batch(['plan.json', '--out', 'b'])
-    for (const name of ['pulse.csv', 'summary.json'])
+    for (const name of ['pulse.csv', 'report.html', 'summary.json'])
       expect(await readFile(path.join(folder, 'a', name))).toEqual(await readFile(path.join(folder, 'b', name)))
   })
 
@@ -130,11 +149,21 @@ describe('a run', () => {
     expect(written).toContain(path.join(out, 'summary.json'))
   })
 
-  it('says which sections of the plan this version leaves out', async () => {
-    await writePlanFile({ thruster: { count: 2 }, sweep: { fields: [] } })
+  it('says which sections of the plan are left out', async () => {
+    await writePlanFile({ readings: { rows: [] }, sweep: { fields: [] }, spread: { relative: {} } })
     const { code, notes } = await batch(['plan.json', '--out', 'out'])
     expect(code).toBe(0)
-    expect(notes).toEqual(['Not computed by this version, and left out: thruster, sweep.'])
+    expect(notes).toEqual([
+      'Not computed by this version, and left out: readings.',
+      'The sweep names no field to vary, and is left out.',
+      'The spread names no number that scatters, and is left out.',
+    ])
+  })
+
+  it('prints its usage when asked for help', async () => {
+    const { code, written, notes } = await batch(['--help'])
+    expect({ code, notes }).toEqual({ code: 0, notes: [] })
+    expect(written.join('\n')).toMatch(/^Use: npm run --silent batch -- PLAN\.json --out DIR/)
   })
 })
 
@@ -210,11 +239,31 @@ describe('a refusal', () => {
 
   it('of a section this version does not compute exits 2', async () => {
     await writePlanFile()
-    expect(await batch(['plan.json', '--out', 'out', '--only', 'thruster'])).toEqual({
+    expect(await batch(['plan.json', '--out', 'out', '--only', 'readings'])).toEqual({
       code: 2,
       written: [],
-      notes: ['Section thruster is not computed by this version.'],
+      notes: ['Section readings is not computed by this version.'],
     })
+  })
+
+  it.each([
+    ['thruster', {}, 'thruster'],
+    ['tankRun', {}, 'tankRun'],
+    ['sweep', {}, 'sweep'],
+    ['sweep', { sweep: { fields: [] } }, 'field to sweep'],
+    ['spread', { spread: {} }, 'number that scatters'],
+  ])('of the section %s where there is nothing to compute exits 2', async (section, parts, lacking) => {
+    await writePlanFile(parts)
+    const { code, notes } = await batch(['plan.json', '--out', 'out', '--only', section])
+    expect(code).toBe(2)
+    expect(notes).toEqual([`Section ${section} cannot be computed: the plan has no ${lacking}.`])
+  })
+
+  it('of a thruster without a train names the period it lacks', async () => {
+    await writePlanFile({ thruster: { count: 2 } })
+    const { code, written, notes } = await batch(['plan.json', '--out', 'out'])
+    expect({ code, written }).toEqual({ code: 2, written: [] })
+    expect(notes[0]).toMatch(/train\.period must be given/)
   })
 
   it('of a section the plan has nothing for exits 2', async () => {
@@ -271,7 +320,7 @@ describe('an interrupt', () => {
     expect(written).toEqual([])
   })
 
-  it('between two files keeps the finished one, not an earlier run’s summary, and exits 130', async () => {
+  it('between two files keeps the finished one, not an earlier run’s summary and record, and exits 130', async () => {
     await writePlanFile({ water: { kind: 'fresh', temperatureCelsius: 5 } })
     await batch(['plan.json', '--out', 'out'])
     await writePlanFile()
@@ -311,7 +360,7 @@ describe('a wake', () => {
     expect({ code, notes }).toEqual({ code: 0, notes: [] })
     const frames = ['000000', '000001', '000002', '000003', '000004'].map((name) => path.join('wake', `${name}.vtp`))
     expect(written).toEqual(
-      ['trajectory.csv', 'events.csv', ...frames, 'wake-times.csv', 'summary.json'].map((name) =>
+      ['trajectory.csv', 'events.csv', ...frames, 'wake-times.csv', 'report.html', 'summary.json'].map((name) =>
         path.join('out', name),
       ),
     )

@@ -66,7 +66,7 @@ describe('the section jet of a run', () => {
   it('writes jet.csv: the contract’s columns, the ring’s empty until one is cut, sums at the end of the stroke', async () => {
     const { code, notes, written } = outcomes.long
     expect({ code, notes }).toEqual({ code: 0, notes: [] })
-    expect(written).toEqual(['pulse.csv', 'jet.csv', 'events.csv', 'summary.json'])
+    expect(written).toEqual(['pulse.csv', 'jet.csv', 'events.csv', 'report.html', 'summary.json'])
     const [header, ...rows] = await rowsOf('long', 'jet.csv')
     expect(header).toEqual([
       'formation time',
@@ -152,7 +152,7 @@ describe('the section jet of a run', () => {
 
   it('repeats to the byte, the jet alone when asked for it alone', async () => {
     const { written } = await batch('alone', SHORT, ['--only', 'jet'])
-    expect(written).toEqual(['jet.csv', 'events.csv', 'summary.json'])
+    expect(written).toEqual(['jet.csv', 'events.csv', 'report.html', 'summary.json'])
     const alone = await summary('alone')
     expect(alone).not.toHaveProperty('pulse')
     expect(alone['jet']).toEqual((await summary('short'))['jet'])
@@ -162,7 +162,7 @@ describe('the section jet of a run', () => {
 
   it('gives the pulse of a whole run when asked for that alone', async () => {
     const { written } = await batch('pulse', SHORT, ['--only', 'pulse'])
-    expect(written).toEqual(['pulse.csv', 'summary.json'])
+    expect(written).toEqual(['pulse.csv', 'report.html', 'summary.json'])
     const only = await summary('pulse')
     expect(only).not.toHaveProperty('jet')
     expect(only['pulse']).toEqual((await summary('short'))['pulse'])

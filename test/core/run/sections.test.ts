@@ -33,8 +33,7 @@ describe('the thruster of a plan', () => {
   })
 
   it('is refused without a train, with the field that is lacking', async () => {
-    const { train: _, ...parts } = CONSTANT_SPEED
-    const result = await run(planOf(parts), THRUSTER)
+    const result = await run(planOf({ ...CONSTANT_SPEED, train: undefined }), THRUSTER)
     expect(result).toMatchObject({ status: 'failed', field: 'train.period' })
     expect(result.message).toMatch(/^train\.period must be given/)
   })

@@ -152,6 +152,8 @@ describe('a spread', () => {
     // Scaled by the speed, all of the circulation goes with it: each sample has the relative deviation of the speed.
     const { standardDeviation, nominal } = quantity(spread, 'pulse.total.circulation')
     expectClose((standardDeviation ?? 0) / (nominal ?? 1), 0.01, 0.3)
+    const { data: whole } = await run(planOf(parts), { sections: ['spread'] })
+    expect(whole?.cautions.find(({ id }) => id === 'spread-notes')?.text).toBe(spread.notes.join(' '))
     const { data } = await run(planOf({ ...parts, spread: undefined }), { sections: ['pulse'] })
     expect(nominal).toBe(data?.pulse?.total.circulation)
   }, 30_000)

@@ -60,7 +60,7 @@ describe('a sweep', () => {
     const { rows } = await sweepOf(planOf({ tankRun: tank, sweep }))
     expect(rows.map(({ results }) => results[1])).toEqual([0.2, 0.3])
     const trains = { fields: [{ path: 'train.period', values: [1, 2] }], results: ['thruster.frequency'] }
-    const { train: _, ...parts } = CONSTANT_SPEED
+    const parts = { ...CONSTANT_SPEED, train: undefined }
     expect((await sweepOf(planOf({ ...parts, sweep: trains }))).rows.map(({ results }) => results)).toEqual([
       [1],
       [0.5],
