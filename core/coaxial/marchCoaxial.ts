@@ -131,7 +131,11 @@ class CoaxialMarch {
       time: start.time,
       state: start.state,
       relativeTolerance: 0,
-      absoluteTolerance: tolerances(start.state, input.tolerance),
+      absoluteTolerance: tolerances(
+        start.state,
+        input.tolerance,
+        input.viscous && laminar ? 4 * input.kinematicViscosity : 0,
+      ),
       firstStep: firstStep(start.state),
     })
     const result = await march(stepper, {
@@ -202,10 +206,20 @@ class CoaxialMarch {
   }
 }
 
-/** Error allowed in a step: relative to the ring's radius for places and radii, to its own size for core volume and circulation. */
-function tolerances(state: Float64Array, tolerance: number): Float64Array {
+/**
+ * Error allowed in a step: relative to the ring's radius for places and radii, to its own size for core volume and circulation. The core volume
+ * of a thin core is held to what viscosity adds to it while the ring turns once: relative to itself alone it would be ruled by rounding.
+ *
+ * @param coreGrowth growth of a^2 [m2/s], 4 nu where the cores grow by it
+ */
+function tolerances(state: Float64Array, tolerance: number, coreGrowth: number): Float64Array {
   const count = state.length / 4
-  return state.map((value, k) => tolerance * (k < count ? at(state, count + k) : Math.abs(value)))
+  return state.map((value, k) => {
+    if (k < count) return tolerance * at(state, count + k)
+    if (k < 2 * count || k >= 3 * count) return tolerance * Math.abs(value)
+    const radius = at(state, k - count)
+    return tolerance * Math.max(value, (coreGrowth * radius ** 3) / Math.abs(at(state, k + count)))
+  })
 }
 
 /** A hundredth of the shortest R^2/Gamma: it scales with the rings and knows nothing of where the axis begins. */

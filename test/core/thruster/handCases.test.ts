@@ -22,7 +22,7 @@ const hullPulse: PulseInput = {
   programme: { shape: 'trapezoid', stroke: 0.24, peakSpeed: 2.5, riseTime: 0.02, fallTime: 0.02, rows: [] },
 }
 
-/** A hull of 2 m at 1 m/s: two jets canted by 10 degrees, fired in turn, 0.4 s apart each, with valves that take 10 ms. */
+/** A hull of 2 m at 1 m/s: two jets canted by 10 degrees, fired in turn every 0.4 s, with valves that take 10 ms. */
 const HULL: ThrusterInput = {
   ...ON_BENCH,
   pulse: hullPulse,
