@@ -19,7 +19,7 @@ export interface SavedFile {
   readonly name: string
 }
 
-export type ExportKind = 'csv' | 'svg' | 'png' | 'vtp' | 'gltf'
+export type ExportKind = 'csv' | 'svg' | 'png' | 'vtp' | 'gltf' | 'html' | 'txt' | 'lists'
 
 /** Appearance the window follows. */
 export type Theme = 'system' | 'light' | 'dark'
@@ -31,9 +31,11 @@ export const COMMANDS = {
   'file.save': { title: 'Save', key: 'CmdOrCtrl+S' },
   'file.saveAs': { title: 'Save as…', key: 'CmdOrCtrl+Shift+S' },
   'file.export': { title: 'Export…', key: 'CmdOrCtrl+E' },
+  'file.print': { title: 'Print…', key: 'CmdOrCtrl+P' },
   'file.examples': { title: 'Examples…', key: null },
   'edit.undo': { title: 'Undo', key: 'CmdOrCtrl+Z' },
   'edit.redo': { title: 'Redo', key: 'CmdOrCtrl+Shift+Z' },
+  'edit.lists': { title: 'Parts lists…', key: null },
   'run.refresh': { title: 'Run', key: 'CmdOrCtrl+Enter' },
   'view.stroke': { title: 'Stroke', key: null },
   'view.thrust': { title: 'Thrust', key: null },
@@ -42,12 +44,15 @@ export const COMMANDS = {
   'view.readings': { title: 'Readings', key: null },
   'view.units': { title: 'Units and appearance…', key: null },
   'help.keys': { title: 'Keys', key: null },
+  'help.about': { title: 'About Ringwright', key: null },
 } as const
 export type CommandId = keyof typeof COMMANDS
 
 export interface Requests {
   /** Ask for a plan file; null when the user cancelled. */
   'plan:open': { in: null; out: OpenedFile | null }
+  /** The file that the system gave the program to open and that has waited longest; null when none waits. */
+  'plan:given': { in: null; out: OpenedFile | null }
   /** Write a plan: to the file behind the token, or where the user says when it is null. */
   'plan:save': { in: { token: string | null; name: string; text: string }; out: SavedFile | null }
   /** Ask for a table (CSV or text) to read into the plan. */
@@ -74,4 +79,6 @@ export interface Bridge {
   openDropped(file: unknown): Promise<Answer<OpenedFile>>
   /** Commands chosen in the menu; returns the unsubscribe. */
   onCommand(listener: (command: CommandId) => void): () => void
+  /** A file waits for `plan:given`; returns the unsubscribe. */
+  onGiven(listener: () => void): () => void
 }

@@ -12,6 +12,7 @@ const MAXIMUM_TITLE = 1000
 
 export const DECODERS: Decoders = {
   'plan:open': nothing,
+  'plan:given': nothing,
   'table:open': nothing,
   'app:information': nothing,
   'plan:save': (input) =>
@@ -22,7 +23,7 @@ export const DECODERS: Decoders = {
     }),
   'export:save': (input) => {
     const decoded = fields<Requests['export:save']['in']>(input, {
-      kind: oneOf('kind', ['csv', 'svg', 'png', 'vtp', 'gltf']),
+      kind: oneOf('kind', ['csv', 'svg', 'png', 'vtp', 'gltf', 'html', 'txt', 'lists']),
       name: text('name', MAXIMUM_NAME),
       text: nullable(content('text', MAXIMUM_FILE_BYTES)),
       base64: nullable(base64('base64')),

@@ -22,6 +22,12 @@ const KINDS: Readonly<Record<FileKind, { readonly filter: FileFilter; readonly e
   png: { filter: { name: 'Picture', extensions: ['png'] }, ending: '.png' },
   vtp: { filter: { name: 'Polygonal data (XML)', extensions: ['vtp'] }, ending: '.vtp' },
   gltf: { filter: { name: 'Three-dimensional scene', extensions: ['gltf'] }, ending: '.gltf' },
+  html: { filter: { name: 'Printable page', extensions: ['html'] }, ending: '.html' },
+  lists: {
+    filter: { name: 'Ringwright parts lists', extensions: ['ringwright-lists.json', 'json'] },
+    ending: '.ringwright-lists.json',
+  },
+  txt: { filter: { name: 'Text', extensions: ['txt'] }, ending: '.txt' },
 }
 
 export function filtersOf(kind: FileKind): FileFilter[] {

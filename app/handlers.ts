@@ -7,6 +7,7 @@ import { RequestFailure, type HandlerTable } from './dispatch'
 import { filtersOf, safeFileName, withEnding, type FileFilter, type FileKind } from './fileNames'
 import { fileSentence } from './files/fileSentence'
 import type { PathTokens } from './files/pathTokens'
+import type { GivenFiles } from './givenFiles'
 
 export interface OpenQuestion {
   readonly filters: FileFilter[]
@@ -24,6 +25,8 @@ export interface Services {
     save(filePath: string, content: string | Uint8Array): Promise<void>
   }
   readonly tokens: PathTokens
+  /** Files the system gave the program to open. */
+  readonly given: Pick<GivenFiles, 'next'>
   readonly shell: {
     showDocument(state: Requests['window:document']['in'], filePath: string | null): void
     setTheme(theme: Theme): void
@@ -35,12 +38,12 @@ export interface Services {
 
 export interface Handlers {
   readonly table: HandlerTable
-  /** Open a file whose path came from outside the page: a drop. */
+  /** Open a file whose path came from outside the page. */
   openPath(filePath: string): Promise<OpenedFile>
 }
 
 export function createHandlers(services: Services): Handlers {
-  const { dialogs, files, tokens, shell } = services
+  const { dialogs, files, tokens, given, shell } = services
   /** Folder of the last file opened or saved: where the next dialog starts. */
   let folder: string | null = null
   /** File the window shows, for the title bar's icon where a platform has one. */
@@ -105,6 +108,10 @@ export function createHandlers(services: Services): Handlers {
     'plan:open': async () => {
       const chosen = await choose('plan')
       return chosen === null ? null : openPath(chosen)
+    },
+    'plan:given': async () => {
+      const next = given.next()
+      return next === null ? null : openPath(next)
     },
     'plan:save': async (input) => {
       let written = false

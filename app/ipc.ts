@@ -10,8 +10,12 @@ export const DROPPED_WIRE = 'ringwright:dropped'
 /** Menu commands, from main to the page. */
 export const COMMAND_WIRE = 'ringwright:command'
 
+/** From main to the page: a file that the system gave waits to be asked for. */
+export const GIVEN_WIRE = 'ringwright:given'
+
 const CHANNELS: Readonly<Record<Channel, true>> = {
   'plan:open': true,
+  'plan:given': true,
   'plan:save': true,
   'table:open': true,
   'export:save': true,

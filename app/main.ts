@@ -22,11 +22,12 @@ import { dispatch, dispatchDropped } from './dispatch'
 import { createSaver } from './files/atomicSave'
 import { createPathTokens } from './files/pathTokens'
 import { readText } from './files/readText'
+import { createGivenFiles } from './givenFiles'
 import { createHandlers } from './handlers'
-import { COMMAND_WIRE, DROPPED_WIRE, REQUEST_WIRE } from './ipc'
+import { COMMAND_WIRE, DROPPED_WIRE, GIVEN_WIRE, REQUEST_WIRE } from './ipc'
 import { menuTemplate, platformOf, type MenuItem, type MenuState } from './menu'
 import { allowPermission, APP_ORIGIN, isAllowedNavigation, isAllowedRequest, SCHEME } from './policy'
-import { PROGRAM } from './program'
+import { PROGRAM, PROGRAM_ID } from './program'
 import { windowOptions, windowTitle } from './windowOptions'
 
 const HERE = import.meta.dirname
@@ -35,22 +36,40 @@ const PLATFORM = platformOf(process.platform)
 
 app.enableSandbox()
 app.setName(PROGRAM.name)
+if (PLATFORM === 'win32') app.setAppUserModelId(PROGRAM_ID)
 protocol.registerSchemesAsPrivileged([
   { scheme: SCHEME, privileges: { standard: true, secure: true, supportFetchAPI: true } },
 ])
+
+/** Opens the window; null until Electron is ready. */
+let open: (() => void) | null = null
+/** A page asks once by itself, when it starts; one that is there already is told. */
+const given = createGivenFiles(() => {
+  if (open === null) return
+  const [window] = BrowserWindow.getAllWindows()
+  if (window === undefined) open()
+  else window.webContents.send(GIVEN_WIRE)
+})
 
 if (app.requestSingleInstanceLock()) {
   app.on('window-all-closed', () => {
     if (PLATFORM !== 'darwin') app.quit()
   })
-  app.on('second-instance', () => focusWindow())
+  app.on('second-instance', (_event, words, folder) => {
+    given.give(words.slice(1), folder)
+    focusWindow()
+  })
+  // macOS names files by an event, for the first one before the program is ready.
+  app.on('open-file', (event, file) => {
+    event.preventDefault()
+    given.give([file], path.sep)
+  })
+  given.give(process.argv.slice(app.isPackaged ? 1 : 2), process.cwd())
   app.on('activate', () => focusWindow())
   app.whenReady().then(start, () => app.exit(1))
 } else {
   app.quit()
 }
-
-let open: (() => void) | null = null
 
 function start(): void {
   protocol.handle(SCHEME, (request) => appResponse(PAGE_FOLDER, request.method, request.url))
@@ -111,6 +130,7 @@ function openWindow(): void {
       save: createSaver(files, { durable: true, syncFolder: PLATFORM !== 'win32', unique: randomUUID }),
     },
     tokens: createPathTokens(randomUUID),
+    given,
     shell: {
       showDocument: ({ title, edited, undo, redo }, filePath) => {
         guard.documentShown(title, edited)

@@ -12,7 +12,6 @@ export function platformOf(name: string): Platform {
 
 /** Roles the shell carries out by itself. */
 export type MenuRole =
-  | 'about'
   | 'services'
   | 'hide'
   | 'hideOthers'
@@ -84,7 +83,7 @@ function applicationMenu(): MenuItem {
   return {
     label: 'Ringwright',
     submenu: [
-      { role: 'about' },
+      command('help.about'),
       SEPARATOR,
       command('view.units', { accelerator: 'Cmd+,' }),
       SEPARATOR,
@@ -111,6 +110,8 @@ function fileMenu(mac: boolean): MenuItem {
       command('file.saveAs'),
       command('file.export'),
       SEPARATOR,
+      command('file.print'),
+      SEPARATOR,
       mac ? { role: 'close' } : { role: 'quit', label: 'E&xit' },
     ],
   }
@@ -133,6 +134,8 @@ function editMenu(mac: boolean, state: MenuState): MenuItem {
       { role: 'copy' },
       { role: 'paste' },
       { role: 'selectAll' },
+      SEPARATOR,
+      command('edit.lists'),
       ...(mac ? [] : [SEPARATOR, command('view.units')]),
     ],
   }
@@ -159,5 +162,5 @@ function windowMenu(): MenuItem {
 }
 
 function helpMenu(mac: boolean): MenuItem {
-  return { label: '&Help', submenu: [command('help.keys'), ...(mac ? [] : [SEPARATOR, { role: 'about' as const }])] }
+  return { label: '&Help', submenu: [command('help.keys'), ...(mac ? [] : [SEPARATOR, command('help.about')])] }
 }

@@ -3,7 +3,7 @@
  */
 import { contextBridge, ipcRenderer, webUtils } from 'electron'
 import { BRIDGE_NAME, type Answer } from './contract'
-import { COMMAND_WIRE, DROPPED_WIRE, isChannel, REQUEST_WIRE } from './ipc'
+import { COMMAND_WIRE, DROPPED_WIRE, GIVEN_WIRE, isChannel, REQUEST_WIRE } from './ipc'
 
 const REFUSED: Answer<never> = {
   ok: false,
@@ -23,6 +23,14 @@ contextBridge.exposeInMainWorld(BRIDGE_NAME, {
     ipcRenderer.on(COMMAND_WIRE, forward)
     return () => {
       ipcRenderer.removeListener(COMMAND_WIRE, forward)
+    }
+  },
+
+  onGiven: (listener: () => void): (() => void) => {
+    const forward = (): void => listener()
+    ipcRenderer.on(GIVEN_WIRE, forward)
+    return () => {
+      ipcRenderer.removeListener(GIVEN_WIRE, forward)
     }
   },
 })

@@ -1,7 +1,9 @@
 /** npm run batch: the headless runner, built first when its sources are newer. */
+import { endWithParent } from './scripts/parent.mjs'
 import { isStale } from './scripts/stale.mjs'
 import { tell } from './scripts/root.mjs'
 
+endWithParent()
 try {
   if (isStale('app')) {
     const { ensureInstalled } = await import('./scripts/install.mjs')

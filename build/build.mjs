@@ -1,6 +1,7 @@
 /** npm run build: everything, whether or not it is stale. */
-import { build, pageWeightLine } from './scripts/bundle.mjs'
+import { build } from './scripts/bundle.mjs'
 import { ensureInstalled } from './scripts/install.mjs'
+import { pageWeightLine } from './scripts/pageWeight.mjs'
 import { tell } from './scripts/root.mjs'
 
 try {

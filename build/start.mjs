@@ -8,14 +8,19 @@ import { ensureBuilt } from './scripts/bundle.mjs'
 import { electronExecutable, fetchElectron } from './scripts/electronRuntime.mjs'
 import { obstacleSentence, obstacleToWindow, openCommand } from './scripts/face.mjs'
 import { ensureInstalled } from './scripts/install.mjs'
+import { endWithParent } from './scripts/parent.mjs'
 import { DIST, ROOT, tell } from './scripts/root.mjs'
 import { readStartArguments } from './scripts/startArguments.mjs'
 
 /** A window that ends with a failure sooner than this never came up [ms]. */
 const WINDOW_GRACE = 5000
 
+/** What ends the program from outside. @type {readonly NodeJS.Signals[]} */
+const SIGNALS = ['SIGINT', 'SIGTERM']
+
 const SURROUNDINGS = { platform: process.platform, env: process.env, root: process.getuid?.() === 0 }
 
+endWithParent()
 const reading = readStartArguments(process.argv.slice(2))
 if (reading.ok) {
   await start(reading.request).catch((error) => {
@@ -46,11 +51,15 @@ async function openWindow() {
   const executable = electronExecutable() ?? (await fetchElectron())
   if (executable === null) return 'its runtime, Electron, is not installed and could not be fetched'
   const started = Date.now()
+  const child = spawn(executable, [ROOT], { stdio: 'inherit' })
+  /** @param {NodeJS.Signals} signal */
+  const end = (signal) => child.kill(signal)
+  for (const signal of SIGNALS) process.on(signal, end)
   const code = await new Promise((resolve) => {
-    const child = spawn(executable, [ROOT], { stdio: 'inherit' })
     child.once('error', () => resolve(1))
     child.once('close', (exit) => resolve(exit ?? 0))
   })
+  for (const signal of SIGNALS) process.off(signal, end)
   if (code !== 0 && Date.now() - started < WINDOW_GRACE) return `its runtime ended at once with exit code ${code}`
   process.exitCode = code
   return null
@@ -64,8 +73,7 @@ async function serve({ port, open }) {
   process.stdout.write(`Ringwright is at ${server.address} (Ctrl+C ends it).\n`)
   if (open) openQuietly(server.address)
   const end = () => server.close().then(() => process.exit(0))
-  process.once('SIGINT', end)
-  process.once('SIGTERM', end)
+  for (const signal of SIGNALS) process.once(signal, end)
 }
 
 /** @param {string} address */

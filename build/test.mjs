@@ -5,7 +5,8 @@
 import { mkdtempSync, readFileSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
-import { build, PAGE_BUDGET, pageWeight, pageWeightLine } from './scripts/bundle.mjs'
+import { build } from './scripts/bundle.mjs'
+import { PAGE_BUDGET, pageWeightLine, startWeight } from './scripts/pageWeight.mjs'
 import { ensureChromium } from './scripts/chromium.mjs'
 import { runCommand } from './scripts/commands.mjs'
 import { ensureInstalled } from './scripts/install.mjs'
@@ -37,7 +38,7 @@ async function buildAll() {
     tell(`FAILED  build\n${error instanceof Error ? error.message : String(error)}`)
     return 1
   }
-  const light = pageWeight() <= PAGE_BUDGET
+  const light = startWeight() <= PAGE_BUDGET
   tell(`${light ? 'ok     ' : 'FAILED '} build. ${pageWeightLine()}`)
   return light ? 0 : 1
 }

@@ -3,6 +3,8 @@
  * files; nothing inline, so that the content security policy holds.
  */
 import vue from '@vitejs/plugin-vue'
+import { LICENCE_LIST, noticesFile } from './scripts/notices.mjs'
+import { startList } from './scripts/pageWeight.mjs'
 import { inProject } from './scripts/root.mjs'
 import { threeParts } from './scripts/threeParts.mjs'
 import { workerEntries } from './scripts/workerEntry.mjs'
@@ -17,7 +19,7 @@ export function rendererConfig() {
     logLevel: 'warn',
     publicDir: false,
     cacheDir: inProject('node_modules/.vite'),
-    plugins: [vue(), workerEntries(), threeParts()],
+    plugins: [vue(), workerEntries(), threeParts(), noticesFile(), startList()],
     define: { ...constants(), __VUE_OPTIONS_API__: 'false' },
     build: {
       target: 'es2023',
@@ -25,12 +27,13 @@ export function rendererConfig() {
       emptyOutDir: true,
       assetsDir: 'assets',
       assetsInlineLimit: 0,
-      modulePreload: { polyfill: false },
+      // Off: what stands before an import would look for a document, and core is imported in workers too.
+      modulePreload: false,
       sourcemap: false,
       reportCompressedSize: false,
       chunkSizeWarningLimit: 2000,
       rolldownOptions: { checks: { bundlerTimings: false } },
-      license: { fileName: 'licences.md' },
+      license: { fileName: LICENCE_LIST },
     },
     server: {
       host: '127.0.0.1',

@@ -5,6 +5,7 @@ import App from './App.vue'
 import { createHost } from './host'
 import { createTheme } from './model/theme'
 import { createWorkspace } from './model/workspace'
+import { loadAhead } from './parts/loadedLater'
 import { createWorkerClient } from './worker/client'
 import { spawnWorker } from './worker/spawn'
 import './style/tokens.css'
@@ -17,6 +18,7 @@ import './style/results.css'
 import './style/dialogs.css'
 import './style/wake.css'
 import './style/jet.css'
+import './style/tank.css'
 
 /** Storage the page may not have, for instance where the browser keeps nothing. */
 function storage(): Storage | null {
@@ -50,3 +52,4 @@ const workspace = effectScope(true).run(() => {
   })
 })
 if (workspace !== undefined) createApp(App, { workspace }).mount('#app')
+window.requestIdleCallback(() => void loadAhead(), { timeout: 5000 })

@@ -1,15 +1,10 @@
 /** Builds the parts that are asked for into `dist`. */
-import { readdirSync, readFileSync, rmSync } from 'node:fs'
-import path from 'node:path'
-import { gzipSync } from 'node:zlib'
+import { runCommand } from './commands.mjs'
 import { oneAtATime } from './lock.mjs'
-import { DIST } from './root.mjs'
+import { DIST, inProject, tell } from './root.mjs'
 import { fingerprint, forget, isStale, remember } from './stale.mjs'
 
 /** @typedef {import('./stale.mjs').Part} Part */
-
-/** Most the page may weigh when sent [bytes, gzip]. */
-export const PAGE_BUDGET = 450 * 1000
 
 /** Build those of the parts that are stale. @param {readonly Part[]} parts @returns {Promise<readonly Part[]>} what was built */
 export async function ensureBuilt(parts) {
@@ -31,29 +26,22 @@ export async function build(part) {
 async function buildPart(part) {
   const print = fingerprint(part)
   forget(part)
-  const { build: bundle } = await import('vite')
-  if (part === 'app') {
-    const { APP_ENTRIES, appConfig } = await import('../vite.app.mjs')
-    rmSync(path.join(DIST, 'app'), { recursive: true, force: true })
-    for (const entry of APP_ENTRIES) await bundle(appConfig(entry))
-  } else {
-    const { rendererConfig } = await import('../vite.renderer.mjs')
-    await bundle(rendererConfig())
-  }
+  await bundlePart(part, DIST)
   remember(part, print)
 }
 
-/** What the page weighs when sent: every script, style and page, each compressed. @returns {number} bytes */
-export function pageWeight() {
-  const folder = path.join(DIST, 'renderer')
-  return readdirSync(folder, { recursive: true, withFileTypes: true })
-    .filter((entry) => entry.isFile() && /\.(js|css|html|wasm|svg)$/.test(entry.name))
-    .reduce((sum, entry) => sum + gzipSync(readFileSync(path.join(entry.parentPath, entry.name))).byteLength, 0)
-}
-
-/** @returns {string} a line that says what the page weighs and whether that is within its budget */
-export function pageWeightLine() {
-  const weight = pageWeight()
-  const words = weight <= PAGE_BUDGET ? 'within' : 'OVER'
-  return `Page: ${(weight / 1000).toFixed(1)} kB gzip, ${words} its budget of ${PAGE_BUDGET / 1000} kB.`
+/**
+ * Bundle a part in a process of its own.
+ *
+ * @param {Part} part @param {string} folder gets a folder of the part's name; one that is there is replaced
+ * @throws {Error} with what the bundler says
+ */
+export async function bundlePart(part, folder) {
+  const { code, output } = await runCommand(process.execPath, [
+    inProject('build', 'scripts', 'bundlePart.mjs'),
+    part,
+    folder,
+  ])
+  if (code !== 0) throw new Error(output.trim())
+  if (output.trim() !== '') tell(output.trim())
 }

@@ -12,7 +12,7 @@ import { DIST, inProject, ROOT } from './root.mjs'
 /** Folders and files each part is made from. @type {Readonly<Record<Part, readonly string[]>>} */
 const SOURCES = {
   app: ['core', 'app', 'build', 'package.json', 'package-lock.json'],
-  renderer: ['core', 'renderer', 'app/contract.ts', 'build', 'package.json', 'package-lock.json'],
+  renderer: ['core', 'renderer', 'app/contract.ts', 'build', 'LICENSE', 'package.json', 'package-lock.json'],
 }
 
 /** A file each part is not complete without. @type {Readonly<Record<Part, string>>} */

@@ -13,6 +13,16 @@ const OURS = inProject('renderer') + path.sep
 
 /** Rooms a worker may load from: none of them touches a document. */
 const ROOMS = ['core/', 'renderer/worker/']
+/** Pure packages that core computes and reads tables with, and what they load. */
+const PACKAGES = [
+  'papaparse',
+  'ml-levenberg-marquardt',
+  'ml-matrix',
+  'is-any-array',
+  'ml-array-max',
+  'ml-array-min',
+  'ml-array-rescale',
+]
 
 /** @returns {import('vite').Plugin} */
 export function workerEntries() {
@@ -73,8 +83,9 @@ export function loadedModules(first, bundle) {
 
 /** Whether a module is not one for a worker. @param {string} id */
 export function isForeign(id) {
-  // The bundler's own helpers for modules.
-  if (id.startsWith('\0rolldown/')) return false
+  // The bundler's own helpers for modules, and Vite's for imports on demand: with module preload off it only passes them on.
+  if (id.startsWith('\0rolldown/') || id === '\0vite/preload-helper.js') return false
   const place = path.relative(ROOT, id).split(path.sep).join('/')
-  return !ROOMS.some((room) => place.startsWith(room))
+  const allowed = [...ROOMS, ...PACKAGES.map((name) => `node_modules/${name}/`)]
+  return !allowed.some((start) => place.startsWith(start))
 }

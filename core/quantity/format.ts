@@ -35,6 +35,21 @@ export function formatNumber(value: number, digits = 4): string {
   return sign + trimZeros(mantissa) + powerOfTen(order)
 }
 
+/** From here on a pure number has significant digits instead of decimals. */
+const LARGEST_FIXED = 1000
+const FAR_DIGITS = 4
+
+/**
+ * A pure number with some decimals while it has an everyday size, else with its leading digits: `3.20`, `1234`, `1.2×10⁷`, `0.0012`.
+ *
+ * @param decimals digits after the point, 0 to 10
+ */
+export function formatFixed(value: number, decimals = 2): string {
+  const size = Math.abs(value)
+  const everyday = size === 0 || (size < LARGEST_FIXED && size >= 0.5 * 10 ** -decimals)
+  return everyday ? value.toFixed(decimals).replace('-', MINUS) : formatNumber(value, FAR_DIGITS)
+}
+
 /**
  * A base value with its unit: `30 mm` with a no-break space, `30°` with none.
  *

@@ -1,6 +1,6 @@
 /**
- * The starting jet of a plan: its own stroke for what leaves the tube, a long enough one for the formation number, and what the pulse
- * takes from both.
+ * What is known of the starting jet of a plan, and what the pulse takes from it. Computing one is in `formJet`, which is loaded when a jet is
+ * asked for.
  */
 import { DomainError } from '../base'
 import {
@@ -8,17 +8,15 @@ import {
   checkJetInput,
   formationInput,
   SHOWN_DELTA,
-  startingJetEnsemble,
   type JetEnsemble,
   type JetEnsembleInput,
 } from '../coaxial'
-import { loadKernel } from '../kernel'
 import { JET_DEFAULTS, type Plan } from '../plan'
-import { compileProgramme, type ComputedJet } from '../pulse'
+import type { ComputedJet } from '../pulse'
 import type { WaterProperties } from '../water'
-import { createJetCache, type JetCache } from './jetCache'
+import type { JetCache } from './jetCache'
 import type { JetData } from './jetTypes'
-import type { WakeRunOptions } from './wake'
+import type { WakeRunOptions } from './options'
 
 /** Time between two shapes of the sheet in D / U_peak: close enough to play them one after another. */
 const SHAPE_STEP = 0.05
@@ -51,39 +49,6 @@ export const NO_JET: ComputedJet = {
 /** Whether the plan adopts a value of the computed jet. */
 export function adoptsJet({ models }: Plan): boolean {
   return models.overPressure === 'computed' || models.formationNumber === 'computed'
-}
-
-/**
- * Compute the starting jet of a plan, with defaults where it has no such section.
- *
- * The plan's own stroke comes first. Where it is too short to tell the formation number, the same start with a longer stroke is run for
- * that alone.
- *
- * @returns status 'cancelled' or 'failed' with what had been computed
- * @throws {DomainError} with the plan path of a value that no starting jet can be computed for
- */
-export async function jetOf(plan: Plan, water: WaterProperties, options: JetRunOptions = {}): Promise<JetData> {
-  const input = jetInput(plan, water)
-  const longer = formationInput(input)
-  const cache = options.jetCache ?? createJetCache()
-  const twoRuns = longer !== input
-  const share = twoRuns ? shareOfOwn(input, longer, cache) : 1
-  const own = await ensembleOf(input, cache, options, 0, share)
-  if (!twoRuns || own.status !== 'done')
-    return jetData(plan, own, own.status === 'done' ? own : null, own.status, own.message)
-  try {
-    const formation = await ensembleOf(longer, cache, options, share, 1 - share)
-    return jetData(
-      plan,
-      own,
-      formation,
-      formation.status,
-      formation.status === 'done' ? own.message : formation.message,
-    )
-  } catch (error) {
-    if (!(error instanceof DomainError)) throw error
-    return withoutFormation(plan, own, error)
-  }
 }
 
 /** What the finished jets kept so far tell of a plan. Computes nothing and refuses nothing. */
@@ -166,42 +131,8 @@ function refusalOf(input: JetEnsembleInput): DomainError | null {
   }
 }
 
-async function ensembleOf(
-  input: JetEnsembleInput,
-  cache: JetCache,
-  options: JetRunOptions,
-  from: number,
-  share: number,
-): Promise<JetEnsemble> {
-  const known = cache.find(input)
-  if (known !== null) return known
-  const jet = slim(
-    await startingJetEnsemble(input, {
-      kernel: options.kernel ?? (await loadKernel()),
-      ...(options.pause === undefined ? {} : { pause: options.pause }),
-      ...(options.signal === undefined ? {} : { signal: options.signal }),
-      onProgress: ({ share: done, what }) => options.onProgress?.({ share: from + share * done, what }),
-    }),
-  )
-  if (jet.status === 'done') cache.keep(input, jet)
-  return jet
-}
-
-/** The same with the shapes of the shown member only: the others are read for their numbers. */
-function slim(jet: JetEnsemble): JetEnsemble {
-  return { ...jet, runs: jet.runs.map((run) => (run === jet.shown ? run : { ...run, snapshots: [] })) }
-}
-
-/** Share of the work that the plan's own stroke takes: it grows with the cube of what has been shed. */
-function shareOfOwn(input: JetEnsembleInput, longer: JetEnsembleInput, cache: JetCache): number {
-  const work = (one: JetEnsembleInput): number =>
-    cache.find(one) === null ? (compileProgramme(one.programme).stroke / one.diameter + 2) ** 3 : 0
-  const own = work(input)
-  const all = own + work(longer)
-  return all === 0 ? 1 : own / all
-}
-
-function jetData(
+/** The jet of a plan from its finished runs. */
+export function jetData(
   plan: Plan,
   own: JetEnsemble,
   formation: JetEnsemble | null,
@@ -223,7 +154,8 @@ function jetData(
   return { status, message, own, formation, notes }
 }
 
-function withoutFormation(plan: Plan, own: JetEnsemble, refused: DomainError): JetData {
+/** The jet of a plan whose longer stroke cannot be run. */
+export function withoutFormation(plan: Plan, own: JetEnsemble, refused: DomainError): JetData {
   const data = jetData(plan, own, null, own.status, own.message)
   return {
     ...data,

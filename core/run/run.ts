@@ -1,26 +1,26 @@
 /**
  * A plan in, results out: what is asked for, in order, with progress and cancellation.
+ *
+ * Sections that most runs do without are imported when they are asked for, so that the page opens without them.
  */
 import { DomainError } from '../base'
 import { cautionsFor, startsFromJet, type Plan, type SpreadSection } from '../plan'
 import type { ComputedJet } from '../pulse'
-import { compareReadings, planTankRun } from '../tank'
 import { analyseThruster } from '../thruster'
 import { waterProperties } from '../water'
 import { freezeDeep } from './freeze'
-import { adoptsJet, computedJet, jetOf, knownJetOf, type JetRunOptions } from './jet'
+import { adoptsJet, computedJet, knownJetOf, type JetRunOptions } from './jet'
 import { createJetCache } from './jetCache'
 import type { JetData } from './jetTypes'
 import { pulseOf } from './pulse'
 import { holdsReadings, readingsInputOf } from './readings'
 import { sharesOf, type CostlyPart, type Share } from './shares'
-import { checkSpread, spreadOf } from './spread'
-import { sweepDesign, sweepRows, type SweepData, type SweepOptions } from './sweep'
+import { sweepDesign, sweepRows, type SweepOptions } from './sweep'
+import type { SweepData } from './sweepData'
 import { tankRunInputOf } from './tankRun'
 import { asksForSizing, requirePeriod, sizingOf, thrusterInputOf } from './thruster'
 import { SECTIONS, type RunData, type RunRequest, type RunResult, type Section } from './types'
-import { wakeOf, type WakeData } from './wake'
-import { wakeJetRun } from './wakeJet'
+import type { WakeData } from './wake'
 
 /** Sections this plan holds and this version computes. */
 export function availableSections(plan: Plan): readonly Section[] {
@@ -85,7 +85,7 @@ export async function run(plan: Plan, request: RunRequest, options: JetRunOption
     const wantsPulse = wants('pulse') || (wants('wake') && needsPulse(plan))
     const missing = missingPart(plan, request.sections, wantsPulse)
     if (missing !== null) return ended('failed', missing)
-    refuseEarly(plan, request.sections)
+    await refuseEarly(plan, request.sections)
     const readsJet = wants('jet') || needsJet(plan, request.sections, wantsPulse)
     const progress = sharesOf(costlyParts(plan, request, readsJet))
     const part = (name: CostlyPart): JetRunOptions => within(options, progress(name))
@@ -100,6 +100,7 @@ export async function run(plan: Plan, request: RunRequest, options: JetRunOption
       state = { ...state, jet: wants('jet') ? found.jet : null, formed: found.jet, jetMissing: found.missing }
       known = found.computed
     } else if (readsJet) {
+      const { jetOf } = await import('./formJet')
       const jet = await jetOf(plan, water, part('jet'))
       state = { ...state, jet: wants('jet') ? jet : null, formed: jet }
       if (jet.status !== 'done') return ended(jet.status, jet.message)
@@ -109,6 +110,7 @@ export async function run(plan: Plan, request: RunRequest, options: JetRunOption
     // Other sections than the pulse read the jet only where the plan adopts it, so that they do not depend on what else is asked for.
     const adopted = adoptsJet(plan) ? known : null
     if (wants('wake') && plan.wake !== null) {
+      const [{ wakeOf }, { wakeJetRun }] = await Promise.all([import('./wake'), import('./wakeJet')])
       const start = startsFromJet(plan.wake)
         ? await wakeJetRun(plan, plan.wake, water, state.formed, part('start'))
         : null
@@ -130,6 +132,7 @@ export async function run(plan: Plan, request: RunRequest, options: JetRunOption
       }
     }
     if (wants('tankRun') && plan.tankRun !== null) {
+      const { planTankRun } = await import('./planTankRun')
       const tankRun = await planTankRun(tankRunInputOf(plan, plan.tankRun, water, adopted), part('tankRun'))
       state = { ...state, tankRun }
       if (tankRun.status !== 'done') return ended(tankRun.status, tankRun.message)
@@ -137,6 +140,7 @@ export async function run(plan: Plan, request: RunRequest, options: JetRunOption
     if (wants('readings')) {
       const { from } = progress('readings')
       options.onProgress?.({ share: from, what: 'readings' })
+      const { compareReadings } = await import('./compareReadings')
       const readings = compareReadings(
         readingsInputOf(plan, {
           water,
@@ -155,6 +159,7 @@ export async function run(plan: Plan, request: RunRequest, options: JetRunOption
       if (sweep.status !== 'done') return ended(sweep.status, sweep.message)
     }
     if (wants('spread') && plan.spread !== null) {
+      const { spreadOf } = await import('./spread')
       const spread = await spreadOf(plan, plan.spread, water, adopted, part('spread'))
       state = { ...state, spread }
       if (spread.status !== 'done') return ended(spread.status, spread.message)
@@ -202,11 +207,14 @@ function missingPart(plan: Plan, sections: readonly Section[], wantsPulse: boole
 const NEED_PULSE: readonly Section[] = ['jet', 'thruster', 'tankRun', 'readings', 'spread']
 
 /** Refusals that need no computation, told before a long one begins. @throws {DomainError} */
-function refuseEarly(plan: Plan, sections: readonly Section[]): void {
+async function refuseEarly(plan: Plan, sections: readonly Section[]): Promise<void> {
   const readsThruster = sections.includes('thruster') || (sections.includes('spread') && plan.thruster !== null)
   if (readsThruster) requirePeriod(plan)
   if (sections.includes('sweep')) sweepDesign(plan)
-  if (sections.includes('spread') && plan.spread !== null) checkSpread(plan, plan.spread)
+  if (sections.includes('spread') && plan.spread !== null) {
+    const { checkSpread } = await import('./spread')
+    checkSpread(plan, plan.spread)
+  }
 }
 
 /** What of a run takes long, in the order it is computed. */

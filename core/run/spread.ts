@@ -19,7 +19,7 @@ import { drawing, drawnFields, type DrawnField } from './spreadDraw'
 import { figuresOf, gatherBand, type BandGatherer } from './spreadFigures'
 import { circulationAt, positionAt, sampleOf, sampleSetting, type Sample } from './spreadSample'
 import { variedPlan } from './variedPlan'
-import type { WakeRunOptions } from './wake'
+import type { WakeRunOptions } from './options'
 
 export interface SpreadData extends SpreadOutcome {
   /** What was drawn. */

@@ -10,7 +10,7 @@ import { analyseThruster } from '../thruster'
 import { waterProperties, type WaterProperties } from '../water'
 import { pulseInputOf } from './pulse'
 import { thrusterInputOf } from './thruster'
-import type { WakeRunOptions } from './wake'
+import type { WakeRunOptions } from './options'
 
 export interface Sample {
   /** Sections as in the summary, with the keys that are read. */

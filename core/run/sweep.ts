@@ -23,6 +23,7 @@ import {
 import type { JetRunOptions } from './jet'
 import { createJetCache } from './jetCache'
 import { requirePeriod } from './thruster'
+import type { SweepData } from './sweepData'
 import type { RunData, RunRequest, RunResult, Section } from './types'
 import { variedPlan, type SetValue } from './variedPlan'
 
@@ -35,14 +36,6 @@ export interface SweepOptions extends JetRunOptions {
   readonly onRow?: (row: SweepRow) => void | Promise<void>
   /** Whether the rows are kept and returned; default true. Off where `onRow` puts them away. */
   readonly keepRows?: boolean
-}
-
-export interface SweepData extends SweepOutcome {
-  readonly status: RunStatus
-  readonly message: string
-  readonly part: SweepPart
-  /** The finished rows of the part; of a cancelled sweep those it came to. */
-  readonly rows: readonly SweepRow[]
 }
 
 /** How a row is computed: `run`, handed in because it computes sweeps itself. */

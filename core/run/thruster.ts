@@ -4,16 +4,10 @@
 import { DomainError } from '../base'
 import type { Plan } from '../plan'
 import type { ComputedJet } from '../pulse'
-import {
-  sizeThruster,
-  type SizingResult,
-  type ThrusterInput,
-  type ThrusterResult,
-  type ThrusterSection,
-} from '../thruster'
+import type { SizingResult, ThrusterInput, ThrusterResult, ThrusterSection } from '../thruster'
 import type { WaterProperties } from '../water'
 import { pulseInputOf } from './pulse'
-import type { WakeRunOptions } from './wake'
+import type { WakeRunOptions } from './options'
 
 export interface ThrusterData {
   readonly result: ThrusterResult
@@ -57,7 +51,8 @@ export function asksForSizing({ search, target }: ThrusterSection): boolean {
 }
 
 /** Search for designs. @throws {DomainError} as `sizeThruster` */
-export function sizingOf(input: ThrusterInput, options: WakeRunOptions): Promise<SizingResult> {
+export async function sizingOf(input: ThrusterInput, options: WakeRunOptions): Promise<SizingResult> {
+  const { sizeThruster } = await import('./sizeThruster')
   return sizeThruster(input, {
     ...(options.signal === undefined ? {} : { signal: options.signal }),
     ...(options.pause === undefined ? {} : { pause: options.pause }),

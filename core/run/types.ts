@@ -5,7 +5,7 @@ import type { FieldResult, ReadingsResult, TankRunResult } from '../tank'
 import type { WaterProperties } from '../water'
 import type { JetData } from './jetTypes'
 import type { SpreadData } from './spread'
-import type { SweepData } from './sweep'
+import type { SweepData } from './sweepData'
 import type { ThrusterData } from './thruster'
 import type { WakeData } from './wake'
 

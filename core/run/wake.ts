@@ -2,7 +2,7 @@
  * The wake of a plan: its train or its explicit rings, marched by the engine that suits them, under both ageing laws where the
  * ring Reynolds number does not say which.
  */
-import { DomainError, type RunOptions } from '../base'
+import { DomainError } from '../base'
 import { trainRings, type JetRun, type WakeAgeing } from '../coaxial'
 import { marchWake, ringsOfNozzles, type Wake, type WakeInput, type WakeRing } from '../filament'
 import { loadKernel, type Kernel } from '../kernel'
@@ -10,6 +10,7 @@ import type { Plan, WakeSection } from '../plan'
 import type { PulseResult } from '../pulse'
 import { ageingRegime } from '../ring'
 import type { WaterProperties } from '../water'
+import type { WakeRunOptions } from './options'
 import { jetRings, withPinchOffs, type WakeJet } from './wakeJet'
 
 /** One ring at one station, with the range between the ageing laws where both were run. */
@@ -33,13 +34,6 @@ export interface WakeData {
   readonly notes: readonly string[]
   /** How the rings came about, where they start from the computed jet; null else. */
   readonly jet: WakeJet | null
-}
-
-export interface WakeRunOptions extends RunOptions {
-  /** The hot sums; loaded where it is not given. */
-  readonly kernel?: Kernel
-  /** Lets messages in between steps, so that a cancellation can arrive. */
-  readonly pause?: () => Promise<void>
 }
 
 /**

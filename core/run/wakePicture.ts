@@ -13,7 +13,8 @@ import {
 } from '../filament'
 import { loadKernel } from '../kernel'
 import type { Plan } from '../plan'
-import type { WakeData, WakeRunOptions } from './wake'
+import type { WakeRunOptions } from './options'
+import type { WakeData } from './wake'
 
 export interface WakePictureRequest {
   /** Points of dye; 0: none. */

@@ -2,7 +2,7 @@
  * The browser face: files by input and drop, saving through the browser's save dialog where it has one, else by download.
  */
 import type { ExportKind } from '../../app/contract'
-import { pickFile, readFile } from './pickFile'
+import { chosenFile, pickFile, pickFiles, readFile } from './pickFile'
 import { findSavePicker, isCancelled, writeWhole, type SavePicker, type WritableFile } from './savePicker'
 import { isFailure, type Host, type HostFailure, type PlanFile } from './types'
 
@@ -13,7 +13,7 @@ export type Page = Pick<Window, 'document' | 'addEventListener' | 'performance'>
 
 const PLAN_TYPE = { description: 'Ringwright plan', accept: { 'application/json': ['.json'] } }
 const PLAN_FILES = '.json,application/json'
-const TABLE_FILES = '.csv,.tsv,.txt,text/csv,text/plain'
+export const TABLE_FILES = '.csv,.tsv,.txt,text/csv,text/plain'
 
 const EXPORT_TYPES: Readonly<Record<ExportKind, string>> = {
   csv: 'text/csv',
@@ -21,6 +21,9 @@ const EXPORT_TYPES: Readonly<Record<ExportKind, string>> = {
   png: 'image/png',
   vtp: 'application/xml',
   gltf: 'model/gltf+json',
+  html: 'text/html',
+  txt: 'text/plain',
+  lists: 'application/json',
 }
 
 /** Time for the browser to take a download over before its content is let go [ms]. */
@@ -90,6 +93,7 @@ export function createBrowserHost(page: Page): Host {
       return isFailure(opened) ? opened : { ...opened, token: null }
     },
     openTable: () => open(TABLE_FILES),
+    chooseTables: async () => (await pickFiles(document, TABLE_FILES)).map(chosenFile),
     async savePlan(file, name, text) {
       const token = file?.token ?? null
       const known = token === null ? undefined : chosen.get(token)
@@ -109,6 +113,8 @@ export function createBrowserHost(page: Page): Host {
     // The page follows its own choice; a browser window has no appearance of its own to set.
     setTheme: () => undefined,
     onCommand: () => () => undefined,
+    givenPlan: async () => null,
+    onGiven: () => () => undefined,
   }
 }
 

@@ -2,6 +2,8 @@
  * The desktop face: every request goes through the bridge that the preload put on the page.
  */
 import { BRIDGE_NAME, type Answer, type Bridge } from '../../app/contract'
+import { TABLE_FILES } from './browser'
+import { chosenFile, pickFiles } from './pickFile'
 import type { Host, HostFailure } from './types'
 
 const LOST: HostFailure = { failure: 'The program’s other half did not answer. Save a copy and restart the program.' }
@@ -14,7 +16,9 @@ export function findBridge(page: object): Bridge | null {
 
 function isBridge(value: unknown): value is Bridge {
   if (typeof value !== 'object' || value === null) return false
-  return ['request', 'openDropped', 'onCommand'].every((verb) => typeof Reflect.get(value, verb) === 'function')
+  return ['request', 'openDropped', 'onCommand', 'onGiven'].every(
+    (verb) => typeof Reflect.get(value, verb) === 'function',
+  )
 }
 
 export function createDesktopHost(bridge: Bridge): Host {
@@ -24,9 +28,13 @@ export function createDesktopHost(bridge: Bridge): Host {
   return {
     kind: 'desktop',
     openPlan: () => settle(bridge.request('plan:open', null)),
+    givenPlan: () => settle(bridge.request('plan:given', null)),
+    onGiven: (listener) => bridge.onGiven(listener),
     openDropped: (file) => settle(bridge.openDropped(file)),
     savePlan: (file, name, text) => settle(bridge.request('plan:save', { token: file?.token ?? null, name, text })),
     openTable: () => settle(bridge.request('table:open', null)),
+    // The page's own file input: hundreds of frames are then read one after another, and no path reaches the page.
+    chooseTables: async () => (await pickFiles(document, TABLE_FILES)).map(chosenFile),
     exportFile: (kind, name, content) =>
       settle(
         bridge.request('export:save', {

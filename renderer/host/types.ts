@@ -13,6 +13,15 @@ export interface OpenedPlanFile extends PlanFile {
   readonly text: string
 }
 
+/** A file that was chosen and not yet read: many or large ones are read one after another. */
+export interface ChosenFile {
+  readonly name: string
+  /** [bytes] */
+  readonly size: number
+  /** Its bytes, or a sentence that says why they cannot be had. */
+  read(): Promise<ArrayBuffer | HostFailure>
+}
+
 export interface DocumentState {
   readonly title: string
   readonly edited: boolean
@@ -30,12 +39,18 @@ export interface Host {
   readonly kind: 'desktop' | 'browser'
   /** Ask for a plan file; null when cancelled. */
   openPlan(): Promise<OpenedPlanFile | HostFailure | null>
+  /** A file that the system gave the program to open, and that the window has not asked for yet; null when there is none. */
+  givenPlan(): Promise<OpenedPlanFile | HostFailure | null>
+  /** Such a file has come; the browser has none. Returns the unsubscribe. */
+  onGiven(listener: () => void): () => void
   /** Read a file dropped on the window. */
   openDropped(file: File): Promise<OpenedPlanFile | HostFailure>
   /** Save to the file behind the token, or ask where (file null or saveAs). Null when cancelled. */
   savePlan(file: PlanFile | null, name: string, text: string): Promise<PlanFile | HostFailure | null>
   /** Ask for a table of numbers (CSV, text); null when cancelled. */
   openTable(): Promise<{ readonly name: string; readonly text: string } | HostFailure | null>
+  /** Ask for any number of tables; the page learns their names and contents, never where they lie. None when cancelled. */
+  chooseTables(): Promise<readonly ChosenFile[]>
   exportFile(
     kind: ExportKind,
     name: string,

@@ -102,8 +102,8 @@ function noteOf({ binding, rangeEnds, withinSpread, feasible, points }: Candidat
   } else if (binding !== null) parts.push(binding.name)
   parts.push(
     ...rangeEnds.map(({ field, end }) => {
-      const name = field === 'count' ? 'thrusters' : MAP_FIELDS[field].title.toLowerCase()
-      return `${end === 'low' ? 'least' : 'largest'} ${name} searched`
+      if (field === 'count') return `${end === 'low' ? 'fewest' : 'most'} thrusters searched`
+      return `${end === 'low' ? 'least' : 'largest'} ${MAP_FIELDS[field].title.toLowerCase()} searched`
     }),
   )
   if (withinSpread.length > 0) parts.push(`within the spread of ${withinSpread.join(', ')}: check by test`)

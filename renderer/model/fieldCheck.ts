@@ -1,7 +1,7 @@
 /**
  * What was typed into a field becomes a value or a sentence: pure, in the units shown.
  */
-import { formatQuantity, parseQuantity, type Dimension } from '../../core/quantity'
+import { describeDimension, formatQuantity, parseQuantity, type Dimension } from '../../core/quantity'
 
 /** What a field's value must keep to; limits in the base unit. */
 export interface FieldLimits {
@@ -19,6 +19,7 @@ export type FieldReading =
  *
  * @param name what the sentence calls the field
  * @param unit unit of a bare number, and of the sentence
+ * @param exitDiameter what a number with D (`3.2 D`) is a multiple of, in the base unit; null where the field takes none
  */
 export function readField(
   text: string,
@@ -26,12 +27,34 @@ export function readField(
   dimension: Dimension,
   unit: string,
   limits: FieldLimits,
+  exitDiameter: number | null = null,
 ): FieldReading {
   if (limits.optional === true && text.trim() === '') return { ok: true, value: null }
-  const parsed = parseQuantity(text, dimension, unit, { name })
+  const parsed = readDiameters(text, name, dimension, exitDiameter) ?? parseQuantity(text, dimension, unit, { name })
   if (!parsed.ok) return { ok: false, message: parsed.message }
   const message = outOfRange(parsed.value, name, parsed.unit ?? unit, limits)
   return message === null ? { ok: true, value: parsed.value } : { ok: false, message }
+}
+
+/** What a number with D stands for, or why it cannot stand here; null for anything else. */
+function readDiameters(
+  text: string,
+  name: string,
+  dimension: Dimension,
+  exitDiameter: number | null,
+): { readonly ok: true; readonly value: number; readonly unit: null } | { ok: false; readonly message: string } | null {
+  const found = /^(.*\d.*?)\s*([Dd])$/su.exec(text.trim())
+  const [, number = '', letter] = found ?? []
+  if (exitDiameter === null) {
+    if (letter !== 'D' || dimension !== 'length') return null
+    return { ok: false, message: `${name} is not given in exit diameters; it needs ${describeDimension('length')}.` }
+  }
+  if (letter === undefined) return null
+  if (letter === 'd') return { ok: false, message: `${name} in exit diameters has a capital D: ${number} D.` }
+  const parsed = parseQuantity(number, 'number', '', { name: `${name} in exit diameters` })
+  if (!parsed.ok) return parsed
+  // What is left of the product in the last digit would show in the full value.
+  return { ok: true, value: Number((parsed.value * exitDiameter).toPrecision(15)), unit: null }
 }
 
 /** The sentence for a value outside its limits, null inside. */

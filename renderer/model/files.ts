@@ -11,9 +11,10 @@ import {
   unknownKeysInWords,
   validatePlan,
   writePlan,
+  type Example,
   type Plan,
 } from '../../core/plan'
-import { isFailure, type Host, type PlanFile } from '../host/types'
+import { isFailure, type Host, type HostFailure, type OpenedPlanFile, type PlanFile } from '../host/types'
 import type { PlanDocument } from './document'
 import { exitPerPiston } from '../../core/pulse'
 import type { Notices } from './notices'
@@ -26,6 +27,8 @@ export interface Files {
   openExample(id: string): Promise<void>
   openText(text: string, file: PlanFile | null): Promise<void>
   openDropped(file: File): Promise<void>
+  /** Open what the system gave the program to open, one file after another, until none is left. */
+  openGiven(): Promise<void>
   /** Read a table of time and speed or position into the programme. */
   openTable(): Promise<void>
   readTable(name: string, text: string): void
@@ -39,6 +42,13 @@ export interface FilesContext {
   readonly notices: Notices
   /** Asks what to do with unsaved changes. */
   readonly askToLeave: (title: string) => Promise<LeaveAnswer>
+  /** An example was opened: the window turns to what it is about. */
+  readonly onExample: (example: Example) => void
+}
+
+/** Whether a dropped file is read as a table, by its name. */
+export function isTable({ name }: { readonly name: string }): boolean {
+  return /\.(csv|tsv|txt)$/iu.test(name)
 }
 
 /** Title shown for a plan, also where it has none. */
@@ -46,7 +56,7 @@ export function shownTitle(plan: Plan): string {
   return plan.title.trim() === '' ? 'Untitled plan' : plan.title
 }
 
-export function createFiles({ host, document, notices, askToLeave }: FilesContext): Files {
+export function createFiles({ host, document, notices, askToLeave, onExample }: FilesContext): Files {
   async function mayLeave(): Promise<boolean> {
     if (!document.edited.value) return true
     const answer = await askToLeave(shownTitle(document.plan.value))
@@ -69,22 +79,40 @@ export function createFiles({ host, document, notices, askToLeave }: FilesContex
     return true
   }
 
-  async function show(text: string, name: string, file: PlanFile | null): Promise<void> {
+  /** @returns whether it is what is open now */
+  async function show(text: string, name: string, file: PlanFile | null): Promise<boolean> {
     const reading = readPlan(text)
     if (!reading.ok) {
       notices.fail(
         `${name} was not opened: ${reading.problems[0]?.message ?? 'it is not a plan'}`,
         reading.problems.slice(1).map((problem) => problem.message),
       )
-      return
+      return false
     }
-    if (!(await mayLeave())) return
+    if (!(await mayLeave())) return false
     notices.clear()
     document.replace(reading.plan, file)
     const unknown = unknownKeysInWords(reading.plan)
     if (unknown !== null) notices.fail(`${name}: ${unknown}`)
     if (reading.migratedFrom !== null)
       notices.tell(`${name} was made by version ${reading.migratedFrom}; saving it writes the present version.`)
+    return true
+  }
+
+  /** A plan is shown, a table read into the open one. */
+  async function take(opened: OpenedPlanFile | HostFailure): Promise<void> {
+    if (isFailure(opened)) notices.fail(opened.failure)
+    else if (isTable(opened)) readTable(opened.name, opened.text)
+    else await show(opened.text, opened.name, { token: opened.token, name: opened.name })
+  }
+
+  let taking: Promise<void> = Promise.resolve()
+  async function takeGiven(): Promise<void> {
+    const next = await host.givenPlan()
+    if (next === null) return
+    await take(next)
+    // After a failure the rest waits for the next word of the shell: one that answers nothing any more would be asked for ever.
+    if (!isFailure(next)) await takeGiven()
   }
 
   function readTable(name: string, text: string): void {
@@ -101,7 +129,7 @@ export function createFiles({ host, document, notices, askToLeave }: FilesContex
     }
     document.change('table', next)
     notices.clear()
-    notices.tell(`Read ${reading.rows.length} rows from ${name}. ${reading.notes.join(' ')}`)
+    notices.tell(`Read ${reading.rows.length} rows from ${name} into the speed programme. ${reading.notes.join(' ')}`)
   }
 
   return {
@@ -116,14 +144,16 @@ export function createFiles({ host, document, notices, askToLeave }: FilesContex
     },
     async openExample(id) {
       const example = EXAMPLES.find((candidate) => candidate.id === id)
-      if (example !== undefined) await show(example.text, example.title, null)
+      if (example !== undefined && (await show(example.text, example.title, null))) onExample(example)
     },
-    openText: (text, file) => show(text, file?.name ?? 'The text', file),
-    async openDropped(file) {
-      const opened = await host.openDropped(file)
-      if (isFailure(opened)) notices.fail(opened.failure)
-      else if (/\.(csv|tsv|txt)$/iu.test(opened.name)) readTable(opened.name, opened.text)
-      else await show(opened.text, opened.name, { token: opened.token, name: opened.name })
+    async openText(text, file) {
+      await show(text, file?.name ?? 'The text', file)
+    },
+    openDropped: async (file) => take(await host.openDropped(file)),
+    openGiven() {
+      // What comes while a question about an earlier one is open waits for its answer.
+      taking = taking.catch(() => undefined).then(takeGiven)
+      return taking
     },
     async openTable() {
       const opened = await host.openTable()

@@ -44,6 +44,16 @@ export function nearestOutput(times: ArrayLike<number>, time: number): number {
   return Math.abs(time - before) <= Math.abs(after - time) ? low : low + 1
 }
 
+/** Where a time lies among the outputs, from 0 at the first to 1 at the last: as a slider over their numbers shows it. */
+export function outputShare(times: ArrayLike<number>, time: number): number {
+  const end = times.length - 1
+  if (end < 1) return 0
+  const low = bracket(times, time)
+  const [before = 0, after = before] = [times[low], times[low + 1]]
+  const part = after > before ? (time - before) / (after - before) : 0
+  return (low + Math.min(1, Math.max(0, part))) / end
+}
+
 /** Number of the last output at or before a time. */
 export function outputAt(times: ArrayLike<number>, time: number): number {
   if (times.length < 2) return 0

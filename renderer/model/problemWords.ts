@@ -42,9 +42,13 @@ function isFieldPath(path: string): path is FieldPath {
   return path in FIELDS
 }
 
-/** A sentence of the core with every path replaced by the field's name; the first letter stays a capital. */
+/** A number with more digits than anyone reads. */
+const LONG = /\b\d+\.\d{6,}(?:e[-+]?\d+)?/gu
+
+/** A sentence of the core with every path replaced by the field's name and long numbers cut; the first letter stays a capital. */
 export function problemInWords(message: string): string {
-  return message.replace(
+  const short = message.replace(LONG, (digits) => String(Number(Number(digits).toPrecision(5))))
+  return short.replace(
     /\b(?:water|nozzle|programme|ambient|models|jet|train|wake|thruster|tankRun|sweep|spread)(?:\.\w+)+/gu,
     (path, offset: number) => {
       const name = isFieldPath(path) ? fieldDefinition(path).label : (OTHER_NAMES[path] ?? listName(path) ?? path)

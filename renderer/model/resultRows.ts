@@ -1,7 +1,7 @@
 /**
  * The results of a pulse as rows to show: figures in the chosen units, ranges first. Pure; every number is core's own.
  */
-import { formatNumber, formatQuantity, formatRange } from '../../core/quantity'
+import { formatFixed, formatNumber, formatQuantity, formatRange } from '../../core/quantity'
 import type { Plan } from '../../core/plan'
 import type { PulseResult, PulseRing } from '../../core/pulse'
 import type { JetEnsemble } from '../../core/coaxial'
@@ -139,7 +139,7 @@ export function estimateRows(
       .filter((entry) => entry.estimate === key)
       .map((entry) => entry.text)
       .join(' ')
-  const value = (number: number | null): string => (number === null ? 'none' : number.toFixed(2))
+  const value = (number: number | null): string => (number === null ? 'none' : formatFixed(number))
   const label = (name: string, key: string): string => (plan.models.formationNumber === key ? `${name}, adopted` : name)
   return [
     {

@@ -38,6 +38,22 @@ export function freshnessInWords(status: ResultsStatus, problems: number): strin
   }
 }
 
+/**
+ * With entries that were refused and stand in their fields, results are those of the plan without them.
+ *
+ * @param words how the results stand to the plan
+ */
+export function withUntaken(words: string, untaken: number): string {
+  if (untaken === 0) return words
+  const standing = words === 'results current' ? 'results for the accepted plan' : words
+  return `${standing}, ${untakenInWords(untaken)}`
+}
+
+/** `1 entry not taken`. */
+export function untakenInWords(untaken: number): string {
+  return `${untaken} ${untaken === 1 ? 'entry' : 'entries'} not taken`
+}
+
 /** How the rings in motion stand to the plan shown. */
 export function wakeFreshnessInWords(status: WakeStatus): string {
   const words: Readonly<Record<WakeStatus, string>> = {

@@ -114,7 +114,7 @@ export function wallFigures({ clearances, wallShare }: TankRunResult): readonly 
     {
       id: 'tank.walls',
       key: 'walls',
-      label: 'Walls change the speed',
+      label: 'Change of speed',
       figure: formatNumber(100 * wallShare, 2),
       unit: '%',
       notes: [
@@ -155,8 +155,8 @@ export function dayFigures({ settling, matrix }: TankRunResult): readonly TankFi
     {
       id: 'tank.regime',
       key: 'regime',
-      label: 'Ring',
-      figure: settling.ring.regime === 'between' ? 'between' : (settling.ring.regime ?? NONE),
+      label: 'Ring is',
+      figure: settling.ring.regime === 'between' ? 'in between' : (settling.ring.regime ?? NONE),
       unit: '',
       notes: [settling.ring.text, settling.start.impulsive ? 'impulsive start' : 'the start is not impulsive'],
       warn: settling.ring.regime === 'turbulent' || !settling.start.impulsive,
@@ -168,6 +168,8 @@ export interface TankTable {
   readonly id: string
   readonly title: string
   readonly columns: readonly string[]
+  /** Columns of words, from 0; the others are figures. */
+  readonly words: readonly number[]
   readonly rows: readonly { readonly cells: readonly string[]; readonly warn: boolean }[]
 }
 
@@ -189,6 +191,7 @@ function arrivalRows({ arrivals }: TankRunResult, spread: SpreadOutcome | null, 
   return {
     id: 'arrivals',
     title: 'Arrivals',
+    words: [],
     columns: [
       `Station (${length})`,
       `Time (${wakeTime})`,
@@ -220,6 +223,7 @@ function triggerRows({ triggers }: TankRunResult, { wakeTime }: Units): TankTabl
   return {
     id: 'triggers',
     title: 'Triggers',
+    words: [0, 5],
     columns: ['Device', `After command (${wakeTime})`, `After motion (${wakeTime})`, 'Earliest', 'Latest', 'What'],
     rows: triggers.map(({ device, afterCommand, time, early, late, text }) => ({
       cells: [device, ...[afterCommand, time, early, late].map((value) => number(value, wakeTime)), text],
@@ -232,6 +236,7 @@ function clearanceRows({ clearances }: TankRunResult, { bodyLength }: Units): Ta
   return {
     id: 'clearances',
     title: 'Clearances',
+    words: [0, 5],
     columns: ['Wall', `Distance (${bodyLength})`, 'In D', 'In ring radii', 'Changes the speed by (%)', 'Verdict'],
     rows: clearances.map(({ wall, distance, overDiameter, overRadius, costPercent, ok, wallInteraction }) => ({
       cells: [
@@ -260,6 +265,7 @@ function imagingRows({ imaging }: TankRunResult, units: Units): TankTable {
   return {
     id: 'imaging',
     title: 'Imaging',
+    words: [0, 2],
     columns: ['', 'Value', 'Verdict'],
     rows: [
       row('Scale', shown(imaging.scale, imageScale)),

@@ -38,8 +38,8 @@ export interface Thrust {
   moveTo(x: number, y: number, burst: Burst | null): void
   /** Make a candidate the plan at one of its duty points: one step of undo. */
   openCandidate(candidate: Candidate, number: number, point?: number): void
-  /** Compute what the page shows. */
-  refresh(): void
+  /** Compute what the page shows, and search where the plan asks for it. */
+  run(): void
 }
 
 export interface ThrustOptions {
@@ -113,6 +113,7 @@ export function createThrust({ client, document, problems, active, units, onCras
       present: { ...here, frequency: here.frequency ?? null },
       candidates: shownCandidates(),
       published: result?.pulse.formationNumber.published ?? null,
+      underWay: (result?.speed ?? 0) > 0,
     })
   })
 
@@ -165,7 +166,11 @@ export function createThrust({ client, document, problems, active, units, onCras
       const next = setDesign(open(), { diameter, strokeRatio, count, ejectShare, frequency, duration })
       document.change(`open candidate ${number}`, next)
     },
-    refresh,
+    run() {
+      refresh()
+      const { search = null, target = [] } = open().thruster ?? {}
+      if (ready.value && search !== null && (target.length > 0 || search.goal === 'thrust')) sizing.run()
+    },
   }
 }
 

@@ -3,14 +3,7 @@
  */
 import { formatNumber, formatQuantity, formatRange } from '../../core/quantity'
 import type { ThrusterExplanationId } from '../../core/report'
-import {
-  CRUISE_REACHED,
-  slackOf,
-  type Limit,
-  type LimitName,
-  type ThrusterResult,
-  type ThrusterSection,
-} from '../../core/thruster'
+import { CRUISE_REACHED, slackOf, type LimitName, type ThrusterResult, type ThrusterSection } from '../../core/thruster'
 import type { Magnitudes, Units } from './units'
 
 export interface ThrustRow {
@@ -82,7 +75,9 @@ export function thrustRows(section: ThrusterSection, result: ThrusterResult, uni
       notes: [
         thrust.figure.includes(' ')
           ? `slug, to slug with quick start; adopted ${formatQuantity(result.meanThrust, units.force, 3)}`
-          : total,
+          : result.quickStart
+            ? total
+            : 'slug; its start is too slow for over-pressure',
         `${formatQuantity(result.thrustPerPulse, units.impulse, 3)} a pulse, ${formatQuantity(result.frequency, units.frequency, 3)}`,
       ],
       value: result.meanThrust,
@@ -95,6 +90,14 @@ export function thrustRows(section: ThrusterSection, result: ThrusterResult, uni
       notes: [result.costOfTransport === null ? total : `cost of transport ${formatNumber(result.costOfTransport, 3)}`],
       value: result.power.total,
     },
+    ...efficiencyRows(section, result),
+  ]
+}
+
+/** By name, never one for the other; a bench has neither. */
+function efficiencyRows(section: ThrusterSection, result: ThrusterResult): readonly ThrustRow[] {
+  if (section.vehicle === null) return []
+  return [
     {
       id: 'froude',
       label: 'Froude efficiency',
@@ -183,7 +186,7 @@ export function furtherThrustRows(
     rows.push({
       id: 'cavitationMargin',
       label: 'Cavitation margin',
-      ...range([result.cavitationMargin], units.corePressure),
+      ...range([result.cavitationMargin], units.pressure),
       notes: ['ring core or intake, over vapour pressure'],
       value: result.cavitationMargin,
     })
@@ -254,7 +257,7 @@ export function limitRows(section: ThrusterSection, result: ThrusterResult, unit
         key: `${index}`,
         name,
         value: bounded(limit.value, unit),
-        limit: bounded(limit.limit, unit),
+        limit: `${asked(limit.name)} ${bounded(limit.limit, unit)}`,
         ok: limit.ok,
         room: slackOf(limit, scales),
       }
@@ -279,17 +282,18 @@ export function limitUnit(name: LimitName, units: Units): string {
     'refill time': units.time,
     'bay length': units.length,
     'bay diameter': units.length,
-    'core cavitation': units.corePressure,
-    'intake cavitation': units.corePressure,
+    'core cavitation': units.pressure,
+    'intake cavitation': units.pressure,
     thrust: units.force,
     'formation number': '',
   }
   return known[name]
 }
 
-/** Sign of a limit: at least or at most. */
-export function limitSign(name: Limit['name']): '≥' | '≤' {
-  return name === 'thrust' || name.endsWith('cavitation') || name === 'refill time' ? '≥' : '≤'
+/** What a limit asks of the value. */
+function asked(name: LimitName): string {
+  if (name === 'thrust') return 'at least'
+  return name.endsWith('cavitation') || name === 'refill time' ? 'above' : 'at most'
 }
 
 /** What a value is against a held one, in words; null where they cannot be compared. */

@@ -8,23 +8,31 @@ function typed(value: number): number {
   return Number(value.toPrecision(2))
 }
 
+/** Two digits, and not more than the value: what is asked for is given. */
+function atMost(value: number): number {
+  const step = 10 ** (Math.floor(Math.log10(value)) - 1)
+  return Number((Math.floor(value / step) * step).toPrecision(2))
+}
+
 /** Share of the peak exit speed that a vehicle begins with: jets much faster than the vehicle waste their energy. */
 const SPEED_SHARE = 0.3
 /** Period of a first train over the stroke's duration: the rest refills. */
 const PERIOD = 2.5
-const PLAIN_PULSE = { duration: 0.5, impulse: 0.01, peakSpeed: 0.2, density: 1000 }
+const PLAIN_PULSE = { duration: 0.5, impulse: 0.01, peakSpeed: 0.2, mass: 0, density: 1000 }
 
 interface PulseFigures {
   readonly duration: number
   readonly impulse: number
   readonly peakSpeed: number
+  /** Of the slug [kg]. */
+  readonly mass: number
   readonly density: number
 }
 
-function figuresOf(pulse: PulseResult | null, density: number): PulseFigures {
-  return pulse === null
-    ? PLAIN_PULSE
-    : { duration: pulse.duration, impulse: pulse.total.impulse, peakSpeed: pulse.peakSpeed, density }
+function figuresOf({ nozzle }: Plan, pulse: PulseResult | null, density: number): PulseFigures {
+  if (pulse === null) return PLAIN_PULSE
+  const mass = density * (Math.PI / 4) * nozzle.diameter ** 2 * pulse.stroke
+  return { duration: pulse.duration, impulse: pulse.slug.impulse, peakSpeed: pulse.peakSpeed, mass, density }
 }
 
 /** Ranges about the plan's own design. */
@@ -47,11 +55,13 @@ export function startSearch(plan: Plan): Plan {
  * gives, so that the sizing has something to begin with.
  */
 export function startThruster(plan: Plan, on: 'vehicle' | 'bench', pulse: PulseResult | null, density: number): Plan {
-  const figures = figuresOf(pulse, density)
+  const figures = figuresOf(plan, pulse, density)
   const train = plan.train ?? { pulses: 10, period: typed(PERIOD * figures.duration) }
   const thrust = figures.impulse / train.period
   const speed = typed(SPEED_SHARE * figures.peakSpeed)
-  const dragArea = typed(thrust / (0.5 * figures.density * speed * speed))
+  // What the intake holds back under way.
+  const left = Math.max(0.1 * thrust, thrust - (figures.mass * speed) / train.period)
+  const dragArea = atMost(left / (0.5 * figures.density * speed * speed))
   const withTrain = setTrain(plan, train)
   const search = searchAround(plan, train.period)
   return on === 'vehicle'
@@ -60,5 +70,5 @@ export function startThruster(plan: Plan, on: 'vehicle' | 'bench', pulse: PulseR
         target: [{ speed, share: 1 }],
         search,
       })
-    : setThruster(withTrain, { vehicle: null, target: [{ thrust: typed(thrust), share: 1 }], search })
+    : setThruster(withTrain, { vehicle: null, target: [{ thrust: atMost(thrust), share: 1 }], search })
 }

@@ -7,6 +7,7 @@ import type { Wake } from '../../core/filament'
 import { formatNumber, formatQuantity, formatRange, fromBase } from '../../core/quantity'
 import { pathIndex, pathOffsets } from '../../core/report'
 import type { WakeArrival, WakeData } from '../../core/run'
+import { inShownUnits } from './shownSentence'
 import type { Units } from './units'
 
 export interface EventRow {
@@ -16,6 +17,8 @@ export interface EventRow {
   readonly what: string
   readonly place: string
   readonly detail: string
+  /** After the time up to which the model holds. */
+  readonly beyond: boolean
 }
 
 const EVENT_WORDS: Readonly<Record<WakeEvent['event'], string>> = {
@@ -41,6 +44,8 @@ export function timeText(time: number, units: Units): string {
 /** A time with as many decimals as the output step needs, so that a running clock does not jitter. */
 export function clockText(time: number, step: number, unit: string): string {
   const [shownTime, shownStep] = [fromBase(time, unit), fromBase(step, unit)]
+  // Beyond the usual sizes a clock of fixed decimals would be all zeros, or longer than its place.
+  if (shownTime >= 1e6 || (shownStep > 0 && shownStep < 1e-6)) return formatQuantity(time, unit)
   const decimals = Math.min(6, Math.max(0, -Math.floor(Math.log10(shownStep > 0 ? shownStep : 1) + 1e-9)))
   return `${shownTime.toFixed(decimals)}\u00A0${unit}`
 }
@@ -48,6 +53,7 @@ export function clockText(time: number, step: number, unit: string): string {
 export function eventRows(wake: Wake, units: Units): readonly EventRow[] {
   return wake.events.map((event, index) => {
     const rings = ringsInWords(event.rings)
+    const beyond = event.time > wake.validUntil
     const lone = event.event === 'cores-touch' && event.rings.length === 1
     const words =
       event.event === 'end' ? 'End of the run' : `${rings} ${lone ? 'core touches' : EVENT_WORDS[event.event]}`
@@ -57,22 +63,17 @@ export function eventRows(wake: Wake, units: Units): readonly EventRow[] {
       timeText: timeText(event.time, units),
       what: words.charAt(0).toUpperCase() + words.slice(1),
       place: event.x === null ? '' : `x = ${formatQuantity(event.x, units.length)}`,
-      detail: detailInWords(event, units),
+      detail: [beyond ? 'after “holds until”' : '', detailInWords(event, units)]
+        .filter((part) => part !== '')
+        .join(', '),
+      beyond,
     }
   })
 }
 
 function detailInWords({ event, detail, x }: WakeEvent, units: Units): string {
   if (event === 'arrival') return x === null ? detail : `station ${formatQuantity(x, units.length)}`
-  return secondsRounded(detail)
-}
-
-/** Sentences of the core carry times to the last digit: four are enough to read. */
-export function secondsRounded(text: string): string {
-  return text.replace(
-    /(\d+\.\d{4,}(?:e-?\d+)?) (s|m)\b/gu,
-    (_, digits: string, unit: string) => `${formatNumber(Number(digits))} ${unit}`,
-  )
+  return inShownUnits(detail, units, 4)
 }
 
 export interface FigureRow {
@@ -179,7 +180,7 @@ export function runFacts(data: WakeData, viscous: boolean, units: Units): readon
     { label: 'Drift', text: driftInWords(wake) },
     {
       label: 'Holds until',
-      text: `${timeText(wake.validUntil, units)}: ${secondsRounded(wake.reason).replace(/\.$/u, '')}`,
+      text: `${timeText(wake.validUntil, units)}: ${inShownUnits(wake.reason, units, 4).replace(/\.$/u, '')}`,
     },
     {
       label: 'Work',

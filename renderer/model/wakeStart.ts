@@ -59,9 +59,14 @@ export function startByHand(plan: Plan, pulse: PulseResult | null, held: readonl
     circulation: made === null ? PLAIN_RING.circulation : typed(made.circulation),
     coreRadius: made === null ? PLAIN_RING.coreRadius : typed(Math.min(THICKEST * radius, made.meanCoreRadius)),
   }
-  const rings = [first, nextRing([first])]
-  if (plan.wake !== null) return setWake(plan, { rings })
-  return setWake(plan, { rings, ...usualSpan(radius, Math.abs(first.circulation) / (4 * radius)) })
+  return withRings(plan, [first, nextRing([first])])
+}
+
+/** The plan with its list of rings; a wake that begins with them lasts as long as the first needs to show what it does. */
+export function withRings(plan: Plan, rings: readonly WakeRing[]): Plan {
+  const [first] = rings
+  if (plan.wake !== null || first === undefined) return setWake(plan, { rings })
+  return setWake(plan, { rings, ...usualSpan(first.radius, Math.abs(first.circulation) / (4 * first.radius)) })
 }
 
 /** A ring like the last, two radii ahead of it the way it faces. */

@@ -20,23 +20,29 @@ import type { Host } from '../host/types'
 import type { WorkerClient } from '../worker/client'
 import { createDocument, type PlanDocument } from './document'
 import { createFiles, type Files, type LeaveAnswer } from './files'
+import { withImprint } from './imprint'
 import { createJetJob, type JetJob } from './jetJob'
 import { createJetView, type JetView } from './jetView'
+import { createLists, type Lists } from './lists'
 import { createNotices, type Notices } from './notices'
 import type { PageId } from './pages'
 import { problemInWords } from './problemWords'
+import { createReadings, type Readings } from './readings/readings'
+import { createRingOffer, type RingOffer } from './ringOffer'
 import { createRecovery, type Recovery, type RecoveryStorage } from './recovery'
 import { magnitudesOf } from './resultRows'
 import { createResults, type Results } from './results'
 import { createTank, type Tank } from './tank'
+import { inShownUnits } from './shownSentence'
 import type { ThemeStore } from './theme'
 import { createThrust, type Thrust } from './thrust'
 import { thrustMagnitudes } from './thrustRows'
 import { shownUnits, type Units } from './units'
+import { createUntaken, type Untaken } from './untaken'
 import { createWakeJob, type WakeJob } from './wakeJob'
 import { createWakePictures, type WakePictures } from './wakePictures'
 
-export type DialogId = 'examples' | 'units' | 'export' | 'keys' | 'print'
+export type DialogId = 'examples' | 'units' | 'export' | 'keys' | 'about' | 'print' | 'lists'
 
 export interface LeaveQuestion {
   readonly title: string
@@ -57,14 +63,22 @@ export interface Workspace {
   readonly wakePictures: WakePictures
   /** The thruster of the open plan: figures, sizing, map and what is held. */
   readonly thrust: Thrust
+  /** The readings of the open plan against it. */
+  readonly readings: Readings
   readonly units: ComputedRef<Units>
   /** What the open plan breaks; nothing is computed while there is any. */
   readonly problems: ComputedRef<readonly Problem[]>
+  /** Entries that were refused and stand in their fields. */
+  readonly untaken: Untaken
+  /** Parts of the user's own. */
+  readonly lists: Lists
   /** What a field of the plan breaks, in words, from the plan's own check or from the last wake; null for nothing. */
   refusalOf(field: string): string | null
   readonly theme: ThemeStore
   readonly notices: Notices
   readonly files: Files
+  /** Rings read or pasted, before they are taken. */
+  readonly ringOffer: RingOffer
   readonly recovery: Recovery
   readonly page: Ref<PageId>
   readonly dialog: Ref<DialogId | null>
@@ -108,9 +122,10 @@ export interface WorkspaceOptions {
 const KEY: InjectionKey<Workspace> = Symbol('workspace')
 
 export function createWorkspace(options: WorkspaceOptions): Workspace {
-  const { host, client, wakeClient = client, pictureClient = wakeClient, theme, plan, storage, now } = options
+  const { client, wakeClient = client, pictureClient = wakeClient, theme, plan, storage, now } = options
   const notices = createNotices()
   const document = createDocument(plan, now)
+  const host = withImprint(options.host, () => document.content.value.title)
   const results = createResults(client, (sentence) => notices.fail(sentence))
   const wake = createWakeJob(
     wakeClient,
@@ -122,16 +137,10 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
     client,
     open: () => document.content.value,
     onCrash: (sentence) => notices.fail(sentence),
-    onDone: () => refresh(),
-  })
-  const tank = createTank({
-    client,
-    spreadClient: wakeClient,
-    document,
-    problems: () => problems.value,
-    active: () => page.value === 'tankRun' || dialog.value === 'print',
-    units: () => units.value,
-    onCrash: (sentence) => notices.fail(sentence),
+    onDone: () => {
+      refresh()
+      tank.refresh()
+    },
   })
   const wakePictures = createWakePictures(pictureClient, (sentence) => notices.fail(sentence))
   const page = ref<PageId>('stroke')
@@ -152,13 +161,37 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
           },
         }
       }),
+    onExample(example) {
+      page.value = example.page
+      if (example.page === 'stroke') jetView.showing.value = document.content.value.jet !== null
+    },
   })
+  const ringOffer = createRingOffer({ host, document, notices })
 
+  const tank = createTank({
+    client,
+    spreadClient: wakeClient,
+    document,
+    problems: () => problems.value,
+    active: () => page.value === 'tankRun' || dialog.value === 'print',
+    units: () => units.value,
+    onCrash: (sentence) => notices.fail(sentence),
+  })
+  const readings = createReadings({
+    client,
+    // Velocity fields are read file by file, beside everything else.
+    fieldClient: pictureClient,
+    document,
+    problems: () => problems.value,
+    active: () => page.value === 'readings' || dialog.value === 'print',
+    units: () => units.value,
+    onCrash: (sentence) => notices.fail(sentence),
+  })
   const thrust = createThrust({
     client,
     document,
     problems: () => problems.value,
-    active: () => page.value === 'thrust',
+    active: () => page.value === 'thrust' || dialog.value === 'print',
     units: () => units.value,
     onCrash: (sentence) => notices.fail(sentence),
   })
@@ -172,13 +205,12 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
   /** Compute what the page shows. */
   function run(): void {
     refresh()
-    thrust.refresh()
     tank.refresh()
+    readings.refresh()
     const shown = document.content.value
     if (problems.value.length > 0) return
     if (page.value === 'wake' && shown.wake !== null) wake.run()
-    if (page.value === 'thrust' && (shown.thruster?.search ?? null) !== null && shown.train !== null)
-      thrust.sizing.run()
+    if (page.value === 'thrust') thrust.run()
     if (page.value === 'tankRun' && shown.tankRun !== null && tank.canSpread.value) tank.spreads.run()
     if (page.value === 'stroke' && jetView.showing.value && shown.absent.length === 0) formJet()
   }
@@ -192,12 +224,17 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
 
   function refusalOf(field: string): string | null {
     const found = problems.value.find((candidate) => candidate.field === field)
-    if (found !== undefined) return problemInWords(found.message)
+    if (found !== undefined) return refusalInWords(field, found.message)
     const ofThrust = page.value === 'thrust' ? [thrust.quick, thrust.sizing, thrust.maps] : []
     const ofTank = page.value === 'tankRun' ? [tank.quick, tank.spreads] : []
     const failures = [wake, jet, ...ofThrust, ...ofTank].map((job) => job.failure.value)
     const failure = failures.find((candidate) => candidate?.field === field) ?? null
-    return failure === null ? null : problemInWords(failure.message)
+    return failure === null ? null : refusalInWords(field, failure.message)
+  }
+
+  /** What the lists and fields of the wake are told is in the units they are shown in. */
+  function refusalInWords(field: string, message: string): string {
+    return problemInWords(field.startsWith('wake') ? inShownUnits(message, units.value) : message)
   }
 
   function perform(command: CommandId): void {
@@ -218,7 +255,9 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
       'view.tankRun': () => (page.value = 'tankRun'),
       'view.readings': () => (page.value = 'readings'),
       'view.units': () => (dialog.value = 'units'),
+      'edit.lists': () => (dialog.value = 'lists'),
       'help.keys': () => (dialog.value = 'keys'),
+      'help.about': () => (dialog.value = 'about'),
     }
     void actions[command]()
   }
@@ -241,15 +280,19 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
     jetView,
     wake,
     wakePictures,
+    readings,
     thrust,
     tank,
+    lists: createLists(document, storage),
     storage,
     units,
     problems,
+    untaken: createUntaken(),
     refusalOf,
     theme,
     notices,
     files,
+    ringOffer,
     recovery: createRecovery(document, storage),
     page,
     dialog,

@@ -1,5 +1,5 @@
 /** Columns and values of an edited table. */
-import type { Dimension } from '../../core/quantity'
+import { formatFull, formatQuantity, type Dimension } from '../../core/quantity'
 import type { FieldLimits } from '../model/fieldCheck'
 
 export type GridValue = number | string | null
@@ -20,3 +20,15 @@ export interface GridColumn {
 
 /** Stands in a cell that has no value of its own. */
 export const NO_VALUE = '—'
+
+/** A value as its cell shows it; the unit stands in the heading. */
+export function cellText(value: GridValue, column: GridColumn | undefined): string {
+  if (value === null || column === undefined) return ''
+  if (typeof value === 'string') return column.options?.[value] ?? value
+  return formatQuantity(value, column.unit).split('\u00A0')[0] ?? ''
+}
+
+/** All digits of a value, for its title. */
+export function cellTitle(value: GridValue, column: GridColumn | undefined): string {
+  return typeof value === 'number' && column !== undefined ? formatFull(value, column.unit) : ''
+}

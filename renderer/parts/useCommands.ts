@@ -31,6 +31,7 @@ export function useCommands(workspace: Workspace): void {
       workspace.results.cancel()
       workspace.jet.cancel()
       workspace.wake.cancel()
+      workspace.thrust.sizing.cancel()
       workspace.tank.spreads.cancel()
       return
     }

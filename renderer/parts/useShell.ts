@@ -1,9 +1,12 @@
-/** Tells the shell around the page what is shown, for its title, its edited mark and its menu. */
-import { watchEffect } from 'vue'
+/** Tells the shell around the page what is shown, for its title, its edited mark and its menu; opens what it was given. */
+import { onScopeDispose, watchEffect } from 'vue'
 import { shownTitle } from '../model/files'
 import type { Workspace } from '../model/workspace'
 
-export function useShell({ host, document }: Workspace): void {
+export function useShell({ host, document, files }: Workspace): void {
+  const openGiven = (): void => void files.openGiven()
+  onScopeDispose(host.onGiven(openGiven))
+  openGiven()
   watchEffect(() => {
     host.showDocument({
       title: shownTitle(document.content.value),

@@ -99,16 +99,23 @@ function datasets(model: PlotModel, colours: DrawingColours): ChartDataset<'line
   return model.series.map((series) => {
     const colour = seriesColour(series, colours)
     return {
-      data: points(series),
+      // Measured points are drawn with the marks: their shapes and bars are those of the exports.
+      data: series.marker === undefined ? points(series) : [],
       borderColor: colour,
       borderWidth: series.role === 'primary' ? 1.8 : 1.4,
       borderDash: series.line === 'solid' ? WHOLE : [...DASHES[series.line]],
       borderJoinStyle: 'round',
-      fill: series.filled ? 'origin' : false,
+      fill: filling(series, model),
       backgroundColor: withOpacity(colour, 0.15),
       clip: { left: 2, right: 2, top: 0, bottom: 2 },
     }
   })
+}
+
+/** What the area of a series is shaded to. */
+function filling({ filled, fillTo }: PlotSeries, { series }: PlotModel): 'origin' | number | false {
+  const other = fillTo === undefined ? -1 : series.findIndex(({ id }) => id === fillTo)
+  return other >= 0 ? other : filled ? 'origin' : false
 }
 
 /** Not a number breaks the line. */

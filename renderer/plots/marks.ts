@@ -4,6 +4,8 @@
 import type { ChartArea, Plugin } from 'chart.js'
 import {
   lineEnds,
+  markedPoints,
+  markerPath,
   plotDomain,
   plotLabels,
   plotScale,
@@ -36,6 +38,7 @@ export function marksPlugin(
       chart.ctx.save()
       drawFoot(chart.ctx, state.current, scale)
       drawLines(chart.ctx, state.current, scale)
+      drawMeasured(chart.ctx, state.current, scale)
       drawLabels(chart.ctx, state.current, scale, look)
       drawCursor(chart.ctx, state.current, scale)
       chart.ctx.restore()
@@ -95,6 +98,23 @@ function drawLines(context: CanvasRenderingContext2D, { model, colours }: PlotSt
   context.setLineDash([])
 }
 
+/** Measured points with their error bars. */
+function drawMeasured(context: CanvasRenderingContext2D, { model, colours }: PlotState, scale: PlotScale): void {
+  for (const series of model.series) {
+    const { marker } = series
+    if (marker === undefined) continue
+    const points = markedPoints(series, scale)
+    context.strokeStyle = seriesColour(series, colours)
+    context.lineWidth = 1
+    context.stroke(new Path2D(points.map(({ bar }) => bar).join('')))
+    const shapes = new Path2D(points.map(({ x, y }) => markerPath(marker, x, y)).join(''))
+    context.fillStyle = colours.ground
+    context.fill(shapes)
+    context.lineWidth = 1.3
+    context.stroke(shapes)
+  }
+}
+
 function drawLabels(
   context: CanvasRenderingContext2D,
   { model, colours }: PlotState,
@@ -123,6 +143,17 @@ function drawLabels(
   for (const label of plotLabels(model, scale, (text) => context.measureText(text).width, height)) {
     const { place } = label
     context.fillStyle = worn[label.wears]
+    if (label.marker !== undefined) {
+      const shape = new Path2D(markerPath(label.marker.marker, label.marker.x, label.marker.y))
+      const ink = context.fillStyle
+      context.save()
+      context.fillStyle = colours.ground
+      context.fill(shape)
+      context.strokeStyle = ink
+      context.lineWidth = 1.3
+      context.stroke(shape)
+      context.restore()
+    }
     if (!place.vertical) {
       write(label.text, place.left, place.top + place.height / 2)
       continue
@@ -146,7 +177,7 @@ function drawCursor(context: CanvasRenderingContext2D, { model, colours, cursor 
   context.lineTo(x, scale.frame.top + scale.frame.height)
   context.stroke()
   for (const series of model.series) {
-    const value = valueNear(series.x, series.y, cursor)
+    const value = series.marker === undefined ? valueNear(series.x, series.y, cursor) : null
     if (value === null) continue
     const y = scale.toY(value)
     if (y < scale.frame.top - 1 || y > scale.frame.top + scale.frame.height + 1) continue

@@ -4,7 +4,17 @@
  */
 import type { Plan } from '../../core/plan'
 import type { Progress } from '../../core/base'
-import type { RunRequest, RunResult, Section, WakeData, WakePicture, WakePictureRequest } from '../../core/run'
+import type {
+  RunRequest,
+  RunResult,
+  Section,
+  ThrusterMapRequest,
+  ThrusterMapResult,
+  WakeData,
+  WakePicture,
+  WakePictureRequest,
+} from '../../core/run'
+import type { FieldAnswer, FieldStep } from './fieldSteps'
 import type { Port, WorkerAnswer, WorkerRequest } from './messages'
 
 /** Time a cancelled job has to answer before its worker is replaced [ms]. */
@@ -25,18 +35,26 @@ export type JobOutcome = { readonly kind: 'result'; readonly result: RunResult }
 
 export type PictureOutcome = { readonly kind: 'picture'; readonly picture: WakePicture } | NoAnswer
 
+export type MapOutcome = { readonly kind: 'map'; readonly map: ThrusterMapResult } | NoAnswer
+
+export type FieldsOutcome = { readonly kind: 'fields'; readonly answer: FieldAnswer } | NoAnswer
+
 export interface Job<Outcome = JobOutcome> {
   readonly outcome: Promise<Outcome>
   cancel(): void
 }
 
 export interface WorkerClient {
-  /** @param jet how a starting jet is come by, as in RunRequest; default run */
+  /**
+   * @param jet how a starting jet is come by, as in RunRequest; default run; cached: nothing that takes long is computed
+   * @param fields what velocity fields gave, for the readings
+   */
   run(
     plan: Plan,
     sections: readonly Section[],
     onProgress?: (progress: Progress) => void,
     jet?: NonNullable<RunRequest['jet']>,
+    fields?: NonNullable<RunRequest['fields']> | null,
   ): Job
   /** Dye and field of a finished wake of this plan. */
   picture(
@@ -45,11 +63,15 @@ export interface WorkerClient {
     request: WakePictureRequest,
     onProgress?: (progress: Progress) => void,
   ): Job<PictureOutcome>
+  /** Map of the plan's thruster. */
+  map(plan: Plan, request: ThrusterMapRequest): Job<MapOutcome>
+  /** One step of reading velocity fields; a file's bytes are handed over. */
+  fields(step: FieldStep): Job<FieldsOutcome>
   dispose(): void
 }
 
 /** Whatever may end a job; each kind of job takes its own answer out of it. */
-type AnyOutcome = JobOutcome | PictureOutcome
+type AnyOutcome = JobOutcome | PictureOutcome | MapOutcome | FieldsOutcome
 
 interface OpenJob {
   readonly settle: (outcome: AnyOutcome) => void
@@ -92,6 +114,8 @@ export function createWorkerClient(
     jobs.delete(message.id)
     if (message.kind === 'result') job.settle({ kind: 'result', result: message.result })
     else if (message.kind === 'picture') job.settle({ kind: 'picture', picture: message.picture })
+    else if (message.kind === 'fields') job.settle({ kind: 'fields', answer: message.answer })
+    else if (message.kind === 'map') job.settle({ kind: 'map', map: message.map })
     else job.settle({ kind: 'crashed', message: message.message })
   }
 
@@ -109,12 +133,13 @@ export function createWorkerClient(
     request: (id: number) => WorkerRequest,
     own: (outcome: AnyOutcome) => Outcome | NoAnswer,
     onProgress: ((progress: Progress) => void) | undefined,
+    handedOver: readonly ArrayBuffer[] = [],
   ): Job<Outcome | NoAnswer> {
     const id = nextId++
     const outcome = new Promise<Outcome | NoAnswer>((resolve) =>
       jobs.set(id, { settle: (ended) => resolve(own(ended)), onProgress }),
     )
-    current().post(request(id))
+    current().post(request(id), handedOver)
     return {
       outcome,
       cancel() {
@@ -128,20 +153,32 @@ export function createWorkerClient(
   }
 
   return {
-    run: (plan, sections, onProgress, jet = 'run') =>
+    run: (plan, sections, onProgress, jet = 'run', fields = null) =>
       open<JobOutcome>(
-        (id) => ({ kind: 'run', id, plan, asked: { sections, jet } }),
-        (ended) => (ended.kind === 'picture' ? MIXED_UP : ended),
+        (id) => ({ kind: 'run', id, plan, asked: { sections, jet, sizing: jet === 'cached' ? 'off' : 'run', fields } }),
+        only('result'),
         onProgress,
       ),
     picture: (plan, data, request, onProgress) =>
-      open<PictureOutcome>(
-        (id) => ({ kind: 'picture', id, plan, data, request }),
-        (ended) => (ended.kind === 'result' ? MIXED_UP : ended),
-        onProgress,
+      open<PictureOutcome>((id) => ({ kind: 'picture', id, plan, data, request }), only('picture'), onProgress),
+    map: (plan, request) => open<MapOutcome>((id) => ({ kind: 'map', id, plan, request }), only('map'), undefined),
+    fields: (step) =>
+      open<FieldsOutcome>(
+        (id) => ({ kind: 'fields', id, step }),
+        only('fields'),
+        undefined,
+        step.do === 'file' ? [step.bytes] : [],
       ),
     dispose: () => giveUp({ kind: 'cancelled' }),
   }
+}
+
+/** Takes the job's own kind of answer, and the ends without one. */
+function only<K extends AnyOutcome['kind']>(
+  kind: K,
+): (ended: AnyOutcome) => Extract<AnyOutcome, { kind: K }> | NoAnswer {
+  const isOwn = (ended: AnyOutcome): ended is Extract<AnyOutcome, { kind: K }> => ended.kind === kind
+  return (ended) => (isOwn(ended) ? ended : ended.kind === 'cancelled' || ended.kind === 'crashed' ? ended : MIXED_UP)
 }
 
 /** An answer of another kind than was asked for: never by our own worker. */

@@ -3,8 +3,8 @@
  */
 import type { WorkerAnswer, WorkerRequest } from './messages'
 
-const REQUESTS: readonly unknown[] = ['run', 'picture', 'cancel']
-const ANSWERS: readonly unknown[] = ['progress', 'result', 'picture', 'crashed']
+const REQUESTS: readonly unknown[] = ['run', 'picture', 'map', 'fields', 'cancel']
+const ANSWERS: readonly unknown[] = ['progress', 'result', 'picture', 'map', 'fields', 'crashed']
 
 /** The request, or null for anything else that reaches the port. */
 export function decodeRequest(message: unknown): WorkerRequest | null {

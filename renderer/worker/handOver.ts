@@ -4,11 +4,18 @@
  */
 import type { Wake } from '../../core/filament'
 import type { RunResult, WakePicture } from '../../core/run'
+import type { FieldAnswer } from './fieldSteps'
 import type { WorkerAnswer } from './messages'
 
 export function buffersOf(answer: WorkerAnswer): readonly ArrayBuffer[] {
   if (answer.kind === 'result') return buffersOfResult(answer.result)
+  if (answer.kind === 'fields') return buffersOfFile(answer.answer)
   return answer.kind === 'picture' ? buffersOfPicture(answer.picture) : []
+}
+
+function buffersOfFile(answer: FieldAnswer): readonly ArrayBuffer[] {
+  const frames = answer.ok ? (answer.file?.frames ?? []) : []
+  return whole(frames.flatMap(({ picture }) => (picture === null ? [] : [picture.values])))
 }
 
 function buffersOfPicture({ dye, plane }: WakePicture): readonly ArrayBuffer[] {
@@ -23,7 +30,7 @@ function buffersOfResult({ data }: RunResult): readonly ArrayBuffer[] {
 }
 
 /** Their memory, each piece once; shared memory cannot be handed over. */
-function whole(arrays: readonly (Float64Array | Float32Array)[]): readonly ArrayBuffer[] {
+function whole(arrays: readonly (Float64Array | Float32Array | Int8Array)[]): readonly ArrayBuffer[] {
   const buffers = arrays.map(({ buffer }) => buffer).filter((buffer) => buffer instanceof ArrayBuffer)
   return [...new Set(buffers)]
 }

@@ -3,7 +3,16 @@
  */
 import type { Plan } from '../../core/plan'
 import type { Progress } from '../../core/base'
-import type { RunRequest, RunResult, WakeData, WakePicture, WakePictureRequest } from '../../core/run'
+import type {
+  RunRequest,
+  RunResult,
+  ThrusterMapRequest,
+  ThrusterMapResult,
+  WakeData,
+  WakePicture,
+  WakePictureRequest,
+} from '../../core/run'
+import type { FieldAnswer, FieldStep } from './fieldSteps'
 
 /** To the worker. */
 export type WorkerRequest =
@@ -21,6 +30,8 @@ export type WorkerRequest =
       readonly data: WakeData
       readonly request: WakePictureRequest
     }
+  | { readonly kind: 'map'; readonly id: number; readonly plan: Plan; readonly request: ThrusterMapRequest }
+  | { readonly kind: 'fields'; readonly id: number; readonly step: FieldStep }
   | { readonly kind: 'cancel'; readonly id: number }
 
 /** From the worker. `crashed`: the core threw, which it does for no valid input. */
@@ -28,6 +39,8 @@ export type WorkerAnswer =
   | { readonly kind: 'progress'; readonly id: number; readonly progress: Progress }
   | { readonly kind: 'result'; readonly id: number; readonly result: RunResult }
   | { readonly kind: 'picture'; readonly id: number; readonly picture: WakePicture }
+  | { readonly kind: 'map'; readonly id: number; readonly map: ThrusterMapResult }
+  | { readonly kind: 'fields'; readonly id: number; readonly answer: FieldAnswer }
   | { readonly kind: 'crashed'; readonly id: number; readonly message: string }
 
 /** The part of a message port both sides use; a Worker, a worker's own scope and a MessagePort all offer it. */

@@ -11,6 +11,7 @@ describe('the decoders', () => {
     expect(CHANNELS.toSorted()).toEqual([
       'app:information',
       'export:save',
+      'plan:given',
       'plan:open',
       'plan:save',
       'table:open',
@@ -64,7 +65,11 @@ describe('the decoders', () => {
       { token: null, name: 'x'.repeat(256), text: '' },
       /name must have at most 255 characters, it has 256/,
     ],
-    ['export:save', { kind: 'exe', name: 'a', text: '', base64: null }, /kind must be one of csv, svg, png, vtp, gltf/],
+    [
+      'export:save',
+      { kind: 'exe', name: 'a', text: '', base64: null },
+      /kind must be one of csv, svg, png, vtp, gltf, html, txt/,
+    ],
     ['export:save', { kind: 'csv', name: 'a', text: null, base64: 'AAAA' }, /csv export must carry text/],
     ['export:save', { kind: 'gltf', name: 'a', text: null, base64: 'AAAA' }, /gltf export must carry text/],
     ['export:save', { kind: 'png', name: 'a', text: 'x', base64: null }, /png export must carry base64/],

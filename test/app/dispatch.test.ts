@@ -7,6 +7,7 @@ const PAGE = { url: 'app://main/', parent: null }
 function tableWith(changes: Partial<HandlerTable> = {}): HandlerTable {
   return {
     'plan:open': async () => ({ token: 't', name: 'a.ringwright.json', text: '{}' }),
+    'plan:given': async () => null,
     'plan:save': async () => null,
     'table:open': async () => null,
     'export:save': async () => null,

@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { filtersOf, safeFileName, withEnding, type FileKind } from '../../app/fileNames'
 
-const KINDS: readonly FileKind[] = ['plan', 'table', 'csv', 'svg', 'png', 'vtp', 'gltf']
+const KINDS: readonly FileKind[] = ['plan', 'table', 'csv', 'svg', 'png', 'vtp', 'gltf', 'html', 'txt', 'lists']
 
 describe('safeFileName', () => {
   it.each([
@@ -19,6 +19,10 @@ describe('safeFileName', () => {
     ['png', 'C:\\x\\y', 'C x y.png'],
     ['vtp', 'rings at 1.5 s', 'rings at 1.5 s.vtp'],
     ['gltf', 'rings.gltf', 'rings.gltf'],
+    ['html', 'Run sheet', 'Run sheet.html'],
+    ['txt', 'profile-read-first', 'profile-read-first.txt'],
+    ['lists', 'parts.ringwright-lists.json', 'parts.ringwright-lists.json'],
+    ['lists', 'our nozzles', 'our nozzles.ringwright-lists.json'],
   ] as const)('%s %j becomes %j', (kind, suggested, name) => {
     expect(safeFileName(kind, suggested)).toBe(name)
   })

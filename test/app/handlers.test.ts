@@ -4,7 +4,12 @@ import { createPathTokens } from '../../app/files/pathTokens'
 import { createHandlers, type OpenQuestion, type Services } from '../../app/handlers'
 
 /** Services over a disk in memory; dialogs answer from a list. */
-function fakes(answers: (string | null)[] = [], disk: Record<string, string | Uint8Array> = {}) {
+function fakes(
+  answers: (string | null)[] = [],
+  disk: Record<string, string | Uint8Array> = {},
+  given: readonly string[] = [],
+) {
+  const waiting = [...given]
   const asked: OpenQuestion[] = []
   const saves: boolean[] = []
   const shown: { title: string; path: string | null }[] = []
@@ -28,6 +33,7 @@ function fakes(answers: (string | null)[] = [], disk: Record<string, string | Ui
       },
     },
     tokens: createPathTokens(() => `token-${(count += 1)}`),
+    given: { next: () => waiting.shift() ?? null },
     shell: {
       showDocument: (state, filePath) => shown.push({ title: state.title, path: filePath }),
       setTheme: () => undefined,
@@ -50,6 +56,16 @@ describe('opening a plan', () => {
 
   it('is null when the dialog is cancelled', async () => {
     expect(await fakes([null]).handlers.table['plan:open'](null)).toBeNull()
+  })
+
+  it('gives out the files that the system named, one at a time, then none', async () => {
+    const { handlers, disk } = fakes([], { [PLAN]: '{}' }, [PLAN, '/plans/gone.json'])
+    const opened = await handlers.table['plan:given'](null)
+    expect(opened).toEqual({ token: 'token-1', name: 'ring one.ringwright.json', text: '{}' })
+    await expect(handlers.table['plan:given'](null)).rejects.toThrow('“gone.json” could not be opened because')
+    expect(await handlers.table['plan:given'](null)).toBeNull()
+    await handlers.table['plan:save']({ token: 'token-1', name: '', text: 'changed' })
+    expect(disk[PLAN]).toBe('changed')
   })
 
   it('says why a file cannot be opened', async () => {

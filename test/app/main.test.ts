@@ -36,6 +36,10 @@ vi.mock('electron', async () => {
     readonly setRepresentedFilename = fake.keep('setRepresentedFilename')
     readonly show = fake.keep('show')
     readonly close = fake.keep('close')
+    readonly focus = fake.keep('focus')
+    isMinimized(): boolean {
+      return false
+    }
     constructor(options: unknown) {
       super()
       fake.keep('BrowserWindow')(options)
@@ -202,6 +206,25 @@ describe('the desktop main', () => {
     expect(close()).toBe(true)
     await request('window:document', { title: 'Ring', edited: false, undo: null, redo: null })
     expect(close()).toBe(false)
+  })
+
+  it('takes files of a second start and of macOS, tells the page without their paths, and opens each once', async () => {
+    const { app } = await import('electron')
+    const { sent } = theWindow().webContents
+    sent.length = 0
+    app.emit('second-instance', {}, ['ringwright', '--flag', 'gone one.json'], '/nowhere')
+    expect(sent).toEqual([['ringwright:given']])
+    expect(fake.order.at(-1)).toBe('focus')
+    const event = preventable()
+    app.emit('open-file', event, '/nowhere/gone two.json')
+    expect(event.prevented).toBe(true)
+    const messages = [await request('plan:given', null), await request('plan:given', null)].map((answer) =>
+      JSON.stringify(answer),
+    )
+    expect(messages[0]).toContain('“gone one.json” could not be opened')
+    expect(messages[1]).toContain('“gone two.json” could not be opened')
+    expect(messages.join()).not.toContain('/nowhere')
+    expect(await request('plan:given', null)).toEqual({ ok: true, value: null })
   })
 
   it('forgets its wires when the window is gone', () => {

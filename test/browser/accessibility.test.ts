@@ -35,7 +35,7 @@ describeInChromium('the window', () => {
     'has none in its dialogs, a refused field and an open “why?” in %s',
     async (colorScheme) => {
       const { page, context } = await openBrowserFace(browser, face.address, { colorScheme })
-      for (const name of [/^Examples/, /^Export/, /^Units/, /^Keys/]) {
+      for (const name of [/^Examples/, /^Export/, /^Units/, /^Keys/, /^About/]) {
         await page.getByRole('button', { name }).first().click()
         await page.locator('dialog[open]').waitFor()
         expect(await violations(page), String(name)).toEqual([])

@@ -1,10 +1,15 @@
+import { spawn } from 'node:child_process'
+import { once } from 'node:events'
 import { mkdtemp, mkdir, rm, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
+import { createInterface } from 'node:readline'
+import { pathToFileURL } from 'node:url'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { electronExecutable } from '../../build/scripts/electronRuntime.mjs'
 import { obstacleSentence, obstacleToWindow, openCommand } from '../../build/scripts/face.mjs'
 import { matchesLock } from '../../build/scripts/install.mjs'
+import { inProject } from '../../build/scripts/root.mjs'
 import { readStartArguments, USUAL_PORT } from '../../build/scripts/startArguments.mjs'
 
 describe('the command line of npm start', () => {
@@ -107,3 +112,73 @@ describe('whether the installed packages are those of the lock', () => {
     expect(matchesLock(wanted, installed)).toBe(matches)
   })
 })
+
+// npm on Windows is a command file that no signal reaches.
+describe.skipIf(process.platform === 'win32')('a program that npm started', () => {
+  let folder = ''
+  beforeAll(async () => {
+    folder = await mkdtemp(path.join(tmpdir(), 'ringwright-npm-'))
+    const parent = pathToFileURL(inProject('build', 'scripts', 'parent.mjs')).href
+    // As the server does: it runs until it is told to end, and tells its number first.
+    const program = `
+      import { endWithParent } from ${JSON.stringify(parent)}
+      endWithParent()
+      for (const signal of ['SIGINT', 'SIGTERM']) process.once(signal, () => process.exit(0))
+      setInterval(() => {}, 1000)
+      console.log('pid ' + process.pid)`
+    await writeFile(path.join(folder, 'program.mjs'), program)
+    await writeFile(path.join(folder, 'package.json'), JSON.stringify({ scripts: { start: 'node program.mjs' } }))
+  })
+  afterAll(() => rm(folder, { recursive: true, force: true }))
+
+  // A terminal sends Ctrl+C to all of them; npm told alone to end ends its shell and no more.
+  it.each([
+    ['npm alone gets SIGTERM', 'SIGTERM', 1],
+    ['Ctrl+C is pressed', 'SIGINT', -1],
+  ] as const)('ends when %s', async (_when, signal, group) => {
+    const npm = spawn('npm', ['start'], { cwd: folder, detached: true, stdio: ['ignore', 'pipe', 'ignore'] })
+    const pid = await numberTold(npm.stdout)
+    try {
+      expect(runs(pid)).toBe(true)
+      process.kill(group * (npm.pid ?? Number.NaN), signal)
+      await expect.poll(() => runs(pid), { timeout: 5000 }).toBe(false)
+    } finally {
+      if (runs(pid)) process.kill(pid, 'SIGKILL')
+    }
+  })
+
+  it('is left alone when it was started by hand and its starter leaves', async () => {
+    const env = { ...process.env, npm_lifecycle_event: undefined }
+    const shell = spawn('sh', ['-c', 'node program.mjs & wait'], {
+      cwd: folder,
+      env,
+      stdio: ['ignore', 'pipe', 'ignore'],
+    })
+    const pid = await numberTold(shell.stdout)
+    try {
+      shell.kill('SIGTERM')
+      await once(shell, 'exit')
+      // More than two looks for the parent.
+      await new Promise((resolve) => setTimeout(resolve, 800))
+      expect(runs(pid)).toBe(true)
+    } finally {
+      process.kill(pid, 'SIGKILL')
+    }
+  })
+})
+
+async function numberTold(output: NodeJS.ReadableStream): Promise<number> {
+  for await (const line of createInterface({ input: output })) {
+    const found = /^pid (\d+)$/.exec(line)
+    if (found !== null) return Number(found[1])
+  }
+  throw new Error('the program ended before it told its number')
+}
+
+function runs(pid: number): boolean {
+  try {
+    return process.kill(pid, 0)
+  } catch {
+    return false
+  }
+}

@@ -53,9 +53,15 @@ describe('npm run batch', () => {
     await writeFile(path.join(folder, 'plan.json'), JSON.stringify(documentOf()))
     const batch = run('batch.mjs', ['plan.json', '--out', 'results'])
     expect(await batch.ended).toBe(0)
-    expect(batch.out()).toBe(`${path.join('results', 'pulse.csv')}\n${path.join('results', 'summary.json')}\n`)
+    expect(batch.out()).toBe(
+      ['pulse.csv', 'report.html', 'summary.json'].map((name) => `${path.join('results', name)}\n`).join(''),
+    )
     expect(batch.err()).toBe('')
-    expect((await readdir(path.join(folder, 'results'))).toSorted()).toEqual(['pulse.csv', 'summary.json'])
+    expect((await readdir(path.join(folder, 'results'))).toSorted()).toEqual([
+      'pulse.csv',
+      'report.html',
+      'summary.json',
+    ])
   })
 
   it('exits 2 with the reason on standard error', async () => {

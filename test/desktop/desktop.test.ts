@@ -73,6 +73,28 @@ describeInChromium('the desktop window', () => {
     expect(JSON.parse(text)).toMatchObject({ format: 'ringwright-plan', title: 'Fresh plan' })
   })
 
+  it('opens a file that the system gives it, and saves back to it', async () => {
+    const file = path.join(folder, 'given.ringwright.json')
+    await writeFile(file, JSON.stringify(documentOf({ title: 'Given title' })))
+    await desktop.give(file)
+    await waitForShown('Given title', false)
+    await rename('Changed title')
+    await waitForShown('Changed title', true)
+    await desktop.command('file.save')
+    await waitForShown('Changed title', false)
+    expect(JSON.parse(await readFile(file, 'utf8'))).toMatchObject({ title: 'Changed title' })
+  })
+
+  it('tells its version and the terms of everything it holds', async () => {
+    await desktop.command('help.about')
+    const dialog = desktop.page.getByRole('dialog', { name: 'About Ringwright' })
+    await dialog.getByText(/^Version \d+\.\d+\.\d+$/).waitFor({ timeout: 20_000 })
+    await dialog.getByText(/^three 0\./).click()
+    await dialog.getByText(/three\.js authors/i).waitFor()
+    await dialog.getByText('LICENSES.chromium.html').waitFor()
+    expect(desktop.errors).toEqual([])
+  })
+
   it('shows a sentence when a file cannot be opened', async () => {
     desktop.dialogAnswers.push(path.join(folder, 'gone.json'))
     await desktop.command('file.open')
@@ -104,7 +126,7 @@ describeInChromium('the desktop window', () => {
     expect(desktop.errors.join('\n')).toMatch(/Content Security Policy/)
   })
 
-  it('gives the page one bridge with three verbs, and refuses channels the contract does not have', async () => {
+  it('gives the page one bridge with four verbs, and refuses channels the contract does not have', async () => {
     const seen = await desktop.page.evaluate(async () => {
       const bridge: unknown = Reflect.get(globalThis, 'bridge')
       if (typeof bridge !== 'object' || bridge === null) return null
@@ -119,7 +141,7 @@ describeInChromium('the desktop window', () => {
     })
     const refused = { ok: false, error: { code: 'channel', message: expect.any(String) } }
     expect(seen).toEqual({
-      verbs: ['request', 'openDropped', 'onCommand'],
+      verbs: ['request', 'openDropped', 'onCommand', 'onGiven'],
       unknown: refused,
       dropped: refused,
       node: [],

@@ -11,8 +11,9 @@ import { dispatch, dispatchDropped } from '../../app/dispatch'
 import { createSaver } from '../../app/files/atomicSave'
 import { createPathTokens } from '../../app/files/pathTokens'
 import { readText } from '../../app/files/readText'
+import { createGivenFiles } from '../../app/givenFiles'
 import { createHandlers } from '../../app/handlers'
-import { COMMAND_WIRE, DROPPED_WIRE, REQUEST_WIRE } from '../../app/ipc'
+import { COMMAND_WIRE, DROPPED_WIRE, GIVEN_WIRE, REQUEST_WIRE } from '../../app/ipc'
 import { inProject } from '../../build/scripts/root.mjs'
 
 const ORIGIN = 'https://app.test'
@@ -28,6 +29,8 @@ export interface DesktopPage {
   readonly strayRequests: string[]
   /** What the page wrote to the console as an error, and what it threw. */
   readonly errors: string[]
+  /** The system gives the program a file to open. */
+  give(file: string): Promise<void>
   /** Choose a command in the menu. */
   command(id: CommandId): Promise<void>
 }
@@ -56,12 +59,14 @@ export async function openDesktopPage(browser: Browser): Promise<DesktopPage> {
   const shown: Requests['window:document']['in'][] = []
   const strayRequests: string[] = []
   const errors: string[] = []
+  const given = createGivenFiles(() => undefined)
   const answerDialog = async () => dialogAnswers.shift() ?? null
 
   const handlers = createHandlers({
     dialogs: { open: answerDialog, save: answerDialog },
     files: { readText, save: createSaver(files, { durable: true, syncFolder: true, unique: randomUUID }) },
     tokens: createPathTokens(randomUUID),
+    given,
     shell: {
       showDocument: (state) => shown.push(state),
       setTheme: () => undefined,
@@ -111,6 +116,10 @@ export async function openDesktopPage(browser: Browser): Promise<DesktopPage> {
     shown,
     strayRequests,
     errors,
+    give: async (file) => {
+      given.give([file], '/')
+      await page.evaluate((wire) => Reflect.get(globalThis, '__menu')(wire), GIVEN_WIRE)
+    },
     command: (id) =>
       page.evaluate(([wire, command]) => Reflect.get(globalThis, '__menu')(wire, command), [COMMAND_WIRE, id]),
   }

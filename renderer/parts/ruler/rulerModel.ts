@@ -2,7 +2,7 @@
  * What the ruler shows of a plan and its results: estimates as ticks, the band, the outline. Pure.
  */
 import type { JetEnsemble } from '../../../core/coaxial'
-import { formatQuantity } from '../../../core/quantity'
+import { formatFixed, formatQuantity } from '../../../core/quantity'
 import type { Plan } from '../../../core/plan'
 import type { FormationNumbers, PulseResult } from '../../../core/pulse'
 import { outlinePoints } from './scale'
@@ -56,7 +56,7 @@ export function rulerModel(plan: Plan, pulse: PulseResult | null, formation: Jet
     if (value === null) return []
     const adopted = plan.models.formationNumber === id
     if (id === 'computed') return [{ ...computedEstimate(value, formation), adopted }]
-    return [{ id, value, low: null, high: null, text: `${name} ${value.toFixed(2)}`, adopted }]
+    return [{ id, value, low: null, high: null, text: `${name} ${formatFixed(value)}`, adopted }]
   })
   return {
     strokeRatio,
@@ -87,5 +87,5 @@ function absenceOf(formationNumber: FormationNumbers): string {
 
 /** The stroke in words, for the handle: `stroke ratio 3.20, stroke 96 mm`. */
 export function strokeInWords(plan: Plan, lengthUnit: string): string {
-  return `stroke ratio ${planStrokeRatio(plan).toFixed(2)}, stroke ${formatQuantity(plan.programme.stroke, lengthUnit)}`
+  return `stroke ratio ${formatFixed(planStrokeRatio(plan))}, stroke ${formatQuantity(plan.programme.stroke, lengthUnit)}`
 }

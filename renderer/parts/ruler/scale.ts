@@ -2,6 +2,7 @@
  * The ruler's scale: how far the axis goes, its ticks, and the way between formation time and pixels. Pure.
  */
 import { at } from '../../../core/base'
+import { formatNumber } from '../../../core/quantity'
 
 /** Shortest axis shown: below it a plan near pinch-off would have no room on either side. */
 const SHORTEST_AXIS = 5
@@ -48,7 +49,7 @@ export function axisTicks(end: number, width: number, spacing = 44): readonly Ax
 
 /** Text of a major tick, without the noise of binary fractions. */
 export function tickText(value: number): string {
-  return String(Number(value.toPrecision(6)))
+  return formatNumber(value, 6)
 }
 
 /** Outline of exit speed against formation time as polygon points; height 1 at the fastest. */

@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { readBatchArguments } from '../../../app/batch/arguments'
 
-const WHOLE = { part: null, merge: null }
+const WHOLE = { part: null, merge: null, data: null }
 /** A request that asks for nothing beyond plan and folder. */
 const PLAIN = { plan: 'a.json', out: 'o', only: null, ...WHOLE }
 
@@ -21,6 +21,7 @@ describe('the runner’s command line', () => {
       ['a.json', '--out', 'o', '--part=1/1', '--only', 'sweep'],
       { ...PLAIN, only: ['sweep'], part: { index: 1, of: 1 } },
     ],
+    [['a.json', '--out', 'o', '--data', 'day 3'], { ...PLAIN, data: 'day 3' }],
     [['a.json', '--out', 'o', '--merge', 'p', 'q', 'r'], { ...PLAIN, merge: ['p', 'q', 'r'] }],
     [['a.json', '--merge', 'p', 'q', '--out', 'o'], { ...PLAIN, merge: ['p', 'q'] }],
     [['--merge=p', 'q', '--out', 'o', 'a.json'], { ...PLAIN, merge: ['p', 'q'] }],

@@ -2,6 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import {
   DIMENSIONS,
+  formatFixed,
   formatFull,
   formatNumber,
   formatQuantity,
@@ -129,5 +130,32 @@ describe('formatRange', () => {
   it('shows three digits unless told otherwise, and shows ends that look the same once', () => {
     expect(formatRange(0.0929, 0.1124, 'mm').text).toBe('93 to 112')
     expect(formatRange(0.1121, 0.1124, 'mm').text).toBe('112')
+  })
+})
+
+describe('formatFixed', () => {
+  it.each([
+    [3.2, 2, '3.20'],
+    [0, 2, '0.00'],
+    [-1.005, 1, '\u22121.0'],
+    [999.994, 2, '999.99'],
+    [0.005, 2, '0.01'],
+    [1234.5678, 2, '1235'],
+    [1e7, 2, '1×10⁷'],
+    [-1.41e10, 3, '\u22121.41×10¹⁰'],
+    [0.0012345, 2, '0.001234'],
+    [1e-10, 2, '1×10⁻¹⁰'],
+    [Number.NaN, 2, '—'],
+  ])('%d with %i decimals is %s', (value, decimals, text) => {
+    expect(formatFixed(value, decimals)).toBe(text)
+  })
+
+  it('is never longer than a column has room for', () => {
+    fc.assert(
+      fc.property(fc.double({ noNaN: true, noDefaultInfinity: true }), (value) => {
+        // Sign, four digits with a point, ×10, and a power of three digits with its sign.
+        expect(formatFixed(value).length).toBeLessThanOrEqual(1 + 5 + 3 + 4)
+      }),
+    )
   })
 })

@@ -192,3 +192,27 @@ describe('the browser window', () => {
     expect(host.onCommand(() => undefined)()).toBeUndefined()
   })
 })
+
+describe('choosing several tables', () => {
+  it('gives names and sizes at once and the bytes of each when it is read', async () => {
+    const asked = createBrowserHost(pageWith()).chooseTables()
+    const input = document.querySelector<HTMLInputElement>('input[type=file]')
+    expect(input?.multiple).toBe(true)
+    const files = [new File(['time,x'], 'a.csv'), new File(['1,2,3'], 'b.csv')]
+    if (input !== null) Object.defineProperty(input, 'files', { value: files })
+    input?.dispatchEvent(new Event('change'))
+    const chosen = await asked
+    expect(chosen.map(({ name, size }) => [name, size])).toEqual([
+      ['a.csv', 6],
+      ['b.csv', 5],
+    ])
+    const bytes = await chosen[1]?.read()
+    expect(bytes instanceof ArrayBuffer ? new TextDecoder().decode(bytes) : bytes).toBe('1,2,3')
+  })
+
+  it('gives none when the dialog is closed without a choice', async () => {
+    const asked = createBrowserHost(pageWith()).chooseTables()
+    answerFileDialog(null)
+    expect(await asked).toEqual([])
+  })
+})

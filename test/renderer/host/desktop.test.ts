@@ -12,6 +12,7 @@ interface Sent {
 function fakeBridge(answer: unknown) {
   const sent: Sent[] = []
   const listeners: ((command: CommandId) => void)[] = []
+  const given: (() => void)[] = []
   const reply = async (channel: string, input: unknown): Promise<unknown> => {
     sent.push({ channel, input })
     if (answer instanceof Error) throw answer
@@ -24,10 +25,14 @@ function fakeBridge(answer: unknown) {
       listeners.push(listener)
       return () => listeners.splice(listeners.indexOf(listener), 1)
     },
+    onGiven: (listener: () => void) => {
+      given.push(listener)
+      return () => given.splice(given.indexOf(listener), 1)
+    },
   }
   const bridge = findBridge({ bridge: candidate })
   if (bridge === null) throw new Error('the fake is not a bridge')
-  return { bridge, sent, listeners }
+  return { bridge, sent, listeners, given }
 }
 
 describe('finding the bridge', () => {
@@ -35,8 +40,8 @@ describe('finding the bridge', () => {
     ['no bridge', {}],
     ['null', { bridge: null }],
     ['a text', { bridge: 'bridge' }],
-    ['a verb missing', { bridge: { request: () => 0, openDropped: () => 0 } }],
-    ['a verb that is none', { bridge: { request: 1, openDropped: () => 0, onCommand: () => 0 } }],
+    ['a verb missing', { bridge: { request: () => 0, openDropped: () => 0, onCommand: () => 0 } }],
+    ['a verb that is none', { bridge: { request: 1, openDropped: () => 0, onCommand: () => 0, onGiven: () => 0 } }],
   ])('takes %s for a browser', (_what, page) => {
     expect(findBridge(page)).toBeNull()
   })
@@ -104,5 +109,18 @@ describe('the desktop host', () => {
     stop()
     listeners.forEach((listener) => listener('file.open'))
     expect(heard).toEqual(['file.save'])
+  })
+
+  it('asks for files the system gave, and hears when one comes, until unsubscribed', async () => {
+    const { bridge, sent, given } = fakeBridge({ ok: true, value: null })
+    const host = createDesktopHost(bridge)
+    expect(await host.givenPlan()).toBeNull()
+    expect(sent).toEqual([{ channel: 'plan:given', input: null }])
+    let heard = 0
+    const stop = host.onGiven(() => (heard += 1))
+    given.forEach((listener) => listener())
+    stop()
+    given.forEach((listener) => listener())
+    expect(heard).toBe(1)
   })
 })

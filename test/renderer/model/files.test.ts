@@ -43,6 +43,39 @@ describe('files', () => {
     expect(document.edited.value).toBe(false)
   })
 
+  it('opens what the system gave, one file after another, and asks about unsaved changes before each', async () => {
+    const host = fakeHost()
+    const given = ['sharp-orifice', 'inspection-thruster'].map((id) => ({
+      token: id,
+      name: `${id}.ringwright.json`,
+      text: writePlan(examplePlan(id)),
+    }))
+    host.givenPlan = async () => given.shift() ?? null
+    const { document, files, leaving } = makeWorkspace(undefined, host)
+    document.change('stroke', setStrokeRatio(document.content.value, 3))
+    const first = files.openGiven()
+    const second = files.openGiven()
+    await settle()
+    expect(given).toHaveLength(1)
+    leaving.value?.answer('discard')
+    await Promise.all([first, second])
+    expect(given).toEqual([])
+    expect(document.file.value?.token).toBe('inspection-thruster')
+  })
+
+  it('tells why a given file cannot be opened, and does not ask for ever where nobody answers', async () => {
+    const host = fakeHost()
+    let asked = 0
+    host.givenPlan = async () => {
+      asked += 1
+      return { failure: 'Nobody answers.' }
+    }
+    const { files, notices } = makeWorkspace(undefined, host)
+    await files.openGiven()
+    expect(asked).toBe(1)
+    expect(notices.list.value.at(-1)).toMatchObject({ kind: 'failure', text: 'Nobody answers.' })
+  })
+
   it('refuses what is no plan in a sentence and keeps what is open', async () => {
     const host = fakeHost()
     host.opened = { token: null, name: 'notes.json', text: '{"format":"something"}' }
@@ -105,10 +138,32 @@ describe('files', () => {
     expect(notices.list.value.at(-1)?.text).toMatch(/^run\.csv was not read: .*2/u)
   })
 
+  it('turns to the page an example is about, and stays where it is when the example is not opened', async () => {
+    const { files, page, jetView, document, leaving } = makeWorkspace()
+    const at = async (id: string) => {
+      await files.openExample(id)
+      return page.value
+    }
+    expect(await at('catch-up')).toBe('wake')
+    expect(await at('survey-vehicle')).toBe('thrust')
+    expect(await at('tank-day')).toBe('tankRun')
+    expect(await at('form-and-pinch-off')).toBe('stroke')
+    expect(jetView.showing.value).toBe(true)
+    expect(await at('sharp-orifice')).toBe('stroke')
+    expect(jetView.showing.value).toBe(false)
+    document.change('stroke', setStrokeRatio(document.content.value, 3))
+    const kept = files.openExample('catch-up')
+    await settle()
+    leaving.value?.answer('cancel')
+    await kept
+    expect(page.value).toBe('stroke')
+  })
+
   it('reads a dropped table as one and a dropped plan as another', async () => {
-    const { document, files } = makeWorkspace()
+    const { document, files, notices } = makeWorkspace()
     await files.openDropped(new File(['0,0\n0.5,0.2\n1,0\n'], 'run.csv'))
     expect(document.content.value.programme.shape).toBe('table')
+    expect(notices.list.value.at(-1)?.text).toMatch(/^Read 3 rows from run\.csv into the speed programme\. /u)
     const { document: other, files: otherFiles } = makeWorkspace()
     await otherFiles.openDropped(new File([writePlan(examplePlan('sharp-orifice'))], 'orifice.ringwright.json'))
     expect(other.content.value.nozzle.shape).toBe('orifice')

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { effectScope, nextTick, shallowRef } from 'vue'
-import { createPlayback, nearestOutput, outputAt, usualSpeed } from '../../../renderer/model/playback'
+import { createPlayback, nearestOutput, outputAt, outputShare, usualSpeed } from '../../../renderer/model/playback'
 
 /** Frames the test hands in. */
 function heldFrames() {
@@ -123,5 +123,17 @@ describe('the times of a playback', () => {
   it('is real where that can be watched, else a round multiple', () => {
     expect([3, 10, 60, 0].map(usualSpeed)).toEqual([1, 1, 1, 1])
     expect([2.5, 0.02, 120, 5000].map(usualSpeed)).toEqual([0.2, 0.002, 10, 500])
+  })
+})
+
+describe('the place of a time on a slider over outputs', () => {
+  it('is that of the output at each output, also after a last step that is shorter, and between two in between', () => {
+    const times = [0, 0.1, 0.2, 0.25]
+    expect(times.map((time) => outputShare(times, time))).toEqual([0, 1 / 3, 2 / 3, 1])
+    expect(outputShare(times, 0.15)).toBeCloseTo(0.5, 12)
+    expect(outputShare(times, 0.225)).toBeCloseTo(5 / 6, 12)
+    expect([outputShare(times, -1), outputShare(times, 9), outputShare([0], 0), outputShare([], 1)]).toEqual([
+      0, 1, 0, 0,
+    ])
   })
 })

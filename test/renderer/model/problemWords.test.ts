@@ -34,4 +34,20 @@ describe('problemInWords', () => {
     expect(problems.length).toBeGreaterThan(0)
     for (const problem of problems) expect(problemInWords(problem.message)).not.toMatch(/\w\.\w/u)
   })
+
+  it('names duty points, rows of drag and ranges of a search, and cuts numbers nobody reads', () => {
+    expect(problemInWords('thruster.target.1.speed must be above 0 m/s, got 0 m/s')).toBe(
+      'Speed wanted of duty point 2 must be above 0 m/s, got 0 m/s',
+    )
+    expect(problemInWords('thruster.vehicle.drag.rows.2.drag must be at least 0 N')).toBe(
+      'Drag of row 3 of the drag table must be at least 0 N',
+    )
+    expect(problemInWords('thruster.search.diameter must run from low to high')).toBe(
+      'The range of exit diameters must run from low to high',
+    )
+    expect(problemInWords("train.period must be above the stroke's 0.19634954084936207 s")).toBe(
+      "Period must be above the stroke's 0.19635 s",
+    )
+    expect(problemInWords('thruster.actuator.ejectShare must be at most 0.99')).toBe('Eject share must be at most 0.99')
+  })
 })

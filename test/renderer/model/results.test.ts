@@ -44,6 +44,11 @@ const done: RunResult = {
     pulse: null,
     jet: null,
     wake: null,
+    thruster: null,
+    tankRun: null,
+    readings: null,
+    sweep: null,
+    spread: null,
     cautions: [],
   },
 }

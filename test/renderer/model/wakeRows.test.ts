@@ -3,14 +3,7 @@ import { at } from '../../../core/base'
 import { defaultPlan, setChoice, setField, setTrain, setWake, type Plan } from '../../../core/plan'
 import { run, type WakeData } from '../../../core/run'
 import { catchInWords } from '../../../renderer/model/wakeCatch'
-import {
-  arrivalRows,
-  clockText,
-  eventRows,
-  ringFigures,
-  runFacts,
-  secondsRounded,
-} from '../../../renderer/model/wakeRows'
+import { arrivalRows, clockText, eventRows, ringFigures, runFacts } from '../../../renderer/model/wakeRows'
 import { shownUnits } from '../../../renderer/model/units'
 
 const UNITS = shownUnits({})
@@ -55,6 +48,16 @@ describe('rows of a wake', () => {
     const arrival = rows.find(({ what }) => / arrives$/.test(what))
     expect(plain(arrival?.detail ?? '')).toBe('station 50 mm')
     expect(rows.at(-1)?.what).toBe('End of the run')
+    expect(rows.some(({ beyond }) => beyond)).toBe(false)
+  })
+
+  it('mark events after the time up to which the model holds', () => {
+    const validUntil = at(pair.wake.events, 1).time
+    const rows = eventRows({ ...pair.wake, validUntil }, UNITS)
+    expect(rows.map(({ beyond }) => beyond)).toEqual(rows.map(({ time }) => time > validUntil))
+    expect(rows.filter(({ beyond }) => beyond).length).toBeGreaterThan(0)
+    expect(at(rows, 1).beyond).toBe(false)
+    for (const { beyond, detail } of rows) expect(detail.startsWith('after “holds until”')).toBe(beyond)
   })
 
   it('give the picked ring’s own numbers at the time shown', () => {
@@ -148,11 +151,8 @@ describe('words of times', () => {
   it('a running clock has the decimals of its step', () => {
     expect(plain(clockText(0.5, 0.05, 's'))).toBe('0.50 s')
     expect(plain(clockText(12, 1, 's'))).toBe('12 s')
+    expect(plain(clockText(1.5e7, 1e5, 's'))).toBe('1.5×10⁷ s')
+    expect(plain(clockText(2.5e-9, 1e-10, 's'))).toBe('2.5×10⁻⁹ s')
     expect(plain(clockText(0.0125, 0.0005, 'ms'))).toBe('12.5 ms')
-  })
-
-  it('rounds the long times in sentences of the core', () => {
-    expect(secondsRounded('Ended at t = 6.910123456 s: over.')).toBe('Ended at t = 6.91 s: over.')
-    expect(secondsRounded('Done: 2.5 s.')).toBe('Done: 2.5 s.')
   })
 })

@@ -45,6 +45,8 @@ export function fakeHost(): FakeHost {
     showDocument: () => undefined,
     setTheme: () => undefined,
     onCommand: () => () => undefined,
+    givenPlan: async () => null,
+    onGiven: () => () => undefined,
   }
   return host
 }
@@ -54,8 +56,8 @@ function directClient(): WorkerClient {
   const jetCache = createJetCache()
   const fieldSteps = createFieldSteps()
   return {
-    run: (plan, sections, _onProgress, jet = 'run') => ({
-      outcome: run(plan, { sections, jet, sizing: jet === 'cached' ? 'off' : 'run' }, { jetCache }).then((result) => ({
+    run: (plan, sections, _onProgress, jet = 'run', fields = null) => ({
+      outcome: run(plan, { sections, jet, sizing: jet === 'cached' ? 'off' : 'run', fields }, { jetCache }).then((result) => ({
         kind: 'result',
         result,
       })),

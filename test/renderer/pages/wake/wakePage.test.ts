@@ -105,6 +105,22 @@ describe('the Wake page', () => {
     expect(wrapper.text()).toContain('Results are for the previous plan.')
   })
 
+  it('says that results are without the entries not taken, in fields and in the table of rings', async () => {
+    const { wrapper, workspace, button } = await pageOf()
+    const standing = () => wrapper.get('.run-line [role=status]').text()
+    expect(standing()).toBe('Results are for this plan.')
+    const tolerance = wrapper.get('[data-path="wake.tolerance"] input')
+    await tolerance.setValue('tight')
+    await tolerance.trigger('keydown', { key: 'Enter' })
+    expect(standing()).toBe('Results are for the accepted plan, 1 entry not taken.')
+    await button('Rings (2)').trigger('click')
+    await wrapper.get('[data-cell="0 2"]').trigger('dblclick')
+    await wrapper.get('[data-cell="0 2"] input').setValue('12 mL')
+    await wrapper.get('[data-cell="0 2"] input').trigger('keydown', { key: 'Enter' })
+    expect(standing()).toBe('Results are for the accepted plan, 2 entries not taken.')
+    expect(workspace.untaken.count.value).toBe(2)
+  })
+
   it('changes walls and stations as named steps', async () => {
     const { wrapper, workspace, button } = await pageOf()
     const wallChoice = wrapper.findAll('.field').find((field) => field.text().startsWith('Wall'))
@@ -128,10 +144,10 @@ describe('the Wake page', () => {
     await button('Read a file…').trigger('click')
     await flushPromises()
     expect(wrapper.get('dialog').text()).toContain('1 ring read from rings.csv; 1 of 2 rows skipped:')
-    expect(wrapper.get('dialog').text()).toContain('Line 3: radius must be above 0 m')
+    expect(wrapper.get('dialog').text()).toContain('Line 3: radius must be above 0\u00A0mm, got 0\u00A0mm.')
     await button('Replace all rings').trigger('click')
     expect(workspace.document.content.value.wake?.rings.map(({ radius }) => radius)).toEqual([0.015])
-    expect(workspace.document.undoName.value).toBe('rings pasted')
+    expect(workspace.document.undoName.value).toBe('rings read')
   })
 
   it('shows duty cycle and spacing of a train, and its nozzles', async () => {

@@ -55,6 +55,31 @@ describe('FormationRuler', () => {
     expect(ratio()).toBeCloseTo(10, 10)
   })
 
+  it('keeps numbers far outside any use short, in figure, words and ticks', async () => {
+    const far = setField(setField(defaultPlan(), 'nozzle.diameter', 1e-4), 'programme.stroke', 1000)
+    const { wrapper, handle } = await ruler(makeWorkspace(far))
+    expect(wrapper.get<HTMLInputElement>('.readout input').element.value).toBe('1×10⁷')
+    expect(handle.attributes('aria-valuetext')).toBe('stroke ratio 1×10⁷, stroke 1×10⁶\u00A0mm')
+    const ticks = wrapper.findAll('.tick text').map((text) => text.text())
+    expect(ticks).toContain('1×10⁷')
+    for (const text of ticks) expect(text.length).toBeLessThanOrEqual(8)
+    const short = setField(setField(defaultPlan(), 'nozzle.diameter', 10), 'programme.stroke', 1e-9)
+    const other = await ruler(makeWorkspace(short))
+    expect(other.wrapper.get<HTMLInputElement>('.readout input').element.value).toBe('1×10⁻¹⁰')
+  })
+
+  it('takes a ratio with the D it counts', async () => {
+    const { wrapper, ratio } = await ruler()
+    const input = wrapper.get('.readout input')
+    await input.setValue('3.2 D')
+    await input.trigger('keydown', { key: 'Enter' })
+    expect(ratio()).toBeCloseTo(3.2, 12)
+    await input.setValue('3.2 d')
+    await input.trigger('keydown', { key: 'Enter' })
+    expect(ratio()).toBeCloseTo(3.2, 12)
+    expect(wrapper.get('.readout .refusal').text()).toBe('Stroke ratio in exit diameters has a capital D: 3.2 D.')
+  })
+
   it('takes a typed ratio and refuses one that is no stroke', async () => {
     const { wrapper, ratio } = await ruler()
     const input = wrapper.get('.readout input')
