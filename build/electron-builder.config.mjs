@@ -26,7 +26,7 @@ export const FUSES = /** @type {const} */ ({
   runAsNode: false,
   enableNodeOptionsEnvironmentVariable: false,
   enableNodeCliInspectArguments: false,
-  enableCookieEncryption: true,
+  enableCookieEncryption: false,
   enableEmbeddedAsarIntegrityValidation: true,
   onlyLoadAppFromAsar: true,
   loadBrowserProcessSpecificV8Snapshot: false,

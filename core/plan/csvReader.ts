@@ -86,7 +86,8 @@ export function walkTextTable(
   if (zeros > TWO_BYTES_SHARE * source.length)
     return {
       ok: false,
-      message: 'A table must be UTF-8 text; this one has two bytes a character (UTF-16): save it as UTF-8.',
+      message:
+        'A table must be UTF-8 text; this one has two bytes a character (UTF-16) and no byte-order mark: save it as UTF-8.',
     }
   const text = source.replace(/^\uFEFF/, '').replace(/\r\n?/g, '\n')
   const sniffed: Sniffed = { ...sniffTable(text), ...chosen }

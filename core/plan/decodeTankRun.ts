@@ -173,6 +173,17 @@ function decodeCamera(raw: JsonObject, problems: Problems): CameraInput {
       `at most ${least} pixels`,
       `tankRun.camera.window must be at most the smaller side of a frame, ${least} pixels, got ${window}.`,
     )
+  const refraction = decodeFlag(raw, 'tankRun.camera.refraction', CAMERA.refraction, problems)
+  const standOff = optional(raw, 'tankRun.camera.standOff', problems)
+  const waterPath = optional(raw, 'tankRun.camera.waterPath', problems)
+  if (refraction && standOff === 0 && waterPath === 0)
+    refuse(
+      problems,
+      'tankRun.camera.waterPath',
+      waterPath,
+      'above 0 m where tankRun.camera.standOff is 0 m',
+      'tankRun.camera.waterPath and tankRun.camera.standOff must not both be 0 m: the lens would lie in the light sheet. Give one of them, or leave both empty.',
+    )
   return {
     pixels,
     pixelPitch: optional(raw, 'tankRun.camera.pixelPitch', problems),
@@ -180,12 +191,12 @@ function decodeCamera(raw: JsonObject, problems: Problems): CameraInput {
     window,
     maxFrameRate: optional(raw, 'tankRun.camera.maxFrameRate', problems),
     aperture: optional(raw, 'tankRun.camera.aperture', problems),
-    refraction: decodeFlag(raw, 'tankRun.camera.refraction', CAMERA.refraction, problems),
+    refraction,
     bytesPerPixel: decodeNumber(raw, 'tankRun.camera.bytesPerPixel', CAMERA.bytesPerPixel, problems),
     wavelength: decodeNumber(raw, 'tankRun.camera.wavelength', CAMERA.wavelength, problems),
     sheetThickness: optional(raw, 'tankRun.camera.sheetThickness', problems),
-    standOff: optional(raw, 'tankRun.camera.standOff', problems),
-    waterPath: optional(raw, 'tankRun.camera.waterPath', problems),
+    standOff,
+    waterPath,
     windowThickness: optional(raw, 'tankRun.camera.windowThickness', problems),
     pairs: optional(raw, 'tankRun.camera.pairs', problems),
   }

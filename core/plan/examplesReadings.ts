@@ -78,7 +78,7 @@ function decimal(value: number): number {
 export const READINGS_EXAMPLES: readonly Example[] = [
   example(
     'tank-day-measured',
-    'The evening after a day at the tank, invented: tracks of three runs and a force log against the plan.',
+    'After a day at the tank, invented: tracks of three runs and a force log against the plan.',
     {
       title: 'A day at the tank, measured',
       notes: 'Invented: three runs of one stroke from a 25 mm tube, and the thrust of four pulses on a stand.',

@@ -1,4 +1,5 @@
 /** Numbers and choices of the sections `tankRun` and `spread`; see fields.ts for what the limits mean. */
+import { MOST_RUNS } from '../tank'
 import type { FieldDefinition } from './fieldTypes'
 import { LARGEST_SEED } from './fieldsThruster'
 
@@ -237,7 +238,7 @@ export const TANK_RUN_FIELDS = {
     label: 'Rows of the matrix',
     dimension: 'number',
     min: 1,
-    max: 10000,
+    max: MOST_RUNS,
     whole: true,
     optional: true,
     help: 'Rows of a latin hypercube; empty: as many as the longest list of levels.',

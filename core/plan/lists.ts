@@ -135,7 +135,7 @@ export function sampleLists(): PartsLists {
     ['actuators', 'bench-thruster', 'Bench drive, 40 N'],
     ['vehicles', 'survey-vehicle', 'Survey hull, 1.6 m'],
     ['tanks', 'tank-day', 'Glass tank, 1.2 m'],
-    ['cameras', 'tank-day', 'Two megapixels, 200 frames a second'],
+    ['cameras', 'tank-day', 'Thirteen megapixels, 100 frames a second'],
   ]
   return samples.reduce((lists, [kind, example, name]) => {
     const entry = takeFromPlan(examplePlan(example), kind, name)

@@ -88,7 +88,7 @@ function digits(value: number): number {
 
 export const MEASURED_EXAMPLE: Example = example(
   'measured-pulse',
-  'A measured pulse from a rigid tube (open data, MIT licence) beside the prediction, with what it can and cannot show.',
+  'A measured pulse from a rigid tube (open data, MIT licence) beside the prediction.',
   {
     title: 'One measured pulse',
     notes: `Measured, not invented. Data: ${MEASURED_PULSE.source}. Paper: ${MEASURED_PULSE.paper}. ${MEASURED_PULSE.licence[0]}, ${MEASURED_PULSE.licence[1]}. Density and viscosity are assumed: the temperature is not given.`,

@@ -1,5 +1,5 @@
 /**
- * Cautions about a sizing: candidates that only just hold their limits, and a search that found none or was cut short.
+ * Cautions about a sizing: candidates that only just hold their limits, and a search that found none, was cut short or has nothing to aim at.
  */
 import type { CautionContext, CautionDefinition } from './cautionTypes'
 
@@ -19,5 +19,16 @@ export const SIZING_CAUTIONS: readonly CautionDefinition[] = [
   caution('sizing-nothing-fits', 'limits given in the plan', ({ nearest, message }) =>
     nearest === null ? null : message,
   ),
+  {
+    id: 'sizing-no-target',
+    group: 'model',
+    source: 'how the search is asked for',
+    text: ({ plan, thruster }) => {
+      const section = plan.thruster
+      if (thruster === null || section === null || section.search === null) return null
+      if (section.search.goal !== 'power' || section.target.length > 0) return null
+      return 'The search makes no sizing: least power is asked for without anything to reach. Give a duty point, a thrust or a speed to hold with its share of the time, or search for most thrust.'
+    },
+  },
   caution('sizing-incomplete', 'how results are kept', ({ status, message }) => (status === 'done' ? null : message)),
 ]

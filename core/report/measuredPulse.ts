@@ -25,7 +25,7 @@ export function measuredPulseRows(
     {
       label: 'Energy of the field',
       unit: units.energy,
-      measured: `${show(value, units.energy)} ± ${formatNumber(fromBase(scatter, units.energy), 2)}`,
+      measured: `${show(value, units.energy)}\u00A0±\u00A0${formatNumber(fromBase(scatter, units.energy), 2)}`,
       slug: show(pulse.slug.energy, units.energy),
       quickStart: show(pulse.slug.energy + pulse.overPressure.energy, units.energy),
     },

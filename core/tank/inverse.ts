@@ -53,28 +53,45 @@ const FASTEST = 100
 /** What counts as the target met. */
 const MET = 1e-7
 const MOST_STROKES = 200
+/** Strokes closer than this, relative, are one. */
+const ROUNDING = 1e-9
 
 /** @throws {DomainError} on tankRun.target… and what pulse and drive refuse; solutions that cannot be are rows with a reason */
 export async function solutionsFor(input: InverseInput, options: TankOptions = {}): Promise<readonly Solution[]> {
   requireTarget(input.target)
   const { diameter } = input.pulse.nozzle
   const own = computePulse(input.pulse)
-  const strokes = input.strokes ?? [...STROKE_RATIOS.map((ratio) => ratio * diameter), own.stroke]
+  const strokes =
+    input.strokes === undefined
+      ? usualStrokes(diameter, own.stroke)
+      : input.strokes.map((stroke) => ({ stroke, strokeRatio: stroke / diameter }))
   requireRange('strokes.length', strokes.length, { min: 1, max: MOST_STROKES })
   const kernel = options.kernel ?? (await loadKernel())
-  const rising = [...new Set(strokes)].toSorted((a, b) => a - b)
+  const rising = [...new Map(strokes.map((one) => [one.stroke, one])).values()].toSorted((a, b) => a.stroke - b.stroke)
   const rows: Solution[] = []
   const tubeFor = slowingTubes(input.walls)
   let guess = own.peakSpeed
-  for (const [k, stroke] of rising.entries()) {
+  for (const [k, tried] of rising.entries()) {
     if (options.signal?.aborted === true) break
     await options.pause?.()
-    const found = await allAtStroke({ ...input, tubeFor }, stroke, guess, { ...options, kernel })
+    const found = await allAtStroke({ ...input, tubeFor }, tried, guess, { ...options, kernel })
     guess = found[0]?.peakSpeed ?? guess
     rows.push(...found)
     options.onProgress?.({ share: (k + 1) / rising.length, what: 'strokes for the target' })
   }
   return rows
+}
+
+interface TriedStroke {
+  readonly stroke: number
+  readonly strokeRatio: number
+}
+
+/** The usual ratios as they are given, and the plan's own stroke where it is none of them but for rounding. */
+function usualStrokes(diameter: number, own: number): readonly TriedStroke[] {
+  const usual = STROKE_RATIOS.map((strokeRatio) => ({ stroke: strokeRatio * diameter, strokeRatio }))
+  const known = usual.some(({ stroke }) => Math.abs(stroke - own) <= ROUNDING * own)
+  return known ? usual : [...usual, { stroke: own, strokeRatio: own / diameter }]
 }
 
 function requireTarget(target: TankTarget): void {
@@ -110,14 +127,14 @@ interface Forward {
  */
 async function allAtStroke(
   input: Search,
-  stroke: number,
+  tried: TriedStroke,
   guess: number,
   options: TankOptions & { readonly kernel: Kernel },
 ): Promise<readonly Solution[]> {
-  if (input.target.kind !== 'speed') return [await atStroke(input, null, stroke, guess, options)]
+  if (input.target.kind !== 'speed') return [await atStroke(input, null, tried, guess, options)]
   const laws = input.ageing === 'auto' ? (['laminar', 'turbulent'] as const) : ([input.ageing] as const)
   const found: Solution[] = []
-  for (const law of laws) found.push(await atStroke(input, law, stroke, guess, options))
+  for (const law of laws) found.push(await atStroke(input, law, tried, guess, options))
   const [first] = found
   const met = found.filter(({ peakSpeed }) => peakSpeed !== null)
   if (first === undefined || met.length === 0) return found.slice(0, 1)
@@ -156,12 +173,11 @@ const NOTHING = {
 async function atStroke(
   input: Search,
   law: WakeAgeing | null,
-  stroke: number,
+  { stroke, strokeRatio }: TriedStroke,
   guess: number,
   options: TankOptions & { readonly kernel: Kernel },
 ): Promise<Solution> {
   const { target, pulse } = input
-  const strokeRatio = stroke / pulse.nozzle.diameter
   const base = withStroke(pulse.programme, stroke)
   const planned = computePulse({ ...pulse, programme: base }).peakSpeed
   const programmeAt = (peakSpeed: number): ProgrammeInput =>

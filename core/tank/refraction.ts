@@ -4,7 +4,7 @@
  * The lens is a point; the window is at right angles to its axis. Places are read with the scale that holds on the axis, so what is left is
  * how the scale changes across the field.
  */
-import { bracketedRoot, requireRange } from '../base'
+import { bracketedRoot, DomainError, requireRange } from '../base'
 
 /** Refractive indices at visible light and about 20 C: water 1.333 and sea water 1.34 (recalled, not re-read), window glass 1.52. */
 export const REFRACTIVE_INDEX = { fresh: 1.333, sea: 1.34, glass: 1.52 } as const
@@ -76,7 +76,11 @@ function requireView(view: WindowView): void {
   requireRange('tankRun.camera.standOff', view.standOff, { min: 0, unit: 'm' })
   requireRange('tankRun.camera.windowThickness', view.glassThickness, { min: 0, unit: 'm' })
   requireRange('tankRun.camera.waterPath', view.waterPath, { min: 0, unit: 'm' })
-  if (view.standOff === 0) requireRange('tankRun.camera.waterPath', view.waterPath, { above: 0, unit: 'm' })
+  if (view.standOff === 0 && view.waterPath === 0)
+    throw new DomainError(
+      'tankRun.camera.waterPath',
+      'tankRun.camera.waterPath must be above 0 m where tankRun.camera.standOff is 0 m, got 0 m for both: the lens would lie in the light sheet',
+    )
   requireRange('waterIndex', view.waterIndex, { min: 1 })
   requireRange('glassIndex', view.glassIndex, { min: 1 })
 }

@@ -67,6 +67,8 @@ const FRONT_POINTS = 40
 export const APART = 0.15
 const FIRST_BUDGET = 16_000
 const LATER_BUDGET = 5_000
+/** Relative difference of power or thrust below which swept volume decides: above what the search resolves, below what anyone could measure. */
+const TIE = 1e-7
 /** Part of the progress that the candidates take. */
 const CANDIDATE_SHARE = 0.4
 
@@ -87,7 +89,7 @@ export async function sizeThruster(
   const { candidates = MOST_CANDIDATES, frontPoints = FRONT_POINTS, onProgress } = options
   const designs = compileDesigns(input, options)
   const space = designSpace(input, search)
-  const problem = searchProblem(designs, space, search.goal)
+  const problem = searchProblem(designs, space, search)
   const shared = {
     seed: search.seed,
     ...(options.signal === undefined ? {} : { signal: options.signal }),
@@ -138,19 +140,37 @@ export async function sizeThruster(
   }
 }
 
-/** The search of a space: power or the thrust's opposite to be made least. */
-function searchProblem(designs: CompiledDesigns, space: DesignSpace, goal: SearchInput['goal']): SearchProblem {
+/**
+ * The search of a space: power or the thrust's opposite to be made least. Without losses and inertia of the column the power does not depend
+ * on the stroke ratio at all; of designs that are alike but for a tie's breadth the one of less swept volume is taken.
+ */
+function searchProblem(designs: CompiledDesigns, space: DesignSpace, search: SearchInput): SearchProblem {
+  const sizeShare = sizeShareIn(search)
   return {
     variables: space.variables,
     score: (values) => {
-      const { power, thrust, violation } = designs.evaluate(space.designOf(values))
-      return { value: goal === 'power' ? power : -thrust, violation }
+      const design = space.designOf(values)
+      const { power, thrust, violation } = designs.evaluate(design)
+      const value = search.goal === 'power' ? power : -thrust
+      return { value: value + TIE * Math.abs(value) * sizeShare(design), violation }
     },
   }
 }
 
+/** Where the swept volume stands between the least and the most of a search's ranges, 0..1 by its logarithm. */
+function sizeShareIn({ count, diameter, strokeRatio }: SearchInput): (design: Design) => number {
+  const end = (k: 0 | 1): number =>
+    Math.log(sweptVolume({ count: count[k], diameter: diameter[k], strokeRatio: strokeRatio[k] }))
+  const [least, most] = [end(0), end(1)]
+  return (design) => (most > least ? (Math.log(sweptVolume(design)) - least) / (most - least) : 0)
+}
+
 /** Volume all plungers of a design sweep together [m3]. */
-export function sweptVolume({ count, diameter, strokeRatio }: Design): number {
+export function sweptVolume({
+  count,
+  diameter,
+  strokeRatio,
+}: Pick<Design, 'count' | 'diameter' | 'strokeRatio'>): number {
   return count * (Math.PI / 4) * diameter * diameter * (strokeRatio * diameter)
 }
 

@@ -1,6 +1,7 @@
 /**
  * Asking for a file by a file input, and reading it.
  */
+import { decodeText, NO_TEXT } from '../worker/fileText'
 import { isFailure, type ChosenFile, type HostFailure } from './types'
 
 /** Most a plan or a table may hold [bytes], the same as in the other faces. */
@@ -51,9 +52,5 @@ async function readBytes(file: File): Promise<ArrayBuffer | HostFailure> {
 export async function readFile(file: File): Promise<string | HostFailure> {
   const bytes = await readBytes(file)
   if (isFailure(bytes)) return bytes
-  try {
-    return new TextDecoder('utf-8', { fatal: true }).decode(bytes)
-  } catch {
-    return { failure: `“${file.name}” could not be opened because it is not UTF-8 text.` }
-  }
+  return decodeText(bytes) ?? { failure: `“${file.name}” could not be opened because ${NO_TEXT}.` }
 }

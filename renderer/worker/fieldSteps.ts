@@ -12,7 +12,7 @@ import {
 } from '../../core/plan'
 import { fieldSession, type AnalysedField, type FieldSession } from '../../core/run'
 import type { FieldResult, ReadingsColumn } from '../../core/tank'
-import { decodeUtf8, hashOf } from './fileText'
+import { decodeText, hashOf, NO_TEXT } from './fileText'
 
 export type FieldStep =
   | { readonly do: 'begin'; readonly plan: Plan }
@@ -58,8 +58,8 @@ export function createFieldSteps(): (step: FieldStep) => Promise<FieldAnswer> {
       }
       if (session === null) return { ok: false, message: 'The analysis was stopped: begin it again.' }
       if (step.do === 'end') return { ok: true, file: null, result: session.result(), table: null }
-      const text = decodeUtf8(step.bytes)
-      if (text === null) return { ok: false, message: 'it is not UTF-8 text' }
+      const text = decodeText(step.bytes)
+      if (text === null) return { ok: false, message: NO_TEXT }
       const outcome = session.add(text, (frame) => step.time + frame * step.step, step.choices)
       if (!outcome.ok) return outcome
       const { frames, columns, skipped } = outcome

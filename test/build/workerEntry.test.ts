@@ -24,6 +24,7 @@ describe('what a worker loads', () => {
     const ours = [
       inProject('core', 'plan', 'index.ts'),
       inProject('renderer', 'worker', 'serve.ts'),
+      inProject('node_modules', 'papaparse', 'papaparse.min.js'),
       '\0rolldown/runtime.js',
       // Only passes an import on: module preload is off.
       '\0vite/preload-helper.js',

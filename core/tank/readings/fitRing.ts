@@ -4,9 +4,9 @@
 import { at } from '../../base'
 import type { FittedValue, ReadingResidual, RingFit } from './fitTypes'
 import { fitNotes, OUTLIER_ABOVE } from './fitNotes'
-import { carriedByData, notCarried, type HeldParameter } from './identify'
+import { carriedByData, FIT_WORDS, notCarried, type HeldParameter } from './identify'
 import { leastSquares, type LeastSquaresResult } from './leastSquares'
-import { countOf, MEASURED, measurementsOf, type MeasuredQuantity, type Measurement } from './measurements'
+import { countOf, MEASURED, measurementsOf, spanOf, type MeasuredQuantity, type Measurement } from './measurements'
 import { ringAt, type RingStart, type RingSurroundings } from './pathModel'
 import { median, robustDeviation } from './robust'
 import { correlationOf } from './smallMatrix'
@@ -57,11 +57,18 @@ export function fitRing(input: RingFitInput): RingFit {
     names = names.filter((name) => name !== drop.name)
     attempt = stagedAttempt(names, list, start, around)
   }
+  const errors = errorsOf(attempt)
+  if (errors === null) {
+    const untold = names.map((name) => ({
+      name,
+      reason: `The ${FIT_WORDS[name]} is held: it does not change what these readings show.`,
+    }))
+    return nothingFitted(input, list, [...held, ...untold], forming)
+  }
   const freedom = list.length - names.length
   const given = MEASURED.filter((quantity) => countOf(list, quantity) > 0).map((quantity) => hasSigma(list, quantity))
   const sigma = given.every(Boolean) ? 'given' : given.some(Boolean) ? 'mixed' : 'estimated'
   const residuals = residualsOf(list, attempt.ring, around)
-  const errors = errorsOf(attempt)
   const chi = sigma === 'given' && freedom > 0 ? attempt.solved.sumOfSquares / freedom : null
   const inferred = names.includes('circulation') && !names.includes('radius') && countOf(list, 'circulation') === 0
   const correlation = attempt.solved.covariance === null ? [] : correlationOf(attempt.solved.covariance)
@@ -95,9 +102,10 @@ function nothingFitted(
 ): RingFit {
   const why =
     forming > 0 ? ` ${forming} of ${rows.length} rows lie before the ring has formed: check the time offset.` : ''
+  const atOnce = list.length > 1 && spanOf(list, ({ time }) => time) === 0
   return {
     status: 'failed',
-    message: `Nothing can be fitted to ${list.length} readings.${why}`,
+    message: `Nothing can be fitted to ${list.length} readings${atOnce ? ', all of one moment' : ''}.${why}`,
     ageing: around.ageing,
     fitted: [],
     fit: {},
@@ -223,12 +231,12 @@ function errorsOf({ solved }: Attempt): readonly number[] | null {
 function valuesOf(
   names: readonly FitName[],
   ring: RingStart,
-  errors: readonly number[] | null,
+  errors: readonly number[],
 ): Partial<Record<FitName, FittedValue>> {
   const fit: Partial<Record<FitName, FittedValue>> = {}
   for (const [k, name] of names.entries()) {
     const value = name === 'startTime' ? ring.time : name === 'startPosition' ? ring.x : ring[name]
-    const error = errors === null ? Number.NaN : at(errors, k)
+    const error = at(errors, k)
     fit[name] = { value, standardError: LOGARITHMIC.includes(name) ? value * error : error }
   }
   return fit

@@ -41,6 +41,9 @@ export function carriedByData(
   const radii = countOf(list, 'radius')
   const circulations = countOf(list, 'circulation')
   const places = countOf(list, 'x')
+  const seen = list.filter(({ quantity }) => quantity === 'x')
+  const oneMoment = spanOf(seen, ({ time }) => time) === 0
+  const alike = oneMoment && spanOf(seen, ({ value }) => value) === 0 && seen.every(({ sigma }) => sigma === null)
   const growth = 1 + (4 * around.kinematicViscosity * spanOf(list, ({ time }) => time)) / start.coreRadius ** 2
   const long = around.ageing === 'laminar' && growth >= LONG_GROWTH
   for (const name of wanted) {
@@ -58,6 +61,16 @@ export function carriedByData(
       hold(
         name,
         `The ${FIT_WORDS[name]} is held: ${places} readings of place are too few, ${FEWEST_READINGS} are needed.`,
+      )
+    else if (seen.length > 0 && oneMoment && (name === 'startTime' || (name === 'circulation' && circulations === 0)))
+      hold(
+        name,
+        `The ${FIT_WORDS[name]} is held: every place was read at the same time, and a speed needs two times at least.`,
+      )
+    else if (name === 'startPosition' && alike)
+      hold(
+        name,
+        'The start position is held: every reading is of the same place at the same time, and how far it can be trusted cannot be told.',
       )
     if (name === 'circulation' && places + circulations < FEWEST_READINGS)
       hold(name, `The circulation is held: there are too few readings of place and circulation.`)

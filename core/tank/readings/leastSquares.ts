@@ -56,16 +56,12 @@ export function leastSquares({ start, scale, residuals }: LeastSquaresProblem): 
     const gain = possibleGain(state, values)
     if (gain !== null && gain <= GAIN + GAIN_SHARE * sum) return ended('done', 'Done.')
     const before = sum
-    const found = levenbergMarquardt({ x: counts, y: zeros }, (scaled) => readOff(evaluate(scaled)), {
-      initialValues: best,
-      maxIterations: ROUND,
-      damping: FIRST_DAMPING,
-      errorTolerance: 0,
-      jacobianFunction: (scaled) => {
-        const slopes = slopesAt(evaluate, scaled)
-        return (i) => slopes.map((column) => at(column, i))
-      },
-    })
+    const found = roundFrom(evaluate, best, counts, zeros)
+    if (found === null)
+      return ended(
+        'failed',
+        'The readings determine no step of the fit: they cannot tell apart what is fitted to them.',
+      )
     iterations += found.iterations
     if (found.parameterError < sum) {
       best = [...found.parameterValues]
@@ -86,6 +82,30 @@ export function leastSquares({ start, scale, residuals }: LeastSquaresProblem): 
     const inverse = inverseOf(normalMatrix(state))
     const covariance = inverse?.map((row, i) => row.map((value, j) => value * at(scale, i) * at(scale, j))) ?? null
     return { parameters: real(best), covariance, residuals: values, sumOfSquares: sum, iterations, status, message }
+  }
+}
+
+/** One round of the library; null where the matrix of its step is singular, which it throws as an error. */
+function roundFrom(
+  evaluate: (scaled: readonly number[]) => Float64Array,
+  from: readonly number[],
+  counts: Float64Array,
+  zeros: Float64Array,
+): ReturnType<typeof levenbergMarquardt> | null {
+  try {
+    return levenbergMarquardt({ x: counts, y: zeros }, (scaled) => readOff(evaluate(scaled)), {
+      initialValues: [...from],
+      maxIterations: ROUND,
+      damping: FIRST_DAMPING,
+      errorTolerance: 0,
+      jacobianFunction: (scaled) => {
+        const slopes = slopesAt(evaluate, scaled)
+        return (i) => slopes.map((column) => at(column, i))
+      },
+    })
+  } catch (error) {
+    if (error instanceof Error && error.message.includes('singular')) return null
+    throw error
   }
 }
 

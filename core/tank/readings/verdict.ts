@@ -121,7 +121,10 @@ function sentence(
   const start = `${name} ${show(value)}${error}`
   if (state === 'inside') return `${start} lies ${low === high ? 'at' : 'inside'} ${band}.`
   const by = `${(100 * Math.abs(outsideShare)).toFixed(1)} % ${outsideShare < 0 ? 'below' : 'above'} ${band}`
-  if (state === 'touching') return `${start} lies ${by}, and its 95 % interval reaches it.`
+  if (state === 'touching') {
+    const where = low === high ? '' : 'at the edge of the band: '
+    return `${start} lies ${where}${by}, and its 95 % interval reaches ${low === high ? 'it' : 'into it'}.`
+  }
   const [first, ...others] = explanations.map(({ text }) => text)
   if (first === undefined)
     return `${start} lies ${by}. No believable error of stroke, leak, water or exit explains it alone.`

@@ -57,10 +57,12 @@ function directClient(): WorkerClient {
   const fieldSteps = createFieldSteps()
   return {
     run: (plan, sections, _onProgress, jet = 'run', fields = null) => ({
-      outcome: run(plan, { sections, jet, sizing: jet === 'cached' ? 'off' : 'run', fields }, { jetCache }).then((result) => ({
-        kind: 'result',
-        result,
-      })),
+      outcome: run(plan, { sections, jet, sizing: jet === 'cached' ? 'off' : 'run', fields }, { jetCache }).then(
+        (result) => ({
+          kind: 'result',
+          result,
+        }),
+      ),
       cancel: () => undefined,
     }),
     picture: (plan, data, request) => ({
