@@ -59,7 +59,7 @@ describeInChromium('the starting jet in the browser', () => {
     await head.focus()
     await page.keyboard.press('Home')
     const slider = page.getByRole('slider', { name: 'Time shown' })
-    expect(await slider.getAttribute('aria-valuetext')).toMatch(/^formation time 0\.25, .*: forming$/)
+    expect(await slider.getAttribute('aria-valuetext')).toMatch(/^formation time 0\.05, .*: forming$/)
     const moments = page.getByRole('group', { name: 'Moments' })
     await moments.getByRole('button', { name: /^stroke ends/ }).click()
     expect(await head.getAttribute('aria-valuenow')).toBe('8')

@@ -37,7 +37,10 @@ export function carriedByData(
   around: RingSurroundings,
 ): { readonly names: readonly FitName[]; readonly held: readonly HeldParameter[] } {
   const held: HeldParameter[] = []
-  const hold = (name: FitName, reason: string): void => void held.push({ name, reason })
+  /** The first reason found is told. */
+  const hold = (name: FitName, reason: string): void => {
+    if (!held.some((one) => one.name === name)) held.push({ name, reason })
+  }
   const radii = countOf(list, 'radius')
   const circulations = countOf(list, 'circulation')
   const places = countOf(list, 'x')

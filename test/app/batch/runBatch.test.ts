@@ -94,6 +94,7 @@ describe('a run', () => {
         ...(wake ? ['wake-times.csv'] : []),
         ...(text.includes('"tankRun"') ? ['profile-read-first.txt', 'profile.csv'] : []),
         ...(text.includes('"matrix"') ? ['run-matrix.csv'] : []),
+        ...(text.includes('"readings"') ? ['readings.csv'] : []),
         'report.html',
         'summary.json',
       ])
@@ -154,7 +155,7 @@ describe('a run', () => {
     const { code, notes } = await batch(['plan.json', '--out', 'out'])
     expect(code).toBe(0)
     expect(notes).toEqual([
-      'Not computed by this version, and left out: readings.',
+      'The readings hold nothing to compare, and are left out.',
       'The sweep names no field to vary, and is left out.',
       'The spread names no number that scatters, and is left out.',
     ])
@@ -237,12 +238,12 @@ describe('a refusal', () => {
     expect(notes.join('\n')).toMatch(/newer version \(99\); this program reads up to 1/)
   })
 
-  it('of a section this version does not compute exits 2', async () => {
+  it('of a section the plan does not hold exits 2', async () => {
     await writePlanFile()
     expect(await batch(['plan.json', '--out', 'out', '--only', 'readings'])).toEqual({
       code: 2,
       written: [],
-      notes: ['Section readings is not computed by this version.'],
+      notes: ['Section readings cannot be computed: the plan has no readings.'],
     })
   })
 

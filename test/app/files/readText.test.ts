@@ -35,9 +35,23 @@ describe('readText', () => {
     )
   })
 
+  it.each([
+    ['low byte first', 'utf-16le', [0xff, 0xfe]],
+    ['high byte first', 'utf-16be', [0xfe, 0xff]],
+  ])('reads UTF-16 that begins with its mark, %s', async (_, name, mark) => {
+    const bytes = Buffer.from('{"µ": "½ 😀"}', 'utf16le')
+    if (name === 'utf-16be') bytes.swap16()
+    await writeFile(path.join(folder, `${name}.json`), Buffer.concat([Buffer.from(mark), bytes]))
+    expect(await readText(path.join(folder, `${name}.json`))).toBe('{"µ": "½ 😀"}')
+    await writeFile(path.join(folder, `${name}.json`), Buffer.concat([Buffer.from(mark), bytes.subarray(1)]))
+    expect(await sentenceFor(`${name}.json`)).toMatch(/because it is not UTF-8 text, nor UTF-16 text with a byte-order/)
+  })
+
   it('refuses bytes that are not text', async () => {
     await writeFile(path.join(folder, 'picture.json'), Buffer.from([0x89, 0x50, 0xff, 0xfe]))
-    expect(await sentenceFor('picture.json')).toBe('“picture.json” could not be opened because it is not UTF-8 text.')
+    expect(await sentenceFor('picture.json')).toBe(
+      '“picture.json” could not be opened because it is not UTF-8 text, nor UTF-16 text with a byte-order mark.',
+    )
   })
 
   it('says that a missing file and a folder are not files', async () => {

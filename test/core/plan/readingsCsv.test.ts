@@ -145,7 +145,7 @@ describe('hostile tables', () => {
       'Line 3: it holds a character that is no text (zero).',
     ])
     const wide = [...'t,x\n1,2\n'].join('\u0000')
-    expect(refusal(wide)).toMatch(/two bytes a character \(UTF-16\): save it as UTF-8/)
+    expect(refusal(wide)).toMatch(/two bytes a character \(UTF-16\) and no byte-order mark: save it as UTF-8/)
   })
 
   it('keep a run that looks like a formula as text, and arm it again when written', () => {

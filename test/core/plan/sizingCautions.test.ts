@@ -18,8 +18,8 @@ async function toldOf(thruster: Readonly<Record<string, unknown>>): Promise<Read
 
 describe('cautions of a sizing', () => {
   it('tell of a best candidate that only just holds a limit', async () => {
-    // The best design takes most of the travel there is: less than two of its deviations are left.
-    const told = await toldOf({ actuator: { maxTravel: 0.021 }, manufacture: { diameter: 0.01, stroke: 0.01 } })
+    // The widest exit takes 20 mm of travel at the least stroke ratio: less than that leaves the best design standing on the limit.
+    const told = await toldOf({ actuator: { maxTravel: 0.019 }, manufacture: { diameter: 0.01, stroke: 0.01 } })
     expect(told['sizing-within-spread']).toMatch(/\(.*plunger travel.*\): check by test before relying on it\.$/)
     expect(told).not.toHaveProperty('sizing-nothing-fits')
     expect(told).not.toHaveProperty('sizing-incomplete')
@@ -28,6 +28,13 @@ describe('cautions of a sizing', () => {
   it('tell where no design holds every limit, and which one stands in the way', async () => {
     const told = await toldOf({ target: [{ thrust: 50, share: 1 }] })
     expect(told['sizing-nothing-fits']).toMatch(/^No design in the ranges of the search holds every limit/)
+  }, 30_000)
+
+  it('tell of a search for least power that has nothing to reach, and not of one for most thrust', async () => {
+    const told = await toldOf({ target: [] })
+    expect(told['sizing-no-target']).toMatch(/makes no sizing: .* Give a duty point, a thrust or a speed to hold/)
+    expect(await toldOf({ target: [], search: { ...SEARCH, goal: 'thrust' } })).not.toHaveProperty('sizing-no-target')
+    expect(await toldOf({ target: [], search: null })).not.toHaveProperty('sizing-no-target')
   }, 30_000)
 
   it('tell of a search that was cut short', async () => {
@@ -47,6 +54,7 @@ describe('cautions of a sizing', () => {
     expect(CAUTIONS.map(({ id }) => id).filter((id) => id.startsWith('sizing-'))).toEqual([
       'sizing-within-spread',
       'sizing-nothing-fits',
+      'sizing-no-target',
       'sizing-incomplete',
     ])
   })

@@ -74,6 +74,11 @@ describe('the section tankRun', () => {
     [{ camera: { window: 31.5 } }, /camera\.window must be a whole number between 4 and 1024, got 31\.5/],
     [{ camera: { pixels: [64, 40], window: 48 } }, /camera\.window must be at most .* 40 pixels, got 48/],
     [{ camera: { scale: '4 mm' } }, /camera\.scale: Image scale needs an image scale such as 12 px\/mm/],
+    [
+      { camera: { standOff: 0, waterPath: 0 } },
+      /camera\.waterPath and tankRun\.camera\.standOff must not both be 0 m: the lens would lie in the light sheet/,
+    ],
+    [{ matrix: { kind: 'latin', samples: 5001 } }, /matrix\.samples must be .* between 1 and 5000, got 5001/],
     [{ camera: { refraction: 'no' } }, /camera\.refraction must be true or false/],
     [{ drive: { leak: 0.6 } }, /drive\.leak must be between 0 and 0\.5, got 0\.6/],
     [{ matrix: { kind: 'square' } }, /matrix\.kind must be one of grid, latin, got "square"/],
@@ -99,6 +104,15 @@ describe('the section tankRun', () => {
     ],
   ])('refuses %j with field, value and limit', (tankRun, message) => {
     expect(refusals(tankRun)).toMatch(message)
+  })
+
+  it('takes a lens on the window, a sheet on it, and both at 0 where refraction is left out', () => {
+    for (const camera of [
+      { standOff: 0, waterPath: 0.2 },
+      { standOff: 0.2, waterPath: 0 },
+      { standOff: 0, waterPath: 0, refraction: false },
+    ])
+      expect(refusals({ camera })).toBe('')
   })
 
   it('refuses a level that is past what a number can hold', () => {

@@ -64,6 +64,16 @@ describe('strokes and peak speeds for a target', () => {
     }
   })
 
+  it('keep the ratios tried as they are, and take the stroke of the plan for one of them but for rounding', async () => {
+    // 4.5 times 25 mm over 25 mm is 4.500000000000001 in floating point.
+    const nozzle = { ...PLAIN.nozzle, diameter: 0.025, pistonDiameter: 0.025 }
+    const pulse = { ...PLAIN, nozzle, programme: { ...PLAIN.programme, stroke: 0.1125 } }
+    const { strokes, ...usual } = given({ pulse })
+    expect(strokes).toBeDefined()
+    const solutions = await solutionsFor(usual, OPTIONS)
+    expect(solutions.map(({ strokeRatio }) => strokeRatio)).toEqual(Array.from({ length: 16 }, (_, k) => (k + 1) / 2))
+  })
+
   it('follow the slug for a ring Reynolds number: Re = (U D / nu) (L / D) / 2', async () => {
     // Check L2, an identity of the slug of constant speed.
     const solutions = await solutionsFor(

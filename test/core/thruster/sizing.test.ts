@@ -157,6 +157,37 @@ describe('sizeThruster', () => {
     }
   })
 
+  it('takes the least swept volume where the power does not depend on the stroke ratio', async () => {
+    // No losses, no inertia of the column, nothing that limits the plunger: P = T U / 2 at a given exit, whatever the stroke.
+    const free = {
+      ...ONE.section.actuator,
+      maxForce: null,
+      maxSpeed: null,
+      maxPower: null,
+      maxTravel: null,
+      valveLag: 0,
+    }
+    const search: SearchInput = { ...SEARCH, diameter: [0.02, 0.04], strokeRatio: [2, 4], ejectShare: null }
+    const tied = problemWith(
+      {
+        actuator: free,
+        intake: { ...ONE.section.intake, lossCoefficient: 0 },
+        bay: { length: null, diameter: null },
+        search,
+        target: [{ thrust: 0.02, share: 1 }],
+      },
+      {
+        nozzle: { ...ONE.pulse.nozzle, lossCoefficient: 0 },
+        programme: { ...ONE.pulse.programme, shape: 'rectangular' },
+      },
+    )
+    const { candidates } = await sizeThruster(tied, { frontPoints: 0 })
+    expectClose(at(candidates, 1).power, at(candidates, 0).power, 1e-9)
+    expectClose(at(candidates, 0).design.strokeRatio, 2, 1e-9)
+    const volumes = candidates.map(({ sweptVolume }) => sweptVolume)
+    expect(volumes).toEqual(volumes.toSorted((a, b) => a - b))
+  })
+
   it('repeats to the bit for a seed, and comes to the same power from another', async () => {
     const again = await sizeThruster(TWO, { pause: () => Promise.resolve() })
     expect(again).toEqual(two)

@@ -99,8 +99,9 @@ describe('opening in the browser', () => {
     expect(await host.openDropped(large)).toEqual({
       failure: '“large.json” could not be opened because it is larger than 50 MB (51 MB).',
     })
-    expect(await host.openDropped(new File([new Uint8Array([0xff, 0xfe])], 'picture.json'))).toEqual({
-      failure: '“picture.json” could not be opened because it is not UTF-8 text.',
+    expect(await host.openDropped(new File([new Uint8Array([0x89, 0xff, 0xfe])], 'picture.json'))).toEqual({
+      failure:
+        '“picture.json” could not be opened because it is not UTF-8 text, nor UTF-16 text with a byte-order mark.',
     })
     const gone = new File(['x'], 'gone.json')
     Object.defineProperty(gone, 'arrayBuffer', { value: () => Promise.reject(named('NotFoundError')) })

@@ -15,10 +15,11 @@ import {
 } from '../../../../core/tank'
 import { predictedRings } from '../../../../core/tank/readings/predicted'
 import { ringAt } from '../../../../core/tank/readings/pathModel'
+import { verdictOf } from '../../../../core/tank/readings/verdict'
 import { expectClose, expectNear } from '../../../support/close'
 import { PLAIN } from '../../pulse/plans'
 import { NO_TANK } from '../sections'
-import { madeRows } from './made'
+import { madeRows, NO_ROW } from './made'
 
 const SLOW: PulseInput = { ...PLAIN, programme: { ...PLAIN.programme, shape: 'half-sine', peakSpeed: 0.1 } }
 const FAST: PulseInput = { ...PLAIN, programme: { ...PLAIN.programme, shape: 'half-sine', peakSpeed: 1 } }
@@ -211,6 +212,42 @@ describe('readings against the prediction', () => {
     const { status, message } = compareReadings(input({ rows }))
     expect(status).toBe('failed')
     expect(message).toMatch(/40 of 40 rows lie before the ring has formed: check the time offset/)
+  })
+
+  it('of one place at one time tell nothing, in every run and in all, and say why', () => {
+    const rows = ['a', 'a', 'b', 'b'].map((run) => ({ ...NO_ROW, run, time: 2, x: 0.1 }))
+    for (const fit of [['circulation', 'startTime', 'startPosition'], ['startPosition'], ['circulation']] as const) {
+      const result = compareReadings(input({ rows, fit }))
+      expect(result.status).toBe('failed')
+      expect(result.message).toBe('Nothing can be fitted to 4 readings, all of one moment.')
+      expect(result.fit).toEqual({})
+      expect(result.held.map(({ name }) => name).toSorted()).toEqual([...fit].toSorted())
+      for (const { reason } of result.held) expect(reason).toMatch(/at the same time/)
+      expect(result.perRun.map(({ run, status }) => [run, status])).toEqual([
+        ['a', 'failed'],
+        ['b', 'failed'],
+      ])
+    }
+  })
+
+  it('of several places at one time tell where the ring started, not how fast it is', () => {
+    const rows = [0.1, 0.11, 0.12, 0.13].map((x) => ({ ...NO_ROW, time: 2, x }))
+    const result = compareReadings(input({ rows, fit: ['circulation', 'startPosition'] }))
+    expect(result.status).toBe('done')
+    expect(result.fitted).toEqual(['startPosition'])
+    expect(result.held[0]?.reason).toMatch(/every place was read at the same time, and a speed needs two times/)
+    // Standard error of the mean of four: sqrt(5/3) cm / 2.
+    expectClose(result.fit.startPosition?.standardError ?? NaN, 0.01 * Math.sqrt(5 / 12), 1e-6)
+  })
+
+  it('that lie outside the band by less than their 95 % interval are at its edge', () => {
+    const told = (value: number, low: number): string =>
+      verdictOf('speed', { value, standardError: 0.001 }, { value: 0.1, low, high: 0.1 }, []).text
+    expect(told(0.1001, 0.08)).toMatch(
+      /lies at the edge of the band: 0\.1 % above the predicted band.*reaches into it\.$/,
+    )
+    expect(told(0.1001, 0.1)).toMatch(/lies 0\.1 % above the prediction, .* and its 95 % interval reaches it\.$/)
+    expect(told(0.103, 0.08)).toMatch(/lies 3\.0 % above the predicted band/)
   })
 
   it('are fitted under both laws where the ring Reynolds number leaves them open', () => {

@@ -68,6 +68,18 @@ describe('least squares', () => {
     expect(covariance).toBeNull()
   })
 
+  it('fail in a sentence where the matrix of a step is singular', () => {
+    // Slopes of 1e12: what the damping adds is lost in their squares, and the two columns are one.
+    const { status, message, covariance } = leastSquares({
+      start: [0, 0],
+      scale: [1, 1],
+      residuals: ([a = 0, b = 0]) => Float64Array.from([1, 2, 3], (y) => 1e12 * (a + b - y)),
+    })
+    expect(status).toBe('failed')
+    expect(message).toMatch(/^The readings determine no step of the fit: they cannot tell apart what is fitted to them/)
+    expect(covariance).toBeNull()
+  })
+
   it('fail in a sentence where the model has no value', () => {
     expect(leastSquares({ start: [0], scale: [1], residuals: () => Float64Array.from([NaN, 1]) })).toMatchObject({
       status: 'failed',

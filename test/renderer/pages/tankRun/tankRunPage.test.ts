@@ -121,11 +121,19 @@ describe('the Tank run page', () => {
     await field.trigger('change')
     expect(field.element.value).toBe('25, 5 mL')
     expect(page.find('.level-row .refusal').text()).toContain('is a volume')
+    expect(workspace.untaken.count.value).toBe(1)
     await field.setValue('20 to 60 mm in 3')
     await field.trigger('change')
     await planned(workspace)
     expect(workspace.document.content.value.tankRun?.matrix?.fields[0]?.values).toEqual([0.02, 0.04, 0.06])
     expect(page.findAll('.matrix-order tbody tr')).toHaveLength(27)
+    expect(workspace.untaken.count.value).toBe(0)
+    await field.setValue('none')
+    await field.trigger('change')
+    expect(workspace.untaken.count.value).toBe(1)
+    // What is taken out takes its entry with it.
+    await button(page, 'Take Stroke out').trigger('click')
+    expect(workspace.untaken.count.value).toBe(0)
   })
 
   it('adds a field to the matrix, and begins a matrix where there was none', async () => {

@@ -2,6 +2,7 @@ import { flushPromises } from '@vue/test-utils'
 import { afterEach, describe, expect, it } from 'vitest'
 import { nextTick } from 'vue'
 import { defaultPlan, examplePlan, setThruster, setTrain, type Plan } from '../../../../core/plan'
+import StockField from '../../../../renderer/pages/thrust/StockField.vue'
 import ThrustPage from '../../../../renderer/pages/thrust/ThrustPage.vue'
 import ExportDialog from '../../../../renderer/parts/dialogs/ExportDialog.vue'
 import { computed, fakeHost, makeWorkspace, mountIn } from '../../parts/mountWithWorkspace'
@@ -42,6 +43,21 @@ async function pageOf(plan: Plan = SURVEY, host = fakeHost()) {
   }
   return { wrapper, workspace, button, field, settle, plan: () => workspace.document.content.value }
 }
+
+describe('a list of sizes in stock', () => {
+  it('is counted among the entries not taken while it is refused', async () => {
+    const workspace = makeWorkspace(SURVEY)
+    const wrapper = mountIn(workspace, StockField, { label: 'Bores', sizes: [0.02], unit: 'mm' })
+    mounted.push(wrapper)
+    const input = wrapper.get('input')
+    await input.setValue('20; 5 mL')
+    await input.trigger('keydown', { key: 'Enter' })
+    expect(wrapper.text()).toContain('is a volume')
+    expect(workspace.untaken.count.value).toBe(1)
+    await input.trigger('keydown', { key: 'Escape' })
+    expect(workspace.untaken.count.value).toBe(0)
+  })
+})
 
 describe('the Thrust page', () => {
   it('offers a vehicle, a bench and examples where the plan has no thruster, each one step', async () => {
