@@ -1,7 +1,9 @@
 /**
  * The headless runner as a process: its streams, its caller's folder, its interrupt.
  */
+import type { EventEmitter } from 'node:events'
 import { addAbortSignal } from 'node:stream'
+import { systemCode } from './files/fileSentence'
 import { MAXIMUM_FILE_BYTES } from './limits'
 import { runBatch, type ExitCode } from './batch/runBatch'
 
@@ -14,6 +16,7 @@ import { runBatch, type ExitCode } from './batch/runBatch'
 export async function main(list: readonly string[]): Promise<ExitCode> {
   const controller = new AbortController()
   const interrupt = (): void => controller.abort()
+  for (const stream of [process.stdout, process.stderr]) outliveReader(stream)
   process.once('SIGINT', interrupt)
   process.once('SIGTERM', interrupt)
   try {
@@ -31,6 +34,17 @@ export async function main(list: readonly string[]): Promise<ExitCode> {
     process.off('SIGINT', interrupt)
     process.off('SIGTERM', interrupt)
   }
+}
+
+const outlived = new WeakSet<EventEmitter>()
+
+/** Where whoever reads a stream has gone, nobody listens: the run goes on and writes its files. Other failures are thrown as ever. */
+export function outliveReader(stream: EventEmitter): void {
+  if (outlived.has(stream)) return
+  outlived.add(stream)
+  stream.on('error', (error: unknown) => {
+    if (systemCode(error) !== 'EPIPE') throw error
+  })
 }
 
 /** All of standard input, or just more than a plan may have: what reads it refuses that. An interrupt ends the wait. */

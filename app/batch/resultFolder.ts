@@ -8,6 +8,8 @@ import { systemCode } from '../files/fileSentence'
 
 export const SUMMARY_NAME = 'summary.json'
 export const RECORD_NAME = 'report.html'
+/** Lists what a run that has not ended means to write, so that a later one knows it for ours. */
+export const MARKER_NAME = '.ringwright-run'
 
 /** A folder that may not be written to, with a sentence that says why. */
 export class FolderRefusal extends Error {
@@ -19,12 +21,16 @@ export class FolderRefusal extends Error {
 
 export interface ResultFolder {
   /**
-   * Refuse to touch files that are not an earlier run's.
+   * Refuse to touch files that are not an earlier run's, and take away what an interrupted run has left.
    *
    * @param isOurs whether something else than a summary tells that they are; default false
    * @throws {FolderRefusal}
    */
   prepare(names: readonly string[], isOurs?: boolean): Promise<void>
+  /** From the first file written to `finish` the folder is marked as that of a run that writes these. */
+  begin(names: readonly string[]): void
+  /** The run has ended with all its files: take the mark away. */
+  finish(): Promise<void>
   /** Write one file under a temporary name and rename it. */
   write(name: string, content: string): Promise<void>
   /** Take away files that an earlier run's summary lists and this run does not write. */
@@ -42,21 +48,43 @@ export interface ResultFolder {
  */
 export function resultFolder(folder: string, shown: string, summaryFormat: string): ResultFolder {
   let count = 0
+  /** Files before the first of which the mark is written; null: none, or it is there. */
+  let mark: readonly string[] | null = null
   const save = createSaver(
     { open, rename, unlink, stat, realpath },
     { durable: false, syncFolder: false, unique: () => `${process.pid}-${(count += 1)}` },
   )
+  const refusal = (name: string): FolderRefusal =>
+    new FolderRefusal(
+      `${path.join(shown, name)} exists already and ${shown} holds no summary of an earlier run: name another folder or move the file away.`,
+    )
   return {
     async prepare(names, isOurs = false) {
       const present = await makeOrList(folder, shown)
       const inTheWay = names.filter((name) => present.includes(name))
       const [first] = inTheWay
-      if (first === undefined || isOurs || (await holdsOurSummary(folder, summaryFormat))) return
-      throw new FolderRefusal(
-        `${path.join(shown, first)} exists already and ${shown} holds no summary of an earlier run: name another folder or move the file away.`,
-      )
+      const interrupted = await interruptedFiles(folder, summaryFormat)
+      if (first !== undefined && !isOurs && !(await holdsOurSummary(folder, summaryFormat))) {
+        const foreign = inTheWay.find((name) => !interrupted.includes(name))
+        if (foreign !== undefined) throw refusal(foreign)
+      }
+      const halves = present.filter((name) => interrupted.some((whole) => isHalfOf(name, whole)))
+      for (const name of [...interrupted.filter(isInside), ...halves])
+        await rm(path.join(folder, name), { force: true })
+      await rm(path.join(folder, MARKER_NAME), { force: true })
+    },
+    begin(names) {
+      mark = names
+    },
+    async finish() {
+      mark = null
+      await rm(path.join(folder, MARKER_NAME), { force: true })
     },
     async write(name, content) {
+      if (mark?.includes(name) === true) {
+        await save(path.join(folder, MARKER_NAME), JSON.stringify({ format: summaryFormat, files: mark }))
+        mark = null
+      }
       const target = path.join(folder, name)
       if (path.dirname(name) !== '.') await makeFolders(path.dirname(target))
       await save(target, content)
@@ -115,9 +143,14 @@ async function holdsOurSummary(folder: string, summaryFormat: string): Promise<b
 }
 
 /** The summary of an earlier run; null where there is none of ours. */
-async function earlierSummary(folder: string, summaryFormat: string): Promise<object | null> {
+function earlierSummary(folder: string, summaryFormat: string): Promise<object | null> {
+  return readOurs(path.join(folder, SUMMARY_NAME), summaryFormat)
+}
+
+/** A JSON file of ours; null where it is not there, or not ours. */
+async function readOurs(file: string, summaryFormat: string): Promise<object | null> {
   try {
-    const summary: unknown = JSON.parse(await readFile(path.join(folder, SUMMARY_NAME), 'utf8'))
+    const summary: unknown = JSON.parse(await readFile(file, 'utf8'))
     if (typeof summary !== 'object' || summary === null) return null
     return 'format' in summary && summary.format === summaryFormat ? summary : null
   } catch {
@@ -126,9 +159,22 @@ async function earlierSummary(folder: string, summaryFormat: string): Promise<ob
 }
 
 async function earlierFiles(folder: string, summaryFormat: string): Promise<readonly string[]> {
-  const summary = await earlierSummary(folder, summaryFormat)
+  return filesOf(await earlierSummary(folder, summaryFormat))
+}
+
+/** What a run that never ended may have left. */
+async function interruptedFiles(folder: string, summaryFormat: string): Promise<readonly string[]> {
+  return filesOf(await readOurs(path.join(folder, MARKER_NAME), summaryFormat))
+}
+
+function filesOf(summary: object | null): readonly string[] {
   if (summary === null || !('files' in summary) || !Array.isArray(summary.files)) return []
   return summary.files.filter((name: unknown): name is string => typeof name === 'string')
+}
+
+/** A file that was being written under its temporary name (`write`) when the run was killed. */
+function isHalfOf(name: string, whole: string): boolean {
+  return name.startsWith(`.${whole}.`) && /^\d+-\d+\.tmp$/.test(name.slice(whole.length + 2))
 }
 
 /** Names as this program writes them: in the folder or in its folder `wake`, nowhere else. */

@@ -99,10 +99,11 @@ async function wholeRun(target: Target, { only }: BatchRequest, fields: Readings
   // A sweep that cannot be is told before anything is computed.
   if (sweeps) designOf(target)
   const beside = sweeps ? [sweepFileNames(null).note, sweepFileNames(null).unfinished] : []
-  await folder.prepare(
-    [...fileNames(sections), ...beside, SUMMARY_NAME],
-    sweeps && (await holdsOurPart(absolute, null)),
-  )
+  const names = [...fileNames(sections), SUMMARY_NAME]
+  await folder.prepare([...names, ...beside], sweeps && (await holdsOurPart(absolute, null)))
+  // Rows of a sweep that was stopped are known by its own note, and kept to go on from.
+  const { table } = sweepFileNames(null)
+  folder.begin(names.filter((name) => name !== table))
   stopWhenInterrupted(environment)
 
   // Rows of a sweep are written as they come, after what is computed once.
@@ -110,6 +111,8 @@ async function wholeRun(target: Target, { only }: BatchRequest, fields: Readings
   const result = await run(plan, { sections: once, fields }, { signal: environment.signal, pause: environment.pause })
   if (result.status === 'cancelled') throw new Stop(EXIT.interrupted, 'The run was interrupted.')
   if (result.status === 'done' && result.data !== null) {
+    const { readings } = result.data
+    if (readings?.status === 'failed') environment.note(`The readings: ${readings.message}`)
     await writeResults(target, wanted(result.data, sections), sections)
     return
   }
@@ -136,6 +139,7 @@ async function mergeRun(target: Target, folders: readonly string[]): Promise<voi
   const text = await mergedSweep(folders, target.inputHash, environment)
   const { table } = sweepFileNames(null)
   await folder.prepare([table, SUMMARY_NAME])
+  folder.begin([table, SUMMARY_NAME])
   const { data, message } = await run(plan, { sections: [] })
   if (data === null) throw new Stop(EXIT.failed, `${target.planName}: ${message}`)
   await writeFile(target, table, text)
@@ -195,12 +199,16 @@ function sectionsOf(plan: Plan, only: readonly string[] | null): readonly Sectio
   })
 }
 
+/** How a number is made to scatter. */
+const SPREAD_KEYS =
+  'spread.relative must name one and its relative deviation, or spread.absolute, for instance "relative": { "programme.stroke": 0.01 }'
+
 function missing(plan: Plan, section: Section): string {
   if (section === 'water' || section === 'pulse') return plan.absent.join(' and no ')
   if (plan[section] === null) return section
   if (section === 'sweep') return 'field to sweep'
   if (section === 'readings' && plan.absent.length === 0) return 'rows, logs or fields among its readings'
-  return plan.absent.length > 0 ? plan.absent.join(' and no ') : 'number that scatters'
+  return plan.absent.length > 0 ? plan.absent.join(' and no ') : `number that scatters: ${SPREAD_KEYS}`
 }
 
 /** Sections a plan holds that are not computed: said, so that their absence is no surprise. */
@@ -214,7 +222,7 @@ function noteUncomputed(
   if (sweep !== null && !sections.includes('sweep'))
     environment.note('The sweep names no field to vary, and is left out.')
   if (spread !== null && !sections.includes('spread'))
-    environment.note('The spread names no number that scatters, and is left out.')
+    environment.note(`The spread names no number that scatters, and is left out: ${SPREAD_KEYS}.`)
 }
 
 /** Write the tables of what was finished. @returns their names */
@@ -288,4 +296,5 @@ async function writeSummary(
     if (tables.length > 0) await folder.dropSummary().catch(() => undefined)
     throw error
   }
+  await folder.finish()
 }

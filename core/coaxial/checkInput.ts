@@ -97,9 +97,13 @@ function checkTube(input: CoaxialWakeInput, tubeRadius: number): void {
     if (ring.radius > limit)
       throw new DomainError(
         ringField(i, 'radius'),
-        `${ringField(i, 'radius')} must be at most ${LARGEST_TUBE_SHARE} of the tube's radius (${limit} m), got ${ring.radius} m`,
+        `${ringField(i, 'radius')} must be at most ${LARGEST_TUBE_SHARE} of the tube's radius (${sixDigits(limit)} m), got ${sixDigits(ring.radius)} m`,
       )
   })
+}
+
+function sixDigits(value: number): number {
+  return Number(value.toPrecision(6))
 }
 
 function checkApart(rings: readonly CoaxialRing[]): void {

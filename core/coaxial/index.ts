@@ -35,6 +35,7 @@ export type {
   StartingJetInput,
 } from './jet/types'
 export { deltaOverCore } from './ringFlow'
+export { hasJustAppeared } from './ringEvents'
 export { LARGEST_TUBE_SHARE, RoundTube, tubeSlowing } from './roundTube'
 export { tankSlowing, type TankSection } from './tankImages'
 export { fallsOnOutput, outputTimesInside } from './trajectoryWriter'

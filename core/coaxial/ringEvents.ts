@@ -4,6 +4,7 @@
 import { at, type Crossing, type EventFunctions } from '../base'
 import { LARGEST_TUBE_SHARE } from './roundTube'
 import type { RingFlow } from './ringFlow'
+import type { CoaxialRing } from './types'
 import type { WakeEvent } from './wakeTypes'
 
 /** Core ratio above which the thin-core law is no longer told as valid; the steady family departs by 1 % there. */
@@ -29,6 +30,8 @@ interface RingEvent {
 
 export interface RingEventSetup {
   readonly flow: RingFlow
+  /** Every ring of the march as it begins. */
+  readonly rings: readonly CoaxialRing[]
   /** Number of each active ring, from 1, in the order of the state. */
   readonly numbers: readonly number[]
   readonly wall: number | null
@@ -39,6 +42,17 @@ export interface RingEventSetup {
 }
 
 const NOTHING: RingEventOutcome = { event: null, stop: null, limit: null }
+
+/** Time in which a ring moves by rounding only, in R^2 / Gamma. */
+const AT_ONCE = 1e-9
+
+/** Whether so little time has passed since a ring appeared that it stands where it was put: at a station there it does not arrive. */
+export function hasJustAppeared(
+  ring: { readonly radius: number; readonly circulation: number; readonly startTime?: number },
+  time: number,
+): boolean {
+  return time - (ring.startTime ?? 0) <= (AT_ONCE * ring.radius ** 2) / Math.abs(ring.circulation)
+}
 
 /** The events of one set of active rings. */
 export class RingEvents {
@@ -143,10 +157,13 @@ export class RingEvents {
       direction: 0,
       holdsFromStart: false,
       value: (state) => this.x(state, i) - station,
-      tell: (_state, time) => ({
-        ...NOTHING,
-        event: { time, event: 'arrival', rings: [this.number(i)], x: station, detail: `station ${station} m` },
-      }),
+      tell: (_state, time) =>
+        hasJustAppeared(at(this.setup.rings, this.number(i) - 1), time)
+          ? NOTHING
+          : {
+              ...NOTHING,
+              event: { time, event: 'arrival', rings: [this.number(i)], x: station, detail: `station ${station} m` },
+            },
     }
   }
 

@@ -2,11 +2,11 @@
  * Events of filaments in space: passes, arrivals, walls, cores that touch.
  */
 import { at, type Crossing, type EventFunctions } from '../base'
-import type { WakeEvent } from '../coaxial'
+import { hasJustAppeared, type WakeEvent } from '../coaxial'
 import { distanceBetween, distanceToItself, neighbourhood, reachOf } from './approach'
 import type { CurveSums } from './closedCurve'
 import type { FilamentFlow } from './filamentFlow'
-import type { WakeWall } from './types'
+import type { WakeRing, WakeWall } from './types'
 import { dot, length } from './vector'
 
 /** Rings are told to pass only when they part by this share of their radius on the other side: side by side is no pass. */
@@ -54,6 +54,8 @@ interface FilamentEvent {
 
 export interface FilamentEventSetup {
   readonly flow: FilamentFlow
+  /** Every ring of the march as it begins. */
+  readonly rings: readonly WakeRing[]
   readonly numbers: readonly number[]
   readonly wall: WakeWall | null
   readonly stations: readonly number[]
@@ -197,10 +199,13 @@ export class FilamentEvents {
       direction: 0,
       holdsFromStart: false,
       value: (rings) => at(rings, i).sums.centroid[0] - station,
-      tell: (_rings, time) => ({
-        ...NOTHING,
-        event: { time, event: 'arrival', rings: [this.number(i)], x: station, detail: `station ${station} m` },
-      }),
+      tell: (_rings, time) =>
+        hasJustAppeared(at(this.setup.rings, this.number(i) - 1), time)
+          ? NOTHING
+          : {
+              ...NOTHING,
+              event: { time, event: 'arrival', rings: [this.number(i)], x: station, detail: `station ${station} m` },
+            },
     }
   }
 

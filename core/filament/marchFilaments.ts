@@ -166,7 +166,15 @@ class FilamentMarch {
     const state = this.state(flow)
     const numbers = this.live.map(({ index }) => index + 1)
     const { wall, nearTold, sides } = this
-    const watch = new FilamentEvents({ flow, numbers, wall, nearTold, sides, stations: input.stations })
+    const watch = new FilamentEvents({
+      flow,
+      rings: input.rings,
+      numbers,
+      wall,
+      nearTold,
+      sides,
+      stations: input.stations,
+    })
     flow.updateStrides(state)
     const slope = new Float64Array(state.length)
     const write = (time: number, now: Float64Array): void => {

@@ -152,7 +152,8 @@ export function decodeQuantity(raw: unknown, field: string, dimension: Dimension
   if (typeof raw === 'string') {
     const parsed = parseQuantity(raw, dimension, siUnit(dimension), { name: field })
     if (parsed.ok) return parsed.value
-    refuse(problems, field, raw, 'a number in SI units or a text with its unit', `${field}: ${parsed.message}`)
+    // The sentence begins with the field, which is its name here.
+    refuse(problems, field, raw, 'a number in SI units or a text with its unit', parsed.message)
     return null
   }
   const limit = `${describeDimension(dimension)}, as a number in SI units or a text with its unit`

@@ -1,4 +1,5 @@
 /** The section `thruster` of a plan: vehicle, actuator, intake, duty points and what the search may try. */
+import { formatFull, siUnit } from '../quantity'
 import type {
   ActuatorInput,
   BayInput,
@@ -302,7 +303,10 @@ function decodeSpan(raw: Json | undefined, path: string, problems: Problems): Sp
   }
   const [low = null, high = null] = raw.map((item: Json, end) => decodeListed(item, `${path}.${end}`, problems))
   if (low === null || high === null) return null
-  if (low > high)
-    refuse(problems, path, raw, 'from low to high', `${path} must run from low to high, got ${low} before ${high}.`)
+  if (low > high) {
+    const unit = siUnit(quantityDefinition(`${path}.0`)?.dimension ?? 'number')
+    const [first, second] = [formatFull(low, unit), formatFull(high, unit)]
+    refuse(problems, path, raw, 'from low to high', `${path} must run from low to high, got ${first} before ${second}.`)
+  }
   return [low, high]
 }

@@ -10,6 +10,7 @@ import { MATRIX_DEFAULTS, TANK_RUN_DEFAULTS } from './decodeTankRun'
 import { SEARCH_DEFAULTS, THRUSTER_DEFAULTS, VEHICLE_DEFAULTS } from './decodeThruster'
 import { WAKE_DEFAULTS } from './decodeWake'
 import { isRecord } from './planNumbers'
+import { COMPUTED_SECTIONS } from './sectionOrder'
 import type { Plan } from './types'
 
 /** What an absent part starts from when one of its values is set. */
@@ -35,23 +36,11 @@ export function withValue(plan: Plan, path: string, value: unknown): Plan {
   return { ...present(plan, section), [section]: changed }
 }
 
-const EDITED = [
-  'water',
-  'nozzle',
-  'programme',
-  'ambient',
-  'models',
-  'jet',
-  'train',
-  'wake',
-  'thruster',
-  'tankRun',
-  'readings',
-  'spread',
-] as const
+/** Every section that is computed but the sweep, of which no single value is edited. */
+type Edited = Exclude<(typeof COMPUTED_SECTIONS)[number], 'sweep'>
 
-function isEdited(name: string): name is (typeof EDITED)[number] {
-  return EDITED.some((section) => section === name)
+function isEdited(name: string): name is Edited {
+  return name !== 'sweep' && COMPUTED_SECTIONS.some((section) => section === name)
 }
 
 /** A plan with one section present again after a change in it. */

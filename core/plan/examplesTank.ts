@@ -4,7 +4,8 @@ import { example, NO_FLOW, type Example } from './exampleTypes'
 export const TANK_EXAMPLES: readonly Example[] = [
   example('tank-day', 'A day at a glass tank: three stations, twelve strokes and speeds, each three times.', {
     title: 'Rings across a glass tank',
-    notes: 'A 25 mm tube at mid-depth of a tank 1.2 m long; the ring is followed past three stations.',
+    notes:
+      'A 25 mm tube at mid-depth of a tank 1.2 m long; the ring is followed past three stations. Set once for the day: frames from the first motion on, enough of them for the slowest ring.',
     water: { kind: 'fresh', temperatureCelsius: 20, depth: 0.25 },
     nozzle: { shape: 'tube', diameter: 0.025, pistonDiameter: 0.05, length: 0.15 },
     programme: { shape: 'trapezoid', stroke: 0.0625, peakSpeed: 0.1, riseTime: 0.02, fallTime: 0.02 },

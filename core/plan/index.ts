@@ -14,6 +14,7 @@ export { LARGEST_ROWS, SPREAD_DEFAULTS, SWEEP_DEFAULTS } from './decodeSweep'
 export { readPartNote } from './decodeSweepPart'
 export { MATRIX_DEFAULTS, TANK_RUN_DEFAULTS } from './decodeTankRun'
 export { SEARCH_DEFAULTS, THRUSTER_DEFAULTS, VEHICLE_DEFAULTS } from './decodeThruster'
+export { pulsesOverlap } from './wakeCautions'
 export { WAKE_DEFAULTS } from './decodeWake'
 export {
   setChoice,

@@ -11,6 +11,20 @@ function shown({ jet }: CautionContext) {
   return jet?.own.shown ?? null
 }
 
+/** Shares of the impulse that differ by more than this are told. */
+const TOLD_SHARE = 0.1
+
+/** Share of the impulse shed by pinch-off that lies behind the ring then; null without pinch-off. */
+function jetBehind(context: CautionContext): { readonly behind: number; readonly formationTime: number } | null {
+  const run = shown(context)
+  if (run === null || run.pinchOff === null || run.ring === null) return null
+  const { time, formationTime } = run.pinchOff
+  // Rows end with the run, which goes on past pinch-off; rounding may put its own row just before.
+  const row = run.history.time.findIndex((known) => known >= time * (1 - 1e-9))
+  const whole = run.history.totalImpulse[row]
+  return whole === undefined ? null : { behind: 1 - run.ring.impulse / whole, formationTime }
+}
+
 /** What keeps a nozzle from being a plain round tube, in words. */
 function unlikeTube({ shape, axisRatio, exitProfile, radialRatio }: NozzleInput): readonly string[] {
   return [
@@ -47,7 +61,21 @@ export const JET_CAUTIONS: readonly CautionDefinition[] = [
     text: ({ jet }) =>
       jet === null
         ? null
-        : `One constant of the computed jet is chosen, not derived: the bound strength at the lip is averaged over ${LIP_AVERAGE} smoothing length of wall, so that the circulation beyond the slug agrees with the published over-pressure circulation. Half or twice that length would move it from 0.28 to 0.47 or 0.17 of peak speed times diameter.`,
+        : `One constant of the computed jet is chosen, not derived: the bound strength at the lip is averaged over ${LIP_AVERAGE} smoothing length of wall, so that the circulation beyond the slug agrees with the published over-pressure circulation. Half or twice that length would move it from 0.28 to 0.47 or 0.17 of peak speed times diameter.${(jet.formation?.formationNumber ?? null) === null ? '' : ' The range of the computed formation number is over smoothing lengths only: the stroke of its run alone moves it by about 0.3.'}`,
+  },
+  {
+    id: 'jet-impulse-share',
+    group: 'model',
+    source: 'own comparison of the slug and the starting jet',
+    text: (context) => {
+      const ofJet = jetBehind(context)
+      const { pulse } = context
+      if (ofJet === null || pulse === null || pulse.pinchedOff === null) return null
+      const ofSlug = pulse.trailingJet.impulse / pulse.total.impulse
+      if (Math.abs(ofSlug - ofJet.behind) <= TOLD_SHARE) return null
+      const percent = (share: number): string => `${formatFixed(100 * share, 0)} %`
+      return `Two shares of the impulse differ. Cut at the adopted formation number, the slug leaves ${percent(ofSlug)} of the impulse of the whole stroke behind its ring: what the piston pushes out after the ring is full. The computed jet, cut where its ring is seen to pinch off at formation time ${formatFixed(ofJet.formationTime, 1)}, has ${percent(ofJet.behind)} behind the ring and ${percent(1 - ofJet.behind)} in it, of the impulse of everything shed by then${ofJet.behind < ofSlug ? ': its ring goes on taking in fluid until it pinches off' : ''}.`
+    },
   },
   {
     id: 'jet-left-out',

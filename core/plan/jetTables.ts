@@ -74,8 +74,8 @@ function pinchOffOf({ shown }: JetEnsemble, ofPulse: boolean): WakeEvent[] {
       time: pinchOff.time,
       event: 'pinch-off',
       rings: ofPulse ? [1] : [],
-      x: pinchOff.cutX,
-      detail: `seen at ${formation}, smoothing ${shown.delta} D${holds}`,
+      x: ring?.x ?? null,
+      detail: `seen at ${formation} in the shown run (smoothing length ${shown.delta} D); cut at x = ${Number(pinchOff.cutX.toPrecision(4))} m${holds}`,
     },
   ]
 }
@@ -86,7 +86,8 @@ function endOf({ shown }: JetEnsemble): WakeEvent {
 
 /**
  * The jet section of summary.json. Ring, totals and what lies beyond the slug are those of the plan's own stroke; formation number, its
- * range, `byDelta` and the formation instant those of the run that tells it, of stroke ratio `formationStrokeRatio`.
+ * range, `byDelta` and the formation instant those of the run that tells it, of stroke ratio `formationStrokeRatio`. `pinchOffTime` is the
+ * mean over the smoothing lengths, `pinchOffTimeShown` that of the shown one, `shownDelta`, as events.csv tells it.
  */
 export function jetSummary(jet: JetOutcome): object {
   const { own, formation } = jet
@@ -105,6 +106,7 @@ export function jetSummary(jet: JetOutcome): object {
     ringLimitingCirculation: own.ringLimitingCirculation,
     formationInstant: formation?.formationInstant ?? null,
     pinchOffTime: own.pinchOffTime,
+    pinchOffTimeShown: pinchOff?.time ?? null,
     ringSpeed: own.ringSpeed,
     trailingJet: own.trailingJet,
     circulationBeyondSlug: own.circulationBeyondSlug,

@@ -116,7 +116,7 @@ function tankRunSummary(run: TankRunResult, cautions: readonly Caution[]): objec
   return {
     ...without(run, ['path']),
     profile: { ...without(profile, ['time', 'position', 'speed', 'acceleration']), rows: profile.time.length },
-    matrix: matrix === null ? null : { ...matrix, runs: matrix.runs.length },
+    matrix: matrix === null ? null : { ...without(matrix, ['each']), runs: matrix.runs.length },
     cautions: cautions.filter(isOfTankRun),
   }
 }

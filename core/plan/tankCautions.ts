@@ -2,9 +2,11 @@
  * Cautions about a run in the tank: walls too near, what the camera cannot do, what the drive cannot follow, what the ring is not.
  */
 import type { TankRunResult } from '../tank'
+import type { Plan } from './types'
 
 /** What these cautions look at. */
 export interface TankCautionContext {
+  readonly plan: Pick<Plan, 'water' | 'tankRun'>
   readonly tankRun: TankRunResult | null
 }
 
@@ -74,10 +76,34 @@ const RING: readonly TankCaution[] = [
   ),
 ]
 
+/** Depths of the axis this far apart [m] are not one depth told twice. */
+const DEPTHS_APART = 0.01
+
+/** The pulse has its pressures from one depth, the tank its surface from another. */
+const DEPTH: TankCaution = {
+  id: 'tank-depth-differs',
+  group: 'model',
+  source: 'inputs of the plan',
+  text: ({ plan }) => {
+    const pulse = plan.water.depth
+    const tank = plan.tankRun?.nozzleDepth ?? null
+    // A depth of 0 is what stands where none was told.
+    if (tank === null || pulse === 0 || Math.abs(pulse - tank) <= DEPTHS_APART) return null
+    return `The pulse is computed at a depth of ${three(pulse)} m, the axis in the tank lies ${three(tank)} m deep: pressures and cavitation are those of the first, walls and surface those of the second. Give both the same depth.`
+  },
+}
+
 const DRIVE: readonly TankCaution[] = [
   caution('tank-drive-limits', 'limits given in the plan', ({ profile }) =>
     joined(profile.limits.filter(({ ok }) => !ok).map(({ text }) => text)),
   ),
+  caution('tank-matrix-limits', 'limits given in the plan', ({ matrix }) => {
+    const broken = matrix?.runs.filter(({ ok }) => !ok) ?? []
+    const [first] = broken
+    if (matrix === null || first === undefined) return null
+    const combinations = matrix.each.filter(({ ok }) => !ok).length
+    return `${broken.length} of the ${matrix.runs.length} runs in the order (${combinations} of ${matrix.each.length} combinations) cannot be made as they stand; run ${first.run}: ${(first.reason ?? '').replace(/\.$/u, '')}.`
+  }),
   caution('tank-rounding', 'S-curve of the piston profile', ({ profile }) =>
     profile.rounding.circulationShare < CIRCULATION_WORTH_TELLING
       ? `${profile.rounding.text} Arrivals and ring are those of the planned motion.`
@@ -127,4 +153,4 @@ const CAMERA: readonly TankCaution[] = [
   }),
 ]
 
-export const TANK_CAUTIONS: readonly TankCaution[] = [...WALLS, ...RING, ...DRIVE, ...CAMERA]
+export const TANK_CAUTIONS: readonly TankCaution[] = [...WALLS, DEPTH, ...RING, ...DRIVE, ...CAMERA]

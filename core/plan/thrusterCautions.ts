@@ -22,6 +22,7 @@ const SOURCES: Readonly<Record<ThrusterNoteId, string>> = {
   'thruster-several-speeds': 'balance of thrust and drag',
   'thruster-limits': 'limits given in the plan',
   'thruster-speed-jumps': 'inertia of the plunger and of the water in the nozzle',
+  'thruster-no-column': 'inertia of the water in the nozzle',
   'thruster-braking-suction': 'inertia of the water in the nozzle; vapour pressure by IAPWS-IF97 or as given',
   'thruster-close-nozzles': 'Athanassiadis & Hart 2016, arXiv 1604.05382',
   'thruster-close-rings': 'common practice',

@@ -5,25 +5,11 @@
 import type { Json, JsonObject } from './json'
 import { planDocument } from './writePlan'
 import { isObject } from './decodeFields'
+import { COMPUTED_SECTIONS } from './sectionOrder'
 import type { Plan } from './types'
 
 /** Sections whose every key this version knows; others belong to later capabilities and are not looked into. */
-const KNOWN_SECTIONS = [
-  'water',
-  'nozzle',
-  'programme',
-  'ambient',
-  'models',
-  'jet',
-  'train',
-  'wake',
-  'thruster',
-  'tankRun',
-  'readings',
-  'sweep',
-  'spread',
-  'view',
-] as const
+const KNOWN_SECTIONS = [...COMPUTED_SECTIONS, 'view'] as const
 
 /** Sections the contract names, whether or not this version reads them. */
 const LATER_SECTIONS = ['held'] as const

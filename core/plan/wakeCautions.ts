@@ -9,9 +9,27 @@ function first({ wake }: CautionContext, kind: WakeEventKind) {
   return wake?.events.find(({ event }) => event === kind)
 }
 
+/** A period this share below the stroke time differs from it by rounding only. */
+const ROUNDING = 1e-9
+
+/** Whether a pulse of a train begins before the one before it has ended. Both in s. */
+export function pulsesOverlap(period: number, duration: number): boolean {
+  return period < duration * (1 - ROUNDING)
+}
+
 const seconds = (time: number): string => `${Number(time.toPrecision(3))} s`
 
 export const WAKE_CAUTIONS: readonly CautionDefinition[] = [
+  {
+    id: 'train-overlap',
+    group: 'model',
+    source: 'definitions of a train',
+    text: ({ plan: { train, wake }, pulse }) => {
+      if (wake === null || wake.rings.length > 0 || train === null || train.pulses < 2 || pulse === null) return null
+      if (!pulsesOverlap(train.period, pulse.duration)) return null
+      return `The period of the train, ${seconds(train.period)}, is shorter than its stroke of ${seconds(pulse.duration)}: the pulses would overlap, which one piston cannot do.`
+    },
+  },
   {
     id: 'cores-touch',
     group: 'model',
@@ -51,7 +69,7 @@ export const WAKE_CAUTIONS: readonly CautionDefinition[] = [
     source: 'limits of the ring models',
     text: ({ wake }) =>
       wake !== null && wake.status === 'done' && wake.validUntil < wake.time
-        ? `The path of the rings holds until ${seconds(wake.validUntil)}: ${wake.reason}`
+        ? `The path of the rings ${wake.validUntil <= ROUNDING * wake.time ? 'does not hold from the start' : `holds until ${seconds(wake.validUntil)}`}: ${wake.reason}`
         : null,
   },
 ]

@@ -4,33 +4,13 @@
 import type { Json, JsonObject } from './json'
 import { merged, pair } from './mergedDocument'
 import { readingsDocument } from './readingsDocument'
+import { COMPUTED_SECTIONS } from './sectionOrder'
 import { heldDocument, spreadDocument, sweepDocument, tankRunDocument } from './tankRunDocument'
 import { thrusterDocument } from './thrusterDocument'
 import { PLAN_FORMAT, PLAN_VERSION, type Plan, type WakeSection } from './types'
 
 /** Order of the sections in a file, as the contract lists them; unknown ones follow in their own order. */
-const SECTION_ORDER = [
-  'format',
-  'version',
-  'title',
-  'revision',
-  'notes',
-  'water',
-  'nozzle',
-  'programme',
-  'ambient',
-  'models',
-  'jet',
-  'train',
-  'wake',
-  'thruster',
-  'tankRun',
-  'readings',
-  'sweep',
-  'spread',
-  'held',
-  'view',
-] as const
+const SECTION_ORDER = ['format', 'version', 'title', 'revision', 'notes', ...COMPUTED_SECTIONS, 'held', 'view'] as const
 
 /** The document of a plan, as it is saved. */
 export function planDocument(plan: Plan): JsonObject {

@@ -4,7 +4,8 @@
  */
 import { holdsMeasuredPulse, MEASURED_PULSE, shownUnit, type Plan } from '../plan'
 import type { PulseResult } from '../pulse'
-import { FIT_NAMES, type FitName, type ReadingsResult, type ReadingsSource } from '../tank'
+import { formatQuantity } from '../quantity'
+import { FIT_NAMES, type FieldFiles, type FitName, type ReadingsResult, type ReadingsSource } from '../tank'
 import type { DocumentBlock, PrintDocument } from './document/types'
 import { measuredPulseRows } from './measuredPulse'
 import { plotToSvg } from './plotSvg'
@@ -64,7 +65,7 @@ export function comparisonBlocks(
     ...fieldBlocks(plan, result, show),
     ...forceBlocks(plan, result, show),
     ...noteBlocks(result),
-    ...sourceBlocks(plan.readings?.sources ?? []),
+    ...sourceBlocks(plan.readings?.sources ?? [], plan.readings?.fields ?? null),
   ]
 }
 
@@ -165,7 +166,8 @@ function fitBlocks(result: ReadingsResult, show: Show): readonly DocumentBlock[]
       [
         label,
         show.result(own.value, key),
-        show.result(own.standardError, key),
+        // In the unit of the value, not in one of its own size.
+        formatQuantity(own.standardError, show.unit(key, [own.value]), 2),
         show.range(own.value - half, own.value + half, key),
       ],
     ]
@@ -217,14 +219,15 @@ function fieldBlocks(plan: Plan, result: ReadingsResult, show: Show): readonly D
   if (formationNumber !== null)
     rows.push([
       'Measured formation number',
-      `${show.result(formationNumber.value, 'number')} ± ${show.result(formationNumber.standardError, 'number')}`,
+      `${show.result(formationNumber.value, 'number')}, standard error ${show.result(formationNumber.standardError, 'number')}`,
     ])
   if (pinchOff !== null) rows.push(['Pinched off at', show.result(pinchOff.time, 'wakeTime')])
   if (ring !== null)
     rows.push(
+      ['Frames of the ring', `${ring.from + 1} to ${ring.to + 1}`],
       ['Circulation of the ring', show.result(ring.circulation.value, 'circulation')],
       ['Radius', show.result(ring.radius.value, 'length')],
-      ['Core radius', show.result(ring.coreRadius.value, 'length')],
+      ['Core radius (median of the frames)', show.result(ring.coreRadius.value, 'length')],
       ['Impulse', show.result(ring.impulse.value, 'impulse')],
     )
   return [
@@ -240,19 +243,23 @@ function forceBlocks(plan: Plan, result: ReadingsResult, show: Show): readonly D
   if (force === null || section === null) return []
   const units = unitsOf(plan, result)
   const within = (value: number, error: number | null, key: 'force' | 'impulse'): string =>
-    error === null ? show.result(value, key) : `${show.result(value, key)} ± ${show.result(error, key)}`
+    error === null
+      ? show.result(value, key)
+      : `${show.result(value, key)}, standard error ${formatQuantity(error, show.unit(key, [value]), 2)}`
   const plots = [forcePlot(section.force, section.calibration, result, units), cyclePlot(result, units)]
   return [
     { kind: 'heading', text: 'Force' },
     {
       kind: 'pairs',
       rows: [
-        ['Mean over whole periods', within(force.mean, force.errors.mean, 'force')],
+        ...(force.mean === null
+          ? []
+          : [['Mean over whole periods', within(force.mean, force.errors.mean, 'force')] as const]),
         ['Peak', within(force.peak, force.errors.peak, 'force')],
         ['Impulse a pulse', within(force.impulse, force.errors.impulse, 'impulse')],
         ['Ripple', show.result(force.ripple, 'number')],
-        ['Whole periods', String(force.periods)],
-        ['Measured over predicted mean', show.result(force.lossFactor?.value, 'number')],
+        ...(force.mean === null ? [] : [['Whole periods', String(force.periods)] as const]),
+        ['Measured over predicted', show.result(force.lossFactor?.value, 'number')],
       ],
     },
     { kind: 'figures', items: plots.flatMap((model) => (model === null ? [] : [picture(model, SMALL)])) },
@@ -267,7 +274,7 @@ function noteBlocks({ notes }: ReadingsResult): readonly DocumentBlock[] {
   ]
 }
 
-function sourceBlocks(sources: readonly ReadingsSource[]): readonly DocumentBlock[] {
+function sourceBlocks(sources: readonly ReadingsSource[], fields: FieldFiles | null): readonly DocumentBlock[] {
   if (sources.length === 0) return []
   return [
     { kind: 'subheading', text: 'Files of the readings' },
@@ -275,7 +282,18 @@ function sourceBlocks(sources: readonly ReadingsSource[]): readonly DocumentBloc
       kind: 'table',
       caption: null,
       columns: [{ title: 'File' }, { title: 'SHA-256' }],
-      rows: sources.map(({ name, hash }) => [name, hash === '' ? 'pasted' : hash]),
+      rows: sources.map(({ name, hash, kind }) => [
+        kind === 'fields' ? setOf(name, fields) : name,
+        hash === '' ? 'pasted' : hash,
+      ]),
     },
   ]
+}
+
+/** The hash of velocity fields is of their set: of the hashes of the files, one a line. */
+function setOf(name: string, fields: FieldFiles | null): string {
+  const names = [...new Set(fields?.frames.map((frame) => frame.name) ?? [])]
+  const [first, last] = [names[0], names.at(-1)]
+  if (names.length < 2 || first === undefined || last === undefined) return `${name} (hash of its hash)`
+  return `Set of ${names.length} files, ${first} to ${last} (hash of their hashes, one a line)`
 }

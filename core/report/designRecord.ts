@@ -94,7 +94,7 @@ function summaryBlocks(context: RecordContext): readonly DocumentBlock[] {
     for (const { station, ring, time, timeLow, timeHigh } of (wake?.arrivals ?? []).slice(0, 4))
       rows.push([
         `Ring ${ring} at ${show.result(station, 'length')}`,
-        show.range(timeLow, timeHigh, 'wakeTime'),
+        timeHigh === null ? `${show.result(timeLow, 'wakeTime')} or later` : show.range(timeLow, timeHigh, 'wakeTime'),
         show.result(time, 'wakeTime'),
         'between the ageing laws where both were run',
       ])

@@ -160,10 +160,23 @@ const waveNumber: ExplanationMaker = (context) => ({
 })
 
 const trailingJet: ExplanationMaker = (context) => ({
-  title: 'Trailing jet',
-  mathml: formula(sub('Γ', 'jet'), '=', sub('Γ', 'total'), '−', sub('Γ', 'ring')),
+  title: 'Impulse left behind',
+  mathml: formula(
+    sub('I', 'jet'),
+    '=',
+    sub('I', 'total'),
+    '−',
+    sub('I', 'ring'),
+    ',',
+    sub('Γ', 'jet'),
+    '=',
+    sub('Γ', 'total'),
+    '−',
+    sub('Γ', 'ring'),
+  ),
   formula: 'What the whole pulse has beyond the ring that the same programme makes at the adopted formation number.',
   values: [
+    { name: 'trailing impulse', value: context.pulse.trailingJet.impulse, unit: 'N s' },
     { name: 'trailing circulation', value: context.pulse.trailingJet.circulation, unit: 'm²/s' },
     { name: 'stroke ratio', value: context.pulse.strokeRatio, unit: '' },
   ],

@@ -75,20 +75,27 @@ const speed: ThrusterExplanationMaker = ({ section, thruster }) => {
 
 const totalPower: ThrusterExplanationMaker = (context) => {
   const { section, thruster } = context
-  const { jet, nozzleLoss, refill, column, total } = thruster.power
+  const { jet, nozzleLoss, refill, column, carried, total } = thruster.power
   return {
     title: 'Total power',
     mathml: formula(
       'P =',
-      over(row(sub('P', 'jet'), '+', sub('P', 'loss'), '+', sub('P', 'refill'), '+', sub('P', 'column')), 'η'),
+      over(
+        row(
+          ...[sub('P', 'jet'), '+', sub('P', 'loss'), '+', sub('P', 'refill'), '+', sub('P', 'column')],
+          ...(carried > 0 ? ['+', sub('P', 'carried')] : []),
+        ),
+        'η',
+      ),
     ),
     formula:
-      'Kinetic energy of the jets, loss of the nozzle, head and loss of the intake, and the water in the nozzle that is set going at every pulse, over the efficiency of the actuator.',
+      'Kinetic energy of the jets, loss of the nozzle, head and loss of the intake, and the water in the nozzle that is set going at every pulse, over the efficiency of the actuator. Beyond a recovered share s of 1/2 the energy of the water that is carried along comes on top: ( 2 s − 1 ) ½ ρ Q V².',
     values: present(
       value('jet', jet, 'W'),
       value('nozzle loss', nozzleLoss, 'W'),
       value('refill', refill, 'W'),
       value('water in the nozzle', column, 'W'),
+      value('water carried along', carried > 0 ? carried : null, 'W'),
       value('actuator efficiency η', section.actuator.efficiency),
       value('total', total, 'W'),
     ),

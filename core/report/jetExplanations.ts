@@ -1,7 +1,7 @@
 /** The answer to "why?" beside every value of the computed starting jet. */
 import { FORMATION_STROKE, LIP_AVERAGE, type JetEnsemble } from '../coaxial'
 import type { Plan } from '../plan'
-import { formula, over, power, root, row, sub } from './mathml'
+import { formula, over, power, root, row, sub, words } from './mathml'
 import { PUBLISHED_RING_ENERGY } from './jetPlots'
 import type { Explanation } from './types'
 
@@ -52,7 +52,7 @@ const formationNumber: Maker = (context) => {
   ]
   return {
     title: 'Formation number, computed',
-    mathml: formula('F =', over('1', 'D'), '∫ U d t', 'at', sub('Γ', 'all'), '=', sub('Γ', 'ring')),
+    mathml: formula('F =', over('1', 'D'), '∫ U d t', words('at'), sub('Γ', 'all'), '=', sub('Γ', 'ring')),
     formula:
       'The stroke ratio at which everything shed so far had the circulation that the ring keeps once it has pinched off.',
     values,

@@ -5,7 +5,7 @@
  * at the peak speed: T* + U_peak (time since the end of the stroke) / D.
  */
 import { at, bracket } from '../base'
-import type { JetHistory, JetRun } from '../coaxial'
+import { FORMATION_STROKE_FROM, type JetHistory, type JetRun } from '../coaxial'
 import { compileProgramme, type ProgrammeInput } from '../pulse'
 
 export type JetMomentId = 'ring-full' | 'stroke-end' | 'pinch-off'
@@ -63,7 +63,7 @@ export function jetTimeline(run: JetRun, programme: ProgrammeInput, diameter: nu
     return [{ id, time, place: placeOf(time, valueAt(history, history.formationTime, time) ?? 0), label }]
   }
   const moments = [
-    ...momentAt('ring-full', run.formationInstant, 'ring full'),
+    ...momentAt('ring-full', run.formationInstant, fullInWords(stroke / diameter)),
     ...momentAt('stroke-end', duration, 'stroke ends'),
     ...momentAt('pinch-off', run.pinchOff?.time ?? null, 'pinch-off'),
   ].sort((a, b) => a.time - b.time)
@@ -80,6 +80,11 @@ export function jetTimeline(run: JetRun, programme: ProgrammeInput, diameter: nu
     end: Math.max(lastPlace, ...places),
     placeOf,
   }
+}
+
+/** The end of a shorter stroke cuts the ring short: what fills it is then not the formation number, which is read from a longer stroke. */
+function fullInWords(strokeRatio: number): string {
+  return strokeRatio < FORMATION_STROKE_FROM ? 'ring full in this run' : 'ring full'
 }
 
 /** Numbers of a run at a time [s], between the rows of its history by straight lines; null where there is no history. */

@@ -37,6 +37,11 @@ export function row(...items: readonly (Maths | string)[]): Maths {
   return element('mrow', items.map(piece))
 }
 
+/** A word between formulas, with its own space on both sides: tokens stand close together. */
+export function words(text: string): Maths {
+  return leaf('mtext', `\u00A0${text}\u00A0`)
+}
+
 export function over(top: Maths | string, bottom: Maths | string): Maths {
   return element('mfrac', [piece(top), piece(bottom)])
 }

@@ -113,8 +113,11 @@ interface Tick {
 
 /** Ticks of one axis with their text. */
 export function axisTicks(min: number, max: number, count: number): readonly Tick[] {
-  const step = tickStep(max - min, count)
-  return niceTicks(min, max, count).map((value) => ({ value, label: tickLabel(value, step) }))
+  // One number alone gives no scale: steps get finer until two stand on the axis.
+  let parts = count
+  while (max > min && niceTicks(min, max, parts).length < 2 && parts < 4 * count) parts += 1
+  const step = tickStep(max - min, parts)
+  return niceTicks(min, max, parts).map((value) => ({ value, label: tickLabel(value, step) }))
 }
 
 function unitText(model: PlotModel, width: number, font: number, colours: DrawingColours): string {

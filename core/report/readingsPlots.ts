@@ -294,7 +294,11 @@ export function cyclePlot({ force, prediction }: ReadingsResult, units: Readings
       },
     ],
     bands: [],
-    lines: [mark(force.mean, 'mean'), ...(expected === undefined ? [] : [mark(expected.value, 'predicted mean')])],
+    lines: [
+      ...(force.mean === null ? [] : [mark(force.mean, 'mean')]),
+      // Of one pulse the cycle is the log, over which no mean was predicted.
+      ...(expected === undefined || force.mean === null ? [] : [mark(expected.value, 'predicted mean')]),
+    ],
   }
 }
 

@@ -2,20 +2,12 @@
  * The run sheet: what the laboratory has beside the tank on paper. What to check, how to set piston, camera and light, what to expect,
  * in what order to run, and room for what is read.
  */
-import {
-  isFieldPath,
-  isUnitKey,
-  quantityDefinition,
-  unitKeyOf,
-  type Caution,
-  type Plan,
-  type SpreadQuantity,
-  type Units,
-} from '../plan'
+import type { Caution, Plan, SpreadQuantity, Units } from '../plan'
 import { formatNumber, formatQuantity } from '../quantity'
 import type { MatrixRun, TankRunResult } from '../tank'
 import { drawingColours } from './colours'
 import type { DocumentBlock, PrintDocument } from './document/types'
+import { combinationBlocks, fieldColumn } from './runSheetCombinations'
 import { cameraBlocks, pistonBlocks, shownNumber, stationBlocks, triggerBlocks } from './runSheetBlocks'
 import { tankScene } from './tankScene'
 import { tankSceneToSvg } from './tankSceneSvg'
@@ -75,6 +67,7 @@ export function runSheet(input: RunSheetInput): PrintDocument | null {
       ...cameraBlocks(result, units),
       ...waitingBlocks(result, cautions),
       ...cautionBlocks(cautions, MODELS),
+      ...combinationBlocks(result, section.stations, units),
       ...orderBlocks(result, section.stations, units),
       { kind: 'lines', label: 'Notes', count: 8 },
     ],
@@ -152,29 +145,33 @@ function orderBlocks({ matrix }: TankRunResult, stations: readonly number[], uni
   const fields = (matrix?.paths ?? []).map((path) => fieldColumn(path, units))
   const runs = matrix?.runs ?? Array.from({ length: BLANK_ROWS }, (_, i) => blankRun(i + 1))
   const several = (matrix?.blocks ?? 1) > 1
+  const marked = runs.some(({ ok }) => !ok)
   const read = stations.slice(0, Math.max(1, MOST_COLUMNS - fields.length))
   return [
-    { kind: 'pageBreak' },
+    // The table of combinations has taken the order to a page of its own already.
+    ...((matrix?.each.length ?? 0) < 2 ? [{ kind: 'pageBreak' } as const] : []),
     { kind: 'heading', text: 'Order of the runs' },
     {
       kind: 'table',
-      caption: `To be read: the time (${units.wakeTime}) each ring comes by a station.`,
+      caption: `To be read: the time (${units.wakeTime}) each ring comes by a station.${marked ? ' Runs with NO cannot be made as they stand: the combinations say why.' : ''}`,
       columns: [
         { title: 'Run', numeric: true },
         ...(several ? [{ title: 'Set-up', numeric: true }] : []),
         ...(matrix === null ? [] : [{ title: 'Repeat', numeric: true }]),
         ...fields.map(({ title }) => ({ title, numeric: true })),
+        ...(marked ? [{ title: 'Can be made' }] : []),
         ...read.map((x) => ({ title: `at ${formatQuantity(x, units.length)}`, blank: true })),
         { title: 'File', blank: true },
         { title: 'Seen', blank: true },
       ],
       rows: runs
         .slice(0, MOST_ROWS)
-        .map(({ run, block, repeat, values }) => [
+        .map(({ run, block, repeat, values, ok }) => [
           String(run),
           ...(several ? [String(block)] : []),
           ...(matrix === null ? [] : [String(repeat)]),
           ...fields.map(({ unit }, i) => shownNumber(values[i] ?? null, unit)),
+          ...(marked ? [ok ? 'yes' : 'NO'] : []),
           ...read.map(() => ''),
           '',
           '',
@@ -187,15 +184,5 @@ function orderBlocks({ matrix }: TankRunResult, stations: readonly number[], uni
 }
 
 function blankRun(run: number): MatrixRun {
-  return { run, block: 1, repeat: 1, values: [] }
-}
-
-/** Heading and unit of a field of the matrix. */
-function fieldColumn(path: string, units: Units): { readonly title: string; readonly unit: string } {
-  const definition = quantityDefinition(path)
-  if (definition === null) return { title: path, unit: '' }
-  const { dimension, label } = definition
-  const key = isFieldPath(path) ? unitKeyOf(path, dimension) : dimension
-  const unit = isUnitKey(key) ? units[key] : ''
-  return { title: unit === '' ? label : `${label} (${unit})`, unit }
+  return { run, block: 1, repeat: 1, values: [], ok: true, reason: null }
 }

@@ -144,7 +144,8 @@ export function cameraBlocks({ imaging, storage }: TankRunResult, units: Units):
         ...told('Scale', imaging.scale, (scale) => formatQuantity(scale, imageScale, 3)),
         ...told('Pair interval', imaging.pairInterval, (time) => formatQuantity(time, rampTime, 3)),
         ...told('Frame rate', imaging.frameRate, (rate) => formatQuantity(rate, frequency, 3)),
-        ...told('Frame pairs', imaging.pairs, String),
+        ...told('Frame pairs', imaging.pairs, (pairs) => `${pairs}, two frames each`),
+        ...told('Recording', recordingOf(imaging), (time) => formatQuantity(time, 's', 3)),
         ...told('Store of a run', storage, bytesText),
         ...told('Light sheet', imaging.sheetThickness, (thickness) => formatQuantity(thickness, length, 2)),
         ...told('Depth of field', imaging.depthOfField, (depth) => formatQuantity(depth, length, 2)),
@@ -155,6 +156,11 @@ export function cameraBlocks({ imaging, storage }: TankRunResult, units: Units):
       ],
     },
   ]
+}
+
+/** From the first frame to the last [s]. */
+function recordingOf({ pairs, pairRate, pairInterval }: TankRunResult['imaging']): number | null {
+  return pairs === null || pairRate === null ? null : (pairs - 1) / pairRate + (pairInterval ?? 0)
 }
 
 /** `174 MB`, `6.27 GB`. */

@@ -288,7 +288,6 @@ function linesOf(
 ): Pixel[] {
   const { xMin, xMax } = model.extents[part]
   const lines: ScenePoint[][] = [
-    ...(part === 'whole' ? clearances.map(({ from, to }) => [from, to]) : []),
     [
       { x: xMin, r: 0 },
       { x: xMax, r: 0 },
@@ -309,7 +308,9 @@ function linesOf(
       { x: a, r: h },
     ])
   }
-  return lines.flatMap((line) => pointsAlong(line.map(map), 5))
+  // Words on a dimension line read as its size: points this close outweigh any farther place.
+  const dimensions = part === 'whole' ? clearances.flatMap(({ from, to }) => pointsAlong([map(from), map(to)], 1)) : []
+  return [...dimensions, ...lines.flatMap((line) => pointsAlong(line.map(map), 5))]
 }
 
 /** A strip about the axis as far as the ring's way and its spread reach. */

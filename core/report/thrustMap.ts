@@ -8,6 +8,7 @@ import { formatNumber, fromBase } from '../quantity'
 import type { Design, DesignField, DesignMap, LimitName } from '../thruster'
 import type { Pixel } from './boxes'
 import { contourLines, regionAbove, valueBetween, type ContourGrid, type ContourLine } from './contours'
+import { mapScope, mapStanding } from './thrustMapWords'
 import { niceTicks } from './ticks'
 import type { PlotAxis } from './types'
 
@@ -49,6 +50,7 @@ export interface MapMark {
   readonly y: number
   /** False for a design that differs in what the map does not vary: its colour here is not its own. */
   readonly onMap: boolean
+  readonly count: number
 }
 
 export interface MapEdge {
@@ -81,13 +83,19 @@ export interface ThrustMapModel {
     readonly label: string
     readonly lines: readonly ContourLine[]
   }[]
+  /** What all of the map has in common: its number of thrusters. */
+  readonly scope: string
   /** Outlines of what breaks a limit. */
   readonly broken: readonly ContourLine[]
+  /** Outlines of what cannot give the thrust that is asked. */
+  readonly weak: readonly ContourLine[]
   readonly edges: readonly MapEdge[]
   /** Every limit that some choice of the map breaks, most often broken first. */
   readonly limits: readonly LimitName[]
   /** Share of the map that holds every limit. */
   readonly feasibleShare: number
+  /** Of how many thrusters the map is, whether anything holds its limits, and where candidates that are not on it lie. */
+  readonly standing: string
   readonly strips: readonly {
     readonly axis: 'x' | 'y'
     readonly from: number
@@ -120,6 +128,10 @@ const STEPS = 12
 const MOST_LEVELS = 10
 /** Room beyond which a broken choice has no say in the range of the colours. */
 const NEAR = -0.15
+/** Share of the map that choices must fill to set the range of the colours. */
+const ENOUGH = 0.02
+/** Share of the choices left beyond each end of the colours where none of them holds its limits. */
+const OUTLYING = 0.05
 
 /** The map's model. Values that are not numbers have no colour. */
 export function thrustMap(input: ThrustMapInput): ThrustMapModel {
@@ -133,7 +145,14 @@ export function thrustMap(input: ThrustMapInput): ThrustMapModel {
   const colours = colourRange(values, least)
   const title = MAP_RESULTS[result].title
   const bandName = input.underWay ? 'published pinch-off band, at this speed' : 'published pinch-off band'
+  const thrustRoom = map.rooms.get('thrust')
   const feasible = map.feasible.reduce((sum, one) => sum + one, 0)
+  const feasibleShare = feasible / map.feasible.length
+  const marks = [
+    ...candidates.map((design, i) => markOf(input, design, `candidate-${i + 1}`, 'candidate', `${i + 1}`)),
+    markOf(input, present, 'present', 'present', 'this plan'),
+  ]
+  const scope = mapScope(present)
   return {
     id: 'thrust-map',
     title: `${title} over ${x.axis.title.toLowerCase()} and ${y.axis.title.toLowerCase()}`,
@@ -146,10 +165,13 @@ export function thrustMap(input: ThrustMapInput): ThrustMapModel {
       label: formatNumber(level, 3),
       lines: contourLines(grid, level),
     })),
+    scope,
     broken: regionAbove({ ...grid, values: least.map((room) => -room) }, 0),
+    weak: thrustRoom === undefined ? [] : regionAbove({ ...grid, values: thrustRoom.map((room) => -room) }, 0),
     edges: edgesOf(map, grid, feasible > 0),
     limits: brokenLimits(map),
-    feasibleShare: feasible / map.feasible.length,
+    feasibleShare,
+    standing: mapStanding(scope, feasibleShare, marks),
     strips:
       published === null
         ? []
@@ -158,10 +180,7 @@ export function thrustMap(input: ThrustMapInput): ThrustMapModel {
               ? [{ axis, from: published[0], to: published[1], label: bandName }]
               : [],
           ),
-    marks: [
-      ...candidates.map((design, i) => markOf(input, design, `candidate-${i + 1}`, 'candidate', `${i + 1}`)),
-      markOf(input, present, 'present', 'present', 'this plan'),
-    ],
+    marks,
     map,
   }
 }
@@ -194,24 +213,22 @@ function leastRoom({ rooms, feasible }: DesignMap, but: LimitName | null = null)
 
 type ColourRange = Omit<ThrustMapModel['result'], 'title' | 'unit'>
 
-/** Colours span what holds its limits or nearly does; where nothing does, all there is. */
+/** Colours span what holds its limits; where that is too little, what nearly does, else all there is but its extremes. */
 function colourRange(values: Float64Array, least: Float64Array): ColourRange {
-  const ends = (counts: (cell: number) => boolean): readonly [number, number] => {
-    let [low, high] = [Infinity, -Infinity]
-    values.forEach((value, cell) => {
-      if (!Number.isFinite(value) || !counts(cell)) return
-      low = Math.min(low, value)
-      high = Math.max(high, value)
-    })
-    return [low, high]
-  }
-  const all = ends(() => true)
-  const near = ends((cell) => at(least, cell) >= NEAR)
-  const [from, to] = near[1] > near[0] ? near : all
+  const sorted = (counts: (cell: number) => boolean): Float64Array =>
+    values.filter((value, cell) => Number.isFinite(value) && counts(cell)).sort()
+  const all = sorted(() => true)
+  const [lowest = Infinity, highest = -Infinity] = [all[0], all.at(-1)]
+  const some = [0, NEAR]
+    .map((room) => sorted((cell) => at(least, cell) >= room))
+    .find((held) => held.length >= ENOUGH * values.length && (held.at(-1) ?? 0) > (held[0] ?? 0))
+  const shown = some ?? all
+  const cut = some === undefined ? Math.floor(OUTLYING * (all.length - 1)) : 0
+  const [from, to] = shown.length === 0 ? [Infinity, -Infinity] : [at(shown, cut), at(shown, shown.length - 1 - cut)]
   if (!(to > from)) return { low: from, high: to, logarithmic: false, levels: [], beyondLow: false, beyondHigh: false }
   const logarithmic = from > 0 && to / from >= LOGARITHMIC_FROM
   const levels = logarithmic ? ladder(from, to) : niceTicks(from, to, STEPS)
-  return { low: from, high: to, logarithmic, levels, beyondLow: all[0] < from, beyondHigh: all[1] > to }
+  return { low: from, high: to, logarithmic, levels, beyondLow: lowest < from, beyondHigh: highest > to }
 }
 
 /** 1, 2 and 5 times the powers of ten between two values, only the powers where that is too many. */
@@ -298,7 +315,7 @@ function markOf(
   const onMap = kept.every(
     (field) => Math.abs((design[field] ?? 0) / (present[field] ?? 1) - 1) < SAME || design[field] === present[field],
   )
-  return { id, kind, label, x: place(map.xField), y: place(map.yField), onMap }
+  return { id, kind, label, x: place(map.xField), y: place(map.yField), onMap, count: design.count }
 }
 
 /** What the map says at a place, for a cursor: the value, and the limits that are broken there. */
@@ -335,14 +352,14 @@ export function thrustMapToCsv({ grid, x, y, result, map }: ThrustMapModel): str
 }
 
 /** What the map shows, in words. */
-export function describeThrustMap({ title, result, feasibleShare, limits, marks }: ThrustMapModel): string {
+export function describeThrustMap({ title, scope, result, feasibleShare, limits, marks }: ThrustMapModel): string {
   const unit = result.unit === '' ? '' : ` ${result.unit}`
   const held =
     feasibleShare === 0
       ? 'No choice on this map holds every limit'
       : `${Math.round(100 * feasibleShare)} % of the choices hold every limit`
   return [
-    `${title}, ${formatNumber(result.low, 3)} to ${formatNumber(result.high, 3)}${unit}.`,
+    `${title}, ${scope}, ${formatNumber(result.low, 3)} to ${formatNumber(result.high, 3)}${unit}.`,
     `${held}.`,
     ...(limits.length === 0 ? [] : [`Limits in the way: ${limits.join(', ')}.`]),
     ...(marks.length > 1 ? [`${marks.length - 1} candidates are marked.`] : []),

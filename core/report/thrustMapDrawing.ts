@@ -30,6 +30,8 @@ export interface MapDrawing {
   readonly bands: readonly { readonly d: string; readonly paint: Paint }[]
   /** What breaks a limit. */
   readonly veil: string
+  /** What cannot give the thrust, under a second veil. */
+  readonly weak: string
   readonly contours: readonly { readonly d: string; readonly paint: Paint }[]
   readonly edges: readonly { readonly name: string; readonly d: string; readonly hatch: string }[]
   /** Dashed ends of the published band and its strip along the axis. */
@@ -201,6 +203,7 @@ export function thrustMapDrawing(model: ThrustMapModel, size: MapSize): MapDrawi
     frame,
     bands,
     veil: path(model.broken, true),
+    weak: path(model.weak, true),
     contours: model.contours.map(({ level, lines }) => ({
       d: path(lines),
       paint: paintOf(colourShare(result, level)),

@@ -37,14 +37,15 @@ export function thrustMapToSvg(model: ThrustMapModel, size: DrawingSize): string
     font,
     measure: (text) => textWidth(text, font),
   })
-  const title = escapeXml(model.title)
+  const heading = `${model.title}, ${model.scope}`
+  const title = escapeXml(heading)
   return [
     `<svg xmlns="http://www.w3.org/2000/svg" width="${coordinate(width)}" height="${coordinate(height)}" `,
     `viewBox="0 0 ${coordinate(width)} ${coordinate(height)}" role="img" aria-labelledby="thrust-map-title thrust-map-desc" `,
     `font-family="${escapeXml(FONT_FAMILY)}" style="font-variant-numeric:tabular-nums">`,
     `<title id="thrust-map-title">${title}</title><desc id="thrust-map-desc">${escapeXml(describeThrustMap(model))}</desc>`,
     `<rect width="${coordinate(width)}" height="${coordinate(height)}" fill="${colours.ground}"/>`,
-    svgText(model.title, 10, 18, { size: font + 1, colour: colours.ink, weight: 600 }),
+    svgText(heading, 10, 18, { size: font + 1, colour: colours.ink, weight: 600 }),
     `<g transform="translate(0 ${HEADING})">`,
     ...field(drawing, colours),
     ...drawing.texts.map((text) => label(text, font, colours)),
@@ -55,7 +56,7 @@ export function thrustMapToSvg(model: ThrustMapModel, size: DrawingSize): string
 }
 
 function field(
-  { frame, bands, veil, contours, edges, strips, ticks, scale }: MapDrawing,
+  { frame, bands, veil, weak, contours, edges, strips, ticks, scale }: MapDrawing,
   colours: DrawingColours,
 ): string[] {
   const box = `x="${coordinate(frame.left)}" y="${coordinate(frame.top)}" width="${coordinate(frame.width)}" height="${coordinate(frame.height)}"`
@@ -63,6 +64,7 @@ function field(
     `<clipPath id="thrust-map-frame"><rect ${box}/></clipPath><g clip-path="url(#thrust-map-frame)">`,
     ...bands.map(({ d, paint }) => `<path d="${d}" fill="${paintText(paint)}" fill-rule="evenodd"/>`),
     veil === '' ? '' : `<path d="${veil}" fill="${colours.ground}" fill-opacity="0.62" fill-rule="evenodd"/>`,
+    weak === '' ? '' : `<path d="${weak}" fill="${colours.ground}" fill-opacity="0.62" fill-rule="evenodd"/>`,
     ...contours.map(
       ({ d, paint }) => `<path d="${d}" fill="none" stroke="${inkOn(paint)}" stroke-opacity="0.7" stroke-width="0.9"/>`,
     ),

@@ -287,7 +287,7 @@ export function sizePlot(
 
 /** One part of the power, to be drawn as a piece of a bar. */
 export interface PowerPart {
-  readonly id: 'jet' | 'nozzleLoss' | 'refill' | 'column' | 'actuator'
+  readonly id: 'jet' | 'nozzleLoss' | 'refill' | 'column' | 'carried' | 'actuator'
   readonly label: string
   /** [W] */
   readonly power: number
@@ -297,13 +297,14 @@ export interface PowerPart {
 
 /** Where the power goes, from the jet to what the actuator loses; parts that sum to the total. */
 export function powerBar({ power }: Pick<ThrusterResult, 'power'>): readonly PowerPart[] {
-  const { jet, nozzleLoss, refill, column, total } = power
+  const { jet, nozzleLoss, refill, column, carried, total } = power
   const parts = [
     ['jet', 'jet', jet],
     ['nozzleLoss', 'nozzle loss', nozzleLoss],
     ['refill', 'refill', refill],
     ['column', 'water column', column],
-    ['actuator', 'actuator loss', total - jet - nozzleLoss - refill - column],
+    ['carried', 'water carried along', carried],
+    ['actuator', 'actuator loss', total - jet - nozzleLoss - refill - column - carried],
   ] as const
   return parts
     .filter(([, , watts]) => watts > 1e-12 * total)

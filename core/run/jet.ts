@@ -142,7 +142,7 @@ export function jetData(
   const notes: string[] = []
   if (formation !== null && formation !== own)
     notes.push(
-      `The formation number is that of the same start${plan.programme.shape === 'table' ? ', the table stretched in time,' : ' and peak speed'} with a stroke of ${FORMATION_STROKE} D: the plan's own stroke of ${own.shown.strokeRatio.toFixed(2)} D ends before a ring is full.`,
+      `The formation number is that of the same start${plan.programme.shape === 'table' ? ', the table stretched in time,' : ' and peak speed'} with a stroke of ${FORMATION_STROKE} D: the plan's own stroke of ${own.shown.strokeRatio.toFixed(2)} D is too short to tell it, for its end cuts the ring short, pinched off or not.`,
     )
   const { atStrokeEnd, beyondSlug } = own.shown
   if (atStrokeEnd !== null && beyondSlug !== null && own.energyBeyondSlug < 0) {

@@ -133,7 +133,9 @@ export async function run(plan: Plan, request: RunRequest, options: JetRunOption
     }
     if (wants('tankRun') && plan.tankRun !== null) {
       const { planTankRun } = await import('./planTankRun')
-      const tankRun = await planTankRun(tankRunInputOf(plan, plan.tankRun, water, adopted), part('tankRun'))
+      const { combined, ...day } = tankRunInputOf(plan, plan.tankRun, water, adopted)
+      const judged = request.order === 'plain' || combined === undefined ? {} : { combined }
+      const tankRun = await planTankRun({ ...day, ...judged }, part('tankRun'))
       state = { ...state, tankRun }
       if (tankRun.status !== 'done') return ended(tankRun.status, tankRun.message)
     }

@@ -28,7 +28,7 @@ export function drawnFields(plan: Plan, { relative, absolute }: SpreadSection): 
   if (named.length === 0)
     throw new DomainError(
       'spread.relative',
-      'spread must name at least one number under relative or absolute, got none',
+      'spread.relative must name at least one number that scatters, or spread.absolute, for instance "relative": { "programme.stroke": 0.01 }, got none',
     )
   return named
     .map((one): DrawnField => {

@@ -82,7 +82,7 @@ export function sweepDesign(plan: Plan): SweepDesign {
     paths: fields.map(({ path }) => path),
     results,
     total: fields.reduce((product, { values }) => product * values.length, 1),
-    request: { sections: [...sections], sizing },
+    request: { sections: [...sections], sizing, order: 'plain' },
   }
 }
 

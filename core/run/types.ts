@@ -26,6 +26,11 @@ export interface RunRequest {
    * stands is computed. For runs at every change.
    */
   readonly sizing?: 'run' | 'off'
+  /**
+   * judged (as it is where it is not given): every combination of a tank run's matrix is held against drive and tank. plain: the order
+   * only. For sweeps, whose rows do not read it.
+   */
+  readonly order?: 'judged' | 'plain'
   /** What the velocity fields that belong to the readings gave; absent or null: none were read. */
   readonly fields?: FieldResult | null
 }

@@ -3,7 +3,7 @@
  * ring Reynolds number does not say which.
  */
 import { DomainError } from '../base'
-import { trainRings, type JetRun, type WakeAgeing } from '../coaxial'
+import { LARGEST_TUBE_SHARE, trainRings, type JetRun, type WakeAgeing } from '../coaxial'
 import { marchWake, ringsOfNozzles, type Wake, type WakeInput, type WakeRing } from '../filament'
 import { loadKernel, type Kernel } from '../kernel'
 import type { Plan, WakeSection } from '../plan'
@@ -19,7 +19,9 @@ export interface WakeArrival {
   readonly ring: number
   readonly time: number
   readonly timeLow: number
-  readonly timeHigh: number
+  /** null where the march under the other law ended before the ring arrived: the range is open. */
+  readonly timeHigh: number | null
+  readonly open: boolean
 }
 
 export interface WakeData {
@@ -53,6 +55,7 @@ export async function wakeOf(
 ): Promise<WakeData> {
   const kernel = options.kernel ?? (await loadKernel())
   const { rings, notes, jet } = ringsOfPlan(plan, section, water, pulse, formed, kernel)
+  if (section.rings.length === 0) checkTube(section.tube, rings)
   const laws = ageingLaws(section, rings, water.kinematicViscosity)
   const march = async (ageing: WakeAgeing, from: number, share: number): Promise<Wake> => {
     const input = inputOf(plan, section, water, rings, ageing)
@@ -95,6 +98,17 @@ function ringsOfPlan(
   if (pulse.pinchedOff === true)
     notes.push('The trailing jet behind each ring is left out: only the rings are followed.')
   return { rings: ringsOfNozzles(made.rings, section.nozzles, plan.nozzle.axisRatio), notes, jet: null }
+}
+
+/** Rings of the pulse stand nowhere in the plan: a tube too small for them is refused by its own name. @throws {DomainError} */
+function checkTube(tube: number | null, rings: readonly WakeRing[]): void {
+  const largest = Math.max(...rings.map(({ radius }) => radius))
+  if (tube === null || !(tube > 0) || largest <= LARGEST_TUBE_SHARE * tube) return
+  const number = (value: number): number => Number(value.toPrecision(6))
+  throw new DomainError(
+    'wake.tube',
+    `wake.tube must be at least ${number(largest / LARGEST_TUBE_SHARE)} m in radius, for rings of the pulse of radius ${number(largest)} m fill at most ${LARGEST_TUBE_SHARE} of it, got ${number(tube)} m`,
+  )
 }
 
 function inputOf(
@@ -142,10 +156,12 @@ function arrivalsOf(wake: Wake, other: Wake | null): WakeArrival[] {
       event.event === 'arrival' ? [[key(event.rings, event.x), event.time] as const] : [],
     ),
   )
-  return wake.events.flatMap(({ event, rings, x, time }) => {
+  return wake.events.flatMap(({ event, rings, x, time }): WakeArrival[] => {
     const ring = rings[0]
     if (event !== 'arrival' || ring === undefined || x === null) return []
-    const second = others.get(key(rings, x)) ?? time
-    return [{ station: x, ring, time, timeLow: Math.min(time, second), timeHigh: Math.max(time, second) }]
+    const second = other === null ? time : others.get(key(rings, x))
+    if (second === undefined) return [{ station: x, ring, time, timeLow: time, timeHigh: null, open: true }]
+    const [timeLow, timeHigh] = [Math.min(time, second), Math.max(time, second)]
+    return [{ station: x, ring, time, timeLow, timeHigh, open: false }]
   })
 }

@@ -14,7 +14,7 @@ import {
 } from '../coaxial'
 import type { Wake } from '../filament'
 import { loadKernel, type Kernel } from '../kernel'
-import { JET_DEFAULTS, type Plan, type WakeSection } from '../plan'
+import { JET_DEFAULTS, pulsesOverlap, type Plan, type WakeSection } from '../plan'
 import type { PulseResult } from '../pulse'
 import type { WaterProperties } from '../water'
 import { jetInput, type JetRunOptions } from './jet'
@@ -30,6 +30,8 @@ export interface WakeJet {
   readonly release: JetRelease
   /** When the ring was seen to pinch off; null where one ring took everything. */
   readonly pinchOff: JetPinchOff | null
+  /** Centroid of the ring then [m]; null where no ring is known. */
+  readonly pinchOffX: number | null
   /** Smoothing over D of the run. */
   readonly delta: number
   /** Shapes of the sheet of one pulse, up to the release. */
@@ -135,7 +137,15 @@ export function jetRings(
   const snapshots = run.snapshots.filter(({ time }) => time <= release.time)
   return {
     rings,
-    jet: { pulses, period, release, pinchOff: run.pinchOff, delta: run.delta, snapshots },
+    jet: {
+      pulses,
+      period,
+      release,
+      pinchOff: run.pinchOff,
+      pinchOffX: run.ring?.x ?? null,
+      delta: run.delta,
+      snapshots,
+    },
     notes: notesOf(release, run, pulses, period, pulse.duration),
   }
 }
@@ -162,7 +172,7 @@ function notesOf(
     )
   if (pulses > 1)
     notes.push(
-      `Each jet is computed alone: what earlier rings do to the sheet while it forms is left out${period < duration ? ', though the pulses overlap' : ''}.`,
+      `Each jet is computed alone: what earlier rings do to the sheet while it forms is left out${pulsesOverlap(period, duration) ? ', though the pulses overlap' : ''}.`,
     )
   return notes
 }
@@ -177,7 +187,7 @@ function percent(share: number): string {
 
 /** The wake with its pinch-offs among the events, as far as it came. */
 export function withPinchOffs(wake: Wake, jet: WakeJet): Wake {
-  const { pinchOff, release, pulses, period } = jet
+  const { pinchOff, pinchOffX, release, pulses, period } = jet
   if (pinchOff === null) return wake
   const formation = pinchOff.formationTime.toFixed(2)
   const told = Array.from({ length: pulses }, (_, k): WakeEvent => {
@@ -186,8 +196,8 @@ export function withPinchOffs(wake: Wake, jet: WakeJet): Wake {
       time: k * period + pinchOff.time,
       event: 'pinch-off',
       rings: [number],
-      x: pinchOff.cutX,
-      detail: `pulse ${k + 1}, seen at formation time ${formation}`,
+      x: pinchOffX,
+      detail: `pulse ${k + 1}, seen at formation time ${formation}; cut at x = ${Number(pinchOff.cutX.toPrecision(4))} m`,
     }
   }).filter(({ time }) => time <= wake.time)
   const ends = wake.events.filter(({ event }) => event === 'end')

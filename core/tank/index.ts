@@ -14,6 +14,7 @@ export {
   type RingVariant,
   type TankArrival,
 } from './arrivals'
+export type { CombinedInput } from './combinations'
 export { clearances, type Clearance, type ClearanceInput, type WallName } from './clearances'
 export { imaging, type Imaging, type ImagingInput, type ImagingNote, type Refraction, type RingSeen } from './imaging'
 export {
@@ -49,7 +50,14 @@ export {
   type WindowView,
 } from './refraction'
 export type { Passage, RingPath } from './ringPath'
-export { MOST_RUNS, runMatrix, type MatrixRun, type RunMatrix } from './runMatrix'
+export {
+  MOST_RUNS,
+  runMatrix,
+  type Combination,
+  type ExpectedArrival,
+  type MatrixRun,
+  type RunMatrix,
+} from './runMatrix'
 export { settling, TUBE_LAMINAR_BELOW, WAITING_OVER_PASSAGE, type Settling, type SettlingInput } from './settling'
 export type { TankPath } from './tankPath'
 export { planTankRun, type FollowedRing, type TankRunInput, type TankRunResult } from './tankRun'

@@ -2,12 +2,12 @@
  * Which stroke and peak speed give what is wanted of the ring: for each of a set of strokes the peak speed, found by a bracketed root
  * through the whole pulse, and for a speed at a station through the ring's march as well.
  */
-import { DomainError, requireRange } from '../base'
+import { requireRange } from '../base'
 import type { WakeAgeing } from '../coaxial'
 import { loadKernel, type Kernel } from '../kernel'
 import { computePulse, withStroke, type ProgrammeInput, type PulseInput, type PulseResult } from '../pulse'
 import { ageingLaws } from './arrivals'
-import { pistonProfile } from './profile'
+import { driveVerdict } from './driveVerdict'
 import { ringPath } from './ringPath'
 import { risingRoot } from './risingRoot'
 import type { DriveInput, TankOptions, TankTarget } from './types'
@@ -28,19 +28,24 @@ export interface InverseInput {
 export interface Solution {
   readonly stroke: number
   readonly strokeRatio: number
-  /** At the exit [m/s]. */
+  /** Reached at the exit [m/s]. */
   readonly peakSpeed: number | null
+  /** What the programme asks for it [m/s]: above the peak reached where a trapezoid is too short for its ramps. */
+  readonly askedPeakSpeed: number | null
   readonly circulation: number | null
   /** Gamma / nu of the ring. */
   readonly reynolds: number | null
   /** Of the target's station; null for other targets [m/s]. */
   readonly speedAtStation: number | null
-  /** Of the piston, leak included [m/s], [m]. */
+  /** Of the piston at the peak reached, before rounding, leak included [m/s], [m]. */
   readonly pistonSpeed: number | null
   readonly pistonTravel: number | null
   /** Law the ring ages by on its way to the station; null for other targets. */
   readonly ageing: WakeAgeing | null
-  /** False where there is no solution, or the drive cannot follow it. */
+  /** Whether the stroke ratio lies past the formation number the plan adopts, and that number; null where none is adopted. */
+  readonly pinchedOff: boolean | null
+  readonly formationNumber: number | null
+  /** False where there is no solution, or the drive cannot make it: by the peak reached and by the profile that would run. */
   readonly ok: boolean
   readonly reason: string | null
 }
@@ -64,7 +69,7 @@ export async function solutionsFor(input: InverseInput, options: TankOptions = {
   const strokes =
     input.strokes === undefined
       ? usualStrokes(diameter, own.stroke)
-      : input.strokes.map((stroke) => ({ stroke, strokeRatio: stroke / diameter }))
+      : input.strokes.map((stroke) => ({ stroke, strokeRatio: tidy(stroke / diameter) }))
   requireRange('strokes.length', strokes.length, { min: 1, max: MOST_STROKES })
   const kernel = options.kernel ?? (await loadKernel())
   const rising = [...new Map(strokes.map((one) => [one.stroke, one])).values()].toSorted((a, b) => a.stroke - b.stroke)
@@ -89,9 +94,9 @@ interface TriedStroke {
 
 /** The usual ratios as they are given, and the plan's own stroke where it is none of them but for rounding. */
 function usualStrokes(diameter: number, own: number): readonly TriedStroke[] {
-  const usual = STROKE_RATIOS.map((strokeRatio) => ({ stroke: strokeRatio * diameter, strokeRatio }))
+  const usual = STROKE_RATIOS.map((strokeRatio) => ({ stroke: tidy(strokeRatio * diameter), strokeRatio }))
   const known = usual.some(({ stroke }) => Math.abs(stroke - own) <= ROUNDING * own)
-  return known ? usual : [...usual, { stroke: own, strokeRatio: own / diameter }]
+  return known ? usual : [...usual, { stroke: tidy(own), strokeRatio: tidy(own / diameter) }]
 }
 
 function requireTarget(target: TankTarget): void {
@@ -161,12 +166,15 @@ function lawOf(circulation: number, { pulse, ageing }: InverseInput): WakeAgeing
 
 const NOTHING = {
   peakSpeed: null,
+  askedPeakSpeed: null,
   circulation: null,
   reynolds: null,
   speedAtStation: null,
   pistonSpeed: null,
   pistonTravel: null,
   ageing: null,
+  pinchedOff: null,
+  formationNumber: null,
   ok: false,
 }
 
@@ -252,36 +260,32 @@ function found(
   peakSpeed: number,
   programme: ProgrammeInput,
 ): Omit<Solution, 'stroke' | 'strokeRatio'> {
-  const { ring } = met.pulse
-  const perPiston = 1 / (1 - input.drive.leak)
-  const drive = driveVerdict(input, programme)
+  const { ring, pinchedOff, formationNumber } = met.pulse
+  const { drive, controllerStep, pulse } = input
+  const verdict = driveVerdict({
+    programme,
+    nozzle: pulse.nozzle,
+    drive,
+    controllerStep,
+    ...(ring === null ? {} : { circulation: ring.circulation }),
+  })
   return {
-    peakSpeed,
+    peakSpeed: tidy(met.pulse.peakSpeed),
+    askedPeakSpeed: tidy(peakSpeed),
     circulation: ring?.circulation ?? null,
     reynolds: ring?.reynolds ?? null,
     speedAtStation: input.target.kind === 'speed' ? met.value : null,
-    pistonSpeed: met.pulse.pistonPeakSpeed * perPiston,
-    pistonTravel: met.pulse.pistonTravel * perPiston,
+    pistonSpeed: verdict.pistonSpeed,
+    pistonTravel: verdict.pistonTravel,
     ageing: law,
-    ok: drive === null,
-    reason: drive,
+    pinchedOff,
+    formationNumber: formationNumber.adopted,
+    ok: verdict.ok,
+    reason: verdict.reason,
   }
 }
 
-/** Why the drive cannot follow; null where it can. */
-function driveVerdict(input: InverseInput, programme: ProgrammeInput): string | null {
-  try {
-    const profile = pistonProfile({
-      programme,
-      nozzle: input.pulse.nozzle,
-      controllerStep: input.controllerStep,
-      drive: input.drive,
-    })
-    const broken = profile.limits.filter(({ ok }) => !ok)
-    return broken.length === 0 ? null : broken.map(({ text }) => text).join(' ')
-  } catch (error) {
-    // A solution too short or too long for the controller's step is one more that the drive cannot follow.
-    if (error instanceof DomainError && error.field === 'tankRun.controllerStep') return error.message
-    throw error
-  }
+/** Twelve digits: 0.075, not 0.07500000000000001. */
+function tidy(value: number): number {
+  return Number(value.toPrecision(12))
 }

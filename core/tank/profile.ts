@@ -235,26 +235,34 @@ function driveLimits(
   values: Readonly<Record<DriveLimitName, number>>,
   rounded: boolean,
 ): readonly DriveLimit[] {
-  const rows: readonly [DriveLimitName, number | null, string, string][] = [
-    ['travel', drive.maxTravel, 'm', 'a shorter stroke or a wider piston'],
-    ['speed', drive.maxSpeed, 'm/s', 'a lower peak speed or a wider piston'],
-    ['acceleration', drive.maxAcceleration, 'm/s2', 'longer ramps or a lower peak speed'],
-    ['jerk', drive.maxJerk, 'm/s3', 'longer ramps or a lower peak speed'],
+  return [
+    driveLimit('travel', values.travel, drive.maxTravel),
+    driveLimit('speed', values.speed, drive.maxSpeed),
+    driveLimit('acceleration', values.acceleration, drive.maxAcceleration, rounded),
+    driveLimit('jerk', values.jerk, drive.maxJerk, rounded),
   ]
-  return rows.map(([name, limit, unit, help]) => {
-    const value = values[name]
-    // The rounding keeps its two limits to the rounding of sums.
-    const ok = limit === null || value <= limit * (1 + 1e-9)
-    const least =
-      !rounded && (name === 'acceleration' || name === 'jerk') ? ' even with ramps as long as the stroke' : ''
-    const text =
-      limit === null
-        ? `Piston ${name} ${short(value)} ${unit}; no limit is told.`
-        : ok
-          ? `Piston ${name} ${short(value)} ${unit} is within the drive's ${short(limit)} ${unit}.`
-          : `Piston ${name} ${short(value)} ${unit} is above the drive's ${short(limit)} ${unit}${least}: ${help} keeps it.`
-    return { name, value, limit, ok, text }
-  })
+}
+
+const LIMIT_WORDS: Readonly<Record<DriveLimitName, readonly [unit: string, help: string]>> = {
+  travel: ['m', 'a shorter stroke or a wider piston'],
+  speed: ['m/s', 'a lower peak speed or a wider piston'],
+  acceleration: ['m/s2', 'longer ramps or a lower peak speed'],
+  jerk: ['m/s3', 'longer ramps or a lower peak speed'],
+}
+
+/** One limit of a drive held against a value [SI]. @param rounded false: the longest rounding was not enough */
+export function driveLimit(name: DriveLimitName, value: number, limit: number | null, rounded = true): DriveLimit {
+  const [unit, help] = LIMIT_WORDS[name]
+  // The rounding keeps its two limits to the rounding of sums.
+  const ok = limit === null || value <= limit * (1 + 1e-9)
+  const least = rounded ? '' : ' even with ramps as long as the stroke'
+  const text =
+    limit === null
+      ? `Piston ${name} ${short(value)} ${unit}; no limit is told.`
+      : ok
+        ? `Piston ${name} ${short(value)} ${unit} is within the drive's ${short(limit)} ${unit}.`
+        : `Piston ${name} ${short(value)} ${unit} is above the drive's ${short(limit)} ${unit}${least}: ${help} keeps it.`
+  return { name, value, limit, ok, text }
 }
 
 /** Rounding of a product taken off: 0.15, not 0.15000000000000002. */

@@ -16,6 +16,33 @@ export interface MatrixRun {
   readonly repeat: number
   /** In the order of the fields. */
   readonly values: readonly number[]
+  /** False: the drive cannot make it, or it cannot be. */
+  readonly ok: boolean
+  readonly reason: string | null
+}
+
+/** Between two times after the piston's start [s]. */
+export interface ExpectedArrival {
+  readonly station: number
+  /** null where the ring is not seen. */
+  readonly timeLow: number | null
+  readonly timeHigh: number | null
+}
+
+/** One combination of the levels as the drive and the tank take it. */
+export interface Combination {
+  /** In the order of the fields. */
+  readonly values: readonly number[]
+  /** Of the piston before rounding, leak included [m/s], [m]; null for what cannot be. */
+  readonly pistonSpeed: number | null
+  readonly pistonTravel: number | null
+  /** In the order of the stations; null beyond the first combinations, and for what cannot be. */
+  readonly arrivals: readonly ExpectedArrival[] | null
+  /** From the first motion of the piston to the earliest passage of a station, and from there to the latest [s]. */
+  readonly cameraDelay: number | null
+  readonly recordLength: number | null
+  readonly ok: boolean
+  readonly reason: string | null
 }
 
 export interface RunMatrix {
@@ -23,6 +50,8 @@ export interface RunMatrix {
   readonly runs: readonly MatrixRun[]
   /** Combinations without their repeats. */
   readonly combinations: number
+  /** Each combination held against drive and tank, rising in the levels of the fields; empty where that was not asked for. */
+  readonly each: readonly Combination[]
   readonly blocks: number
   /** [s]: runs with their waiting, changes of set-up, and the sum. */
   readonly time: { readonly runs: number; readonly setUps: number; readonly total: number }
@@ -53,6 +82,7 @@ export function runMatrix(
     paths: input.fields.map(({ path }) => path),
     runs,
     combinations: combinations.length,
+    each: [],
     blocks,
     time: { ...time, total },
     storage,
@@ -152,7 +182,7 @@ function ordered(
     for (const values of shuffled(rows, random)) {
       const repeat = (seen.get(values) ?? 0) + 1
       seen.set(values, repeat)
-      runs.push({ run: runs.length + 1, block: block + 1, repeat, values })
+      runs.push({ run: runs.length + 1, block: block + 1, repeat, values, ok: true, reason: null })
     }
   })
   return runs

@@ -6,6 +6,7 @@ import type { WakeAgeing } from '../coaxial'
 import { computePulse, type PulseInput, type PulseResult } from '../pulse'
 import { tankArrivals, type Arrivals, type TankArrival } from './arrivals'
 import { clearances, type Clearance } from './clearances'
+import { judgedMatrix, type CombinedInput } from './combinations'
 import { imaging, type Imaging, type RingSeen } from './imaging'
 import { solutionsFor, type Solution } from './inverse'
 import { pistonProfile, type PistonProfile } from './profile'
@@ -25,6 +26,8 @@ export interface TankRunInput {
   readonly ageing: 'auto' | WakeAgeing
   /** Kind of water: its refractive index. */
   readonly water: 'fresh' | 'sea' | 'given'
+  /** The day at levels of the matrix, in the order of its fields; absent: the order is not held against drive and tank. */
+  readonly combined?: (values: readonly number[]) => CombinedInput
 }
 
 /** A ring that was followed: one end of the range, or the value itself, which is the first. */
@@ -112,10 +115,12 @@ export async function planTankRun(input: TankRunInput, options: TankOptions = {}
     pairInterval: pictures.pairInterval,
     recording: recordingOf(pictures),
   })
-  const matrix =
+  const order =
     section.matrix === null
       ? null
       : runMatrix(section.matrix, { settlingTime: waiting.settlingTime, storage: pictures.storage })
+  const asked = order !== null && input.combined !== undefined && arriving.status === 'done'
+  const judged = asked ? await judgedMatrix(order, input.combined, withoutProgress(options)) : order
   const solutions =
     section.target === null || arriving.status !== 'done'
       ? []
@@ -123,6 +128,7 @@ export async function planTankRun(input: TankRunInput, options: TankOptions = {}
           { target: section.target, pulse, drive, controllerStep, ageing: input.ageing, walls },
           withProgress(options, ARRIVALS_SHARE, 1),
         )
+  const matrix = judged ?? order
   const status = options.signal?.aborted === true ? 'cancelled' : arriving.status
   return {
     status,
@@ -165,6 +171,15 @@ function jetNotes({ section, pulse }: TankRunInput): readonly string[] {
   return [
     "The strokes and peak speeds for the target keep what the computed jet adds to the slug at the plan's own stroke and speed: compute the jet anew with the one you take.",
   ]
+}
+
+/** The combinations take little beside a search: what is told of them is in the shares about them. */
+function withoutProgress({ kernel, signal, pause }: TankOptions): TankOptions {
+  return {
+    ...(kernel === undefined ? {} : { kernel }),
+    ...(signal === undefined ? {} : { signal }),
+    ...(pause === undefined ? {} : { pause }),
+  }
 }
 
 function withProgress(options: TankOptions, from: number, to: number): TankOptions {

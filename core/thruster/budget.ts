@@ -72,7 +72,12 @@ export interface ThrusterPower {
   readonly refill: number
   /** To set the water in the nozzle going, every pulse; braking gives nothing back. */
   readonly column: number
-  /** The four together over the actuator's efficiency. */
+  /**
+   * max(0, 2 s - 1) times the kinetic energy of the water taken in at the speed of the vehicle: momentum that is kept has its energy too,
+   * and beyond s = 1/2 the water no longer brings it along. With it no overall efficiency is above the Froude efficiency.
+   */
+  readonly carried: number
+  /** The five together over the actuator's efficiency. */
   readonly total: number
 }
 
@@ -193,7 +198,9 @@ export function vehicleBudget(moments: StrokeMoments, setting: BudgetSetting): B
   const nozzleLoss = pulses * setting.lossCoefficient * 0.5 * density * area * moments.integralSpeedCubed
   const refill = pulses * volume * intakeHead * REFILL_CUBE * intakeMean * intakeMean
   const column = pulses * 0.5 * density * area * setting.nozzleLength * moments.risenSpeedSquared
-  const total = (jet + nozzleLoss + refill + column) / setting.efficiency
+  const carriedHead = Math.max(0, 2 * setting.recoveredShare - 1) * 0.5 * density * speed * speed
+  const carried = count * flow * carriedHead
+  const total = (jet + nozzleLoss + refill + column + carried) / setting.efficiency
 
   const useful = meanThrust * speed
   const balance = jet + (2 * setting.recoveredShare - 1) * 0.5 * density * count * flow * speed * speed
@@ -203,7 +210,9 @@ export function vehicleBudget(moments: StrokeMoments, setting: BudgetSetting): B
   const refillSlope = fits ? (REFILL_SLOPE * travel) / (refillTime * refillTime) : Infinity
   const plungerPerExit = area / plungerArea
   const peaks = peaksOfStroke(moments, setting, area, plungerPerExit, energy / slugEnergy)
-  const refillPower = intakeArea * intakeHead * intakeSpeed ** 3
+  // The water is carried along from the moment it is taken in.
+  const carriedPeak = carriedHead > 0 ? intakeArea * intakeSpeed * carriedHead : 0
+  const refillPower = intakeArea * intakeHead * intakeSpeed ** 3 + carriedPeak
   return {
     thrustPerPulse,
     meanThrust,
@@ -212,7 +221,7 @@ export function vehicleBudget(moments: StrokeMoments, setting: BudgetSetting): B
     steadyJetThrust,
     thrustRatio: meanThrust / steadyJetThrust,
     proximityLoss: proximity,
-    power: { jet, nozzleLoss, refill, column, total },
+    power: { jet, nozzleLoss, refill, column, carried, total },
     froudeEfficiency: moves && balance > 0 ? useful / balance : null,
     overallEfficiency: moves ? useful / total : null,
     impulse,

@@ -109,6 +109,7 @@ export function thrusterCycle(
   const perSpeedSquared = (budget.impulse * Math.cos(setting.cant)) / programme.moments.square
   const intakeArea = setting.intakeArea ?? area
   const intakeHead = 0.5 * density * (1 + setting.intakeLossCoefficient)
+  const carriedHead = Math.max(0, 2 * setting.recoveredShare - 1) * 0.5 * density * setting.speed ** 2
   const intakeMomentum = density * setting.speed * (1 - setting.recoveredShare)
 
   const exitSpeedAt = (time: number) => programme.speedAt(time - strokeStart)
@@ -155,7 +156,8 @@ export function thrusterCycle(
     const head = intakeHead * (inflow / intakeArea) ** 2
     const pressure = pushing ? coefficients.pressure * u * u + inert * slope : -head
     const refillTurn = t >= refillStart && t <= period ? Math.cos(refillRate * (t - refillStart)) : 0
-    const work = area * u * (coefficients.power * u * u + inert * Math.max(0, slope)) + inflow * head
+    const work =
+      area * u * (coefficients.power * u * u + inert * Math.max(0, slope)) + inflow * head + inflow * carriedHead
     history.exitSpeed.push(u)
     history.plungerPosition.push(
       (area * programme.momentsAt(t - strokeStart).displacement - course.intakeVolumeTo(t)) / plungerArea,

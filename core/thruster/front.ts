@@ -33,6 +33,8 @@ const SMALLEST_BUDGET = 6_000
 const CAP_BUDGET = 1_200
 /** Sizes closer than this, relative, are one. */
 const SAME_SIZE = 1e-6
+/** Points this close in size or value, relative, differ by rounding only: which of them rounding favours must not be told. */
+const ALIKE = 1e-9
 
 /**
  * The front.
@@ -92,11 +94,16 @@ function capsBetween(low: number, high: number, count: number): number[] {
   return Array.from({ length: count }, (_, k) => from * (high / from) ** (k / (count - 1)))
 }
 
-/** Points that no other beats in size without losing in value, by rising size; equal ones once. */
+/** Points that no other beats in size without losing in value, by rising size; those alike to 1e-9 once. */
 export function nonDominated<T extends { readonly size: number; readonly value: number }>(points: readonly T[]): T[] {
   const kept: T[] = []
   for (const point of [...points].sort((a, b) => a.size - b.size || a.value - b.value)) {
-    if (kept.length === 0 || point.value < last(kept).value) kept.push(point)
+    if (kept.length === 0) kept.push(point)
+    else if (point.value < last(kept).value - ALIKE * Math.abs(last(kept).value)) {
+      // Of one size to rounding, the better one stands for both.
+      if (point.size <= last(kept).size * (1 + ALIKE)) kept.pop()
+      kept.push(point)
+    }
   }
   return kept
 }

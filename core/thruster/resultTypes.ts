@@ -35,6 +35,7 @@ export const THRUSTER_NOTES = [
   'thruster-several-speeds',
   'thruster-limits',
   'thruster-speed-jumps',
+  'thruster-no-column',
   'thruster-braking-suction',
   'thruster-close-nozzles',
   'thruster-close-rings',

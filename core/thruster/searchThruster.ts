@@ -185,12 +185,13 @@ function nothingFits(
 ): Omit<SizingResult, 'goal' | 'counters'> {
   const [candidate] = described
   if (candidate === undefined) return emptyResult()
-  const leastViolated = mostBroken(designs, candidate)
+  const broken = brokenLimits(designs, candidate)
+  const leastViolated = broken[0] ?? null
   const nearest = { candidate, leastViolated }
   const told =
     leastViolated === null
       ? 'the nearest one stands right on its limits.'
-      : `the nearest one misses ${leastViolated.name} by ${percent(leastViolated.excess)}.`
+      : `the nearest one misses ${broken.map(({ name, excess }) => `${name} by ${percent(excess)}`).join(', ')}.`
   return {
     status: 'done',
     message: `No design in the ranges of the search holds every limit; ${told}`,
@@ -200,18 +201,19 @@ function nothingFits(
   }
 }
 
-/** Of the limits that the nearest design breaks, the one it breaks most. */
-function mostBroken(designs: CompiledDesigns, { points }: Candidate): LeastViolated | null {
-  let most: LeastViolated | null = null
+/** Every limit that the nearest design breaks, each at the duty point that breaks it most, the most broken first. */
+function brokenLimits(designs: CompiledDesigns, { points }: Candidate): readonly LeastViolated[] {
+  const broken = new Map<LimitName, LeastViolated>()
   points.forEach(({ limits, frequency }, point) => {
     for (const limit of limits) {
       if (limit.ok) continue
+      const { name, value } = limit
       const excess = -slackOf(limit, limitScales(designs, frequency))
-      if (most === null || excess > most.excess)
-        most = { name: limit.name, point, value: limit.value, limit: limit.limit, excess }
+      if (excess > (broken.get(name)?.excess ?? -Infinity))
+        broken.set(name, { name, point, value, limit: limit.limit, excess })
     }
   })
-  return most
+  return [...broken.values()].sort((a, b) => b.excess - a.excess)
 }
 
 function emptyResult(): SizingResult {

@@ -32,6 +32,12 @@ export function thrusterNotes(
   say('thruster-several-speeds', severalSpeeds(result))
   say('thruster-limits', brokenLimits(result))
   say('thruster-speed-jumps', jumps(input, moments))
+  say(
+    'thruster-no-column',
+    input.pulse.nozzle.length === 0
+      ? 'The nozzle has no length given, so the inertia of the water in it costs nothing here: give nozzle.length.'
+      : null,
+  )
   say('thruster-braking-suction', brakingSuction(input, result))
   say(
     'thruster-close-nozzles',

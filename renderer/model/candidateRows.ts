@@ -11,6 +11,8 @@ export const CANDIDATE_COLUMNS = [
   'thrust',
   'count',
   'diameter',
+  'plunger',
+  'nozzleLength',
   'strokeRatio',
   'frequency',
   'overall',
@@ -36,6 +38,8 @@ export function candidateHeadings(units: Units): Readonly<Record<CandidateColumn
     thrust: `Thrust (${units.force})`,
     count: 'Thrusters',
     diameter: `Exit (${units.length})`,
+    plunger: `Plunger (${units.length})`,
+    nozzleLength: `Nozzle length (${units.length})`,
     strokeRatio: 'Stroke ratio',
     frequency: `Frequency (${units.frequency})`,
     overall: 'Overall (%)',
@@ -43,7 +47,12 @@ export function candidateHeadings(units: Units): Readonly<Record<CandidateColumn
   }
 }
 
-export function candidateRows(candidates: readonly Candidate[], units: Units): readonly CandidateRow[] {
+/** @param nozzle of the plan they were sized for: its length grows with the exit in every candidate */
+export function candidateRows(
+  candidates: readonly Candidate[],
+  units: Units,
+  nozzle: { readonly diameter: number; readonly length: number },
+): readonly CandidateRow[] {
   return candidates.map((candidate, index) => {
     const first = at(candidate.points, 0)
     const values = {
@@ -52,6 +61,8 @@ export function candidateRows(candidates: readonly Candidate[], units: Units): r
       thrust: candidate.thrust,
       count: candidate.design.count,
       diameter: candidate.design.diameter,
+      plunger: candidate.pistonDiameter,
+      nozzleLength: nozzle.length * (candidate.design.diameter / nozzle.diameter),
       strokeRatio: candidate.design.strokeRatio,
       frequency: first.frequency,
       overall: first.overallEfficiency ?? Number.NaN,
@@ -69,6 +80,8 @@ export function candidateRows(candidates: readonly Candidate[], units: Units): r
         thrust: bare(values.thrust, units.force),
         count: `${values.count}`,
         diameter: bare(values.diameter, units.length),
+        plunger: bare(values.plunger, units.length),
+        nozzleLength: bare(values.nozzleLength, units.length),
         strokeRatio: bare(values.strokeRatio, ''),
         frequency: bare(values.frequency, units.frequency),
         overall: Number.isNaN(values.overall) ? '—' : bare(100 * values.overall, ''),

@@ -9,6 +9,8 @@ export interface FieldLimits {
   readonly max?: number
   readonly above?: number
   readonly optional?: boolean
+  /** Only whole numbers are meant. */
+  readonly whole?: boolean
 }
 
 export type FieldReading =
@@ -32,7 +34,11 @@ export function readField(
   if (limits.optional === true && text.trim() === '') return { ok: true, value: null }
   const parsed = readDiameters(text, name, dimension, exitDiameter) ?? parseQuantity(text, dimension, unit, { name })
   if (!parsed.ok) return { ok: false, message: parsed.message }
-  const message = outOfRange(parsed.value, name, parsed.unit ?? unit, limits)
+  const message =
+    outOfRange(parsed.value, name, parsed.unit ?? unit, limits) ??
+    (limits.whole === true && !Number.isInteger(parsed.value)
+      ? `${name} must be a whole number. You entered ${text.trim()}.`
+      : null)
   return message === null ? { ok: true, value: parsed.value } : { ok: false, message }
 }
 

@@ -144,6 +144,13 @@ export function jetFurtherRows({ jet }: FinishedJet, units: Units): readonly Jet
   return rows
 }
 
+/** Which stroke each column of the members is read from, where they differ; null where all are of one. */
+export function jetDeltaNote({ jet: { own, formation } }: FinishedJet): string | null {
+  if (formation === null || formation.shown.strokeRatio === own.shown.strokeRatio) return null
+  const [longer, planned] = [formation.shown.strokeRatio.toFixed(0), own.shown.strokeRatio.toFixed(2)]
+  return `Formation number: from a stroke of ${longer} D. Γ, energy and speed of the ring: from the plan's own, ${planned} D.`
+}
+
 /** The members of the ensemble beside one another. */
 export function jetDeltaRows({ jet }: FinishedJet, units: Units): readonly JetDeltaRow[] {
   const { own, formation } = jet
@@ -174,7 +181,7 @@ export function jetFigures(
   const text = (value: number | null, unit: string): string => (value === null ? NONE : formatQuantity(value, unit, 3))
   return [
     { label: 'State', text: shape === undefined ? NONE : phaseInWords(jetPhase(model.timeline, shape)) },
-    { label: 'Formation time', text: reading.formationTime.toFixed(2) },
+    { label: 'Formation time', text: formationTimeText(model, index, reading.formationTime, 'on to') },
     { label: 'Time', text: text(reading.time, units.time) },
     { label: 'Circulation', text: text(reading.totalCirculation, units.circulation) },
     { label: 'In the ring', text: text(reading.ringCirculation, units.circulation) },
@@ -188,7 +195,19 @@ export function placeInWords(model: JetSceneModel, index: number, timeUnit: stri
   const shape = model.shapes[index]
   if (shape === undefined) return 'nothing computed'
   const words = phaseInWords(jetPhase(model.timeline, shape))
-  return `formation time ${shape.formationTime.toFixed(2)}, ${formatQuantity(shape.time, timeUnit, 3)}: ${words}`
+  return `formation time ${formationTimeText(model, index, shape.formationTime)}, ${formatQuantity(shape.time, timeUnit, 3)}: ${words}`
+}
+
+/** Formation time, which stands still after the stroke, and the place on the ruler where it has run on: `5.00, run on to 7.7`. */
+function formationTimeText(
+  { timeline }: JetSceneModel,
+  index: number,
+  formationTime: number,
+  how = 'run on to',
+): string {
+  const place = timeline.places[index] ?? formationTime
+  const text = formationTime.toFixed(2)
+  return place > formationTime + 0.05 ? `${text}, ${how} ${place.toFixed(1)}` : text
 }
 
 /** Longest text of a moment's button: `pinch-off 9.4`. */

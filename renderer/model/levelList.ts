@@ -32,7 +32,7 @@ export function readLevels(
   const values: number[] = []
   for (const piece of pieces) {
     const parsed = parseQuantity(piece, dimension, shared, { name })
-    if (!parsed.ok) return { ok: false, message: parsed.message }
+    if (!parsed.ok) return { ok: false, message: unparted(piece, name) ?? parsed.message }
     const message = outOfRange(parsed.value, name, parsed.unit ?? shared, limits)
     if (message !== null) return { ok: false, message }
     values.push(parsed.value)
@@ -45,6 +45,13 @@ export function readLevels(
   }
   if (new Set(values).size < values.length) return { ok: false, message: `${name} has a level twice.` }
   return { ok: true, values }
+}
+
+/** Numbers with only spaces between them, which read as one that makes no sense; null for anything else. */
+function unparted(piece: string, name: string): string | null {
+  return /[\d.]\s+[-+]?[\d.]/u.test(piece)
+    ? `${name}: put commas or semicolons between the values. You entered ${piece}.`
+    : null
 }
 
 /** `25, 37.5, 50 mm`. */

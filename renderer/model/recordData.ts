@@ -1,8 +1,8 @@
 /**
  * What the window has computed of the open plan, gathered for its record: each page computes its own part, and what is of another plan is
- * left out.
+ * left out. Its cautions are taken from the open plan and these parts: a part kept from an earlier plan brings none of that plan's.
  */
-import type { Caution } from '../../core/plan'
+import { cautionsFor, type Caution } from '../../core/plan'
 import type { RecordData } from '../../core/report'
 import type { Workspace } from './workspace'
 
@@ -19,16 +19,32 @@ export function recordDataOf({ document, results, jet, wake, thrust, tank }: Wor
   ]
   const held = tank.planned.value
   const planned = plan.tankRun !== null && held?.plan === plan ? held : null
-  const result = quick?.data.thruster?.result ?? sized?.data.thruster?.result ?? null
-  const parts = [base, formed?.data, marched?.data, quick?.data, sized?.data, planned]
+  // A sizing stands while its designs are opened; the figures that came with it are those of the plan it began with.
+  const own = [quick, sized].find((part) => part?.plan === plan) ?? null
+  const result = own?.data.thruster?.result ?? null
+  const sizing = result === null ? null : (sized?.sizing ?? null)
+  const spread = planned === null ? null : tank.spread.value
+  const cautions = cautionsFor({
+    plan,
+    water: base.water,
+    pulse: base.pulse,
+    jet: formed?.jet ?? null,
+    jetMissing: null,
+    wake: marched?.wake.wake ?? null,
+    wakeNotes: marched?.wake.notes ?? [],
+    thruster: result,
+    sizing,
+    tankRun: planned?.result ?? null,
+    spread,
+  })
   return {
     ...base,
     jet: formed?.jet ?? null,
     wake: marched?.wake ?? null,
-    thruster: result === null ? null : { result, sizing: sized?.sizing ?? null },
+    thruster: result === null ? null : { result, sizing },
     tankRun: planned?.result ?? null,
-    spread: planned === null ? null : tank.spread.value,
-    cautions: once(parts.flatMap((part) => part?.cautions ?? [])),
+    spread,
+    cautions: withOthers(cautions, base.cautions),
   }
 }
 
@@ -36,7 +52,7 @@ function holds(status: string): boolean {
   return status === 'current' || status === 'partial'
 }
 
-/** Each caution once; where a later part says it in other words, in both. */
-function once(cautions: readonly Caution[]): readonly Caution[] {
-  return [...new Map(cautions.map((caution) => [`${caution.id} ${caution.text}`, caution])).values()]
+/** Those of the pulse that the record does not say itself follow, each once: that of a starting jet that was not formed, for one. */
+function withOthers(cautions: readonly Caution[], others: readonly Caution[]): readonly Caution[] {
+  return [...cautions, ...others.filter(({ id }) => !cautions.some((caution) => caution.id === id))]
 }

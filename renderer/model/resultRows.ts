@@ -224,7 +224,10 @@ export function furtherRows(data: RunData, pulse: PulseResult, units: Units): re
         '',
       ).text,
       unit: '',
-      notes: [],
+      // An adopted value that is neither end has a Reynolds number of its own.
+      notes: ringEnds(pulse).some((end) => end.circulation === ring.circulation)
+        ? []
+        : [`adopted ${formatNumber(ring.reynolds, 3)}, as the circulation`],
     })
   rows.push({
     id: 'jetReynolds',

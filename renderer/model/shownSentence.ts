@@ -4,7 +4,7 @@ import type { Units } from './units'
 
 const NUMBER = String.raw`[-\u2212]?\d+(?:\.\d+)?(?:e[-+]?\d+)?`
 /** One value or several with commas, and the SI unit they share. */
-const VALUES = new RegExp(String.raw`((?:${NUMBER}, )*${NUMBER}) (m2/s|m/s|m|s)(?![\w/²³])`, 'gu')
+const VALUES = new RegExp(String.raw`((?:${NUMBER}, )*${NUMBER})[ \u00A0](m2/s|m/s|m|s)(?![\w/²³])`, 'gu')
 
 /** A sentence about the wake in the units shown. @param digits significant digits */
 export function inShownUnits(sentence: string, units: Units, digits = 6): string {

@@ -3,7 +3,7 @@ import { formatNumber, formatQuantity } from '../../core/quantity'
 import { CHOICES, type Plan } from '../../core/plan'
 import type { ResultsStatus } from './results'
 import type { Units } from './units'
-import type { WakeStatus } from './wakeJob'
+import type { AskedStatus } from './askedJob'
 
 /** `sea water 15 °C`. */
 export function waterInWords(plan: Plan, units: Units): string {
@@ -55,8 +55,8 @@ export function untakenInWords(untaken: number): string {
 }
 
 /** How the rings in motion stand to the plan shown. */
-export function wakeFreshnessInWords(status: WakeStatus): string {
-  const words: Readonly<Record<WakeStatus, string>> = {
+export function wakeFreshnessInWords(status: AskedStatus): string {
+  const words: Readonly<Record<AskedStatus, string>> = {
     current: 'results current',
     partial: 'part of the results',
     running: 'computing',

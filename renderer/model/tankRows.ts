@@ -17,6 +17,8 @@ export interface TankFigure {
 }
 
 const NONE = '—'
+/** Peaks closer than this, relative, are one. */
+const SAME = 1e-6
 
 /** Spread of a quantity at a station; null where none is known. */
 export function scatterAt(spread: SpreadOutcome | null, index: number, key: 'time' | 'speed'): SpreadQuantity | null {
@@ -305,9 +307,30 @@ function imagingRows({ imaging }: TankRunResult, units: Units): TankTable {
 }
 
 export interface SolutionRow {
+  readonly marks: readonly string[]
   readonly solution: Solution
   readonly cells: readonly string[]
   readonly ok: boolean
+}
+
+/** What is to be known of a row, in sentences. */
+function marksOf(solution: Solution, { speed }: Units): readonly string[] {
+  const { strokeRatio, pinchedOff, formationNumber, peakSpeed, askedPeakSpeed, reason } = solution
+  return [
+    ...(pinchedOff === true && formationNumber !== null
+      ? [
+          `Past pinch-off, ${formatNumber(formationNumber, 3)} D: the stroke's last ${formatNumber(strokeRatio - formationNumber, 2)} D trail behind.`,
+        ]
+      : []),
+    ...(peakSpeed !== null && askedPeakSpeed !== null && askedPeakSpeed > peakSpeed * (1 + SAME)
+      ? [
+          `The stroke is too short for its ramps: asked for ${formatQuantity(askedPeakSpeed, speed)}, it reaches the peak told.`,
+        ]
+      : []),
+    ...(reason === null
+      ? []
+      : [`${reason.charAt(0).toUpperCase()}${reason.slice(1)}${/[.!?]$/u.test(reason) ? '' : '.'}`]),
+  ]
 }
 
 export function solutionColumns({ length, speed, circulation, ringSpeed }: Units): readonly string[] {
@@ -327,6 +350,7 @@ export function solutionRows(solutions: readonly Solution[], units: Units): read
   return solutions.map((solution) => ({
     solution,
     ok: solution.ok,
+    marks: marksOf(solution, units),
     cells: [
       number(solution.stroke, units.length),
       formatNumber(solution.strokeRatio, 3),

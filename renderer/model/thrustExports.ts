@@ -93,9 +93,9 @@ export function thrustExportItems(
 
 const SI = { power: 'W', force: 'N', length: 'm', frequency: 'Hz', volume: 'm³' }
 
-function candidatesCsv({ sizing }: FinishedSizing): string {
+function candidatesCsv({ plan, sizing }: FinishedSizing): string {
   const headings = { ...candidateHeadings({ ...shownUnits({}), ...SI }), overall: 'Overall efficiency' }
-  const rows = candidateRows(sizing.candidates, shownUnits({}))
+  const rows = candidateRows(sizing.candidates, shownUnits({}), plan.nozzle)
   return writeCsv(
     [...CANDIDATE_COLUMNS.map((column) => headings[column]), 'Held back by'],
     rows.map(({ values, note }) => [...CANDIDATE_COLUMNS.map((column) => values[column]), note]),

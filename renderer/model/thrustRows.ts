@@ -126,7 +126,7 @@ function speedRow(section: ThrusterSection, result: ThrusterResult, units: Units
     )
   if (vehicle.speed === null && cruise?.fromRest === 0) notes.push('it does not start from rest')
   if (cruise !== null && cruise.speeds.length > 1) notes.push(`thrust meets drag at ${cruise.speeds.length} speeds`)
-  if (startUp !== null && startUp.time !== null && startUp.distance !== null)
+  if (vehicle.speed === null && startUp !== null && startUp.time !== null && startUp.distance !== null)
     notes.push(
       `${formatNumber(100 * CRUISE_REACHED, 2)} % of it after ${timeInWords(startUp.time)} and ${wayInWords(startUp.distance)}`,
     )

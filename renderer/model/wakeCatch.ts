@@ -9,6 +9,9 @@ import type { Units } from './units'
 /** Sentences said one by one up to this many pairs; of more only what differs. */
 const MOST_SENTENCES = 4
 
+/** A time within this share of the whole differs from the start by rounding. */
+const AT_ONCE = 1e-9
+
 /** A gap whose change over the run is within this share of it neither opens nor closes. */
 const STEADY = 0.01
 
@@ -32,7 +35,11 @@ export function catchInWords(
       if (pair === null) continue
       const name = (ring: number): string =>
         `${word.toLowerCase()} ${ring - nozzle * pulses}${nozzles > 1 ? ` of nozzle ${nozzle + 1}` : ''}`
-      sentences.push(pair.opposed ? meetingOf(wake, pair, name, units, other) : catchOf(wake, pair, name, units, other))
+      if (pair.beside && !doTouch(wake, pair)) sentences.push(besideOf(pair, name))
+      else
+        sentences.push(
+          pair.opposed ? meetingOf(wake, pair, name, units, other) : catchOf(wake, pair, name, units, other),
+        )
     }
   const caught = sentences.filter((sentence) => sentence.caught)
   if (sentences.length <= MOST_SENTENCES) return sentences.map(({ text }) => text)
@@ -49,6 +56,8 @@ interface Pair {
   readonly behind: number
   /** True where they face one another or away: neither follows. */
   readonly opposed: boolean
+  /** True where neither stands in the other's way: their axes lie farther apart than the sum of their radii. */
+  readonly beside: boolean
   /** Distance of their centres over the time both are there. */
   readonly gap: { readonly first: number; readonly last: number }
 }
@@ -75,7 +84,11 @@ function pairOf(wake: Wake, index: number): Pair | null {
     last: Math.hypot(...between(a.time.length - 1, b.time.length - 1)),
   }
   const [ahead, behind] = leads ? [index + 1, index + 2] : [index + 2, index + 1]
-  return { ahead, behind, opposed: dot(way, facing(b, m)) < 0, gap }
+  const apart = between(k, m)
+  const along = dot(apart, way)
+  const sideways = Math.hypot(...apart.map((value, axis) => value - along * at(way, axis)))
+  const beside = sideways > at(a.radius, k) + at(b.radius, m)
+  return { ahead, behind, opposed: dot(way, facing(b, m)) < 0, beside, gap }
 }
 
 function dot(a: readonly number[], b: readonly number[]): number {
@@ -97,9 +110,16 @@ function firstMeeting(wake: Wake, { ahead, behind }: Pair): Wake['events'][numbe
 
 type Meeting = Wake['events'][number]
 
-/** When and where they meet, from one ageing law to the other, and whether the model still holds there. */
-function whenAndWhere(wake: Wake, meeting: Meeting, pair: Pair, units: Units, other: Wake | null): string {
-  const second = other === null ? meeting : firstMeeting(other, pair)
+function otherMeeting(meeting: Meeting, pair: Pair, other: Wake | null): Meeting | undefined {
+  return other === null ? meeting : firstMeeting(other, pair)
+}
+
+/**
+ * When and where rings meet, from one ageing law to the other, and whether the model still holds there.
+ *
+ * @param second the same meeting under the other law, undefined where there is none; `meeting` itself where one law was run
+ */
+export function whenAndWhere(wake: Wake, meeting: Meeting, second: Meeting | undefined, units: Units): string {
   const both = [meeting, second ?? meeting]
   const span = (values: readonly number[], unit: string): string => {
     const { text, unit: shown } = formatRange(Math.min(...values), Math.max(...values), unit, 4)
@@ -109,11 +129,15 @@ function whenAndWhere(wake: Wake, meeting: Meeting, pair: Pair, units: Units, ot
   const places = both.flatMap(({ x }) => (x === null ? [] : [x]))
   const where = places.length === both.length ? `, x = ${span(places, units.length)}` : ''
   const only = second === undefined ? ', though not under the turbulent law' : ''
-  const past =
-    Math.max(...times) > wake.validUntil
-      ? `; the model holds only until ${formatQuantity(wake.validUntil, units.wakeTime, 3)}`
-      : ''
+  const past = Math.max(...times) > wake.validUntil ? `; ${holdsInWords(wake, units)}` : ''
   return `at ${span(times, units.wakeTime)}${where}${only}${past}`
+}
+
+/** Up to when the model holds. */
+function holdsInWords({ validUntil, time }: Wake, units: Units): string {
+  return validUntil <= AT_ONCE * time
+    ? 'the model does not hold from the start'
+    : `the model holds only until ${formatQuantity(validUntil, units.wakeTime, 3)}`
 }
 
 function catchOf(wake: Wake, pair: Pair, name: Name, units: Units, other: Wake | null): Sentence {
@@ -123,7 +147,22 @@ function catchOf(wake: Wake, pair: Pair, name: Name, units: Units, other: Wake |
     return { caught: false, text: `${behind} does not catch ${ahead} ${sinceThen(wake, pair, units)}` }
   const does = meeting.event === 'pass' ? 'catches and passes' : 'catches'
   const end = meeting.event === 'pass' ? '' : ': their cores touch'
-  return { caught: true, text: `${behind} ${does} ${ahead} ${whenAndWhere(wake, meeting, pair, units, other)}${end}.` }
+  return {
+    caught: true,
+    text: `${behind} ${does} ${ahead} ${whenAndWhere(wake, meeting, otherMeeting(meeting, pair, other), units)}${end}.`,
+  }
+}
+
+function doTouch({ events }: Wake, { ahead, behind }: Pair): boolean {
+  return events.some(({ event, rings }) => event === 'cores-touch' && rings.includes(ahead) && rings.includes(behind))
+}
+
+function besideOf({ ahead, behind }: Pair, name: Name): Sentence {
+  const [first, second] = [Math.min(ahead, behind), Math.max(ahead, behind)].map(name)
+  return {
+    caught: false,
+    text: `${capital(first ?? '')} and ${second ?? ''} run side by side: neither is in the other’s way.`,
+  }
 }
 
 function meetingOf(wake: Wake, pair: Pair, name: Name, units: Units, other: Wake | null): Sentence {
@@ -131,7 +170,7 @@ function meetingOf(wake: Wake, pair: Pair, name: Name, units: Units, other: Wake
   const meeting = firstMeeting(wake, pair)
   return meeting === undefined
     ? { caught: false, text: `${both} do not meet ${sinceThen(wake, pair, units)}` }
-    : { caught: true, text: `${both} meet ${whenAndWhere(wake, meeting, pair, units, other)}.` }
+    : { caught: true, text: `${both} meet ${whenAndWhere(wake, meeting, otherMeeting(meeting, pair, other), units)}.` }
 }
 
 function sinceThen(wake: Wake, { gap }: Pair, units: Units): string {

@@ -29,6 +29,8 @@ export function wakeExportItems(
   const march = wake.wake
   const index = Math.min(view?.index ?? Infinity, march.outputTimes.length - 1)
   const time = `${formatNumber(at(march.outputTimes, index), 5)} s`
+  // No space in the name of a file.
+  const inName = time.replace(' ', '')
   const toGltf = view?.toGltf ?? null
   const items: ExportItem[] = [
     {
@@ -48,8 +50,8 @@ export function wakeExportItems(
       title: `Rings at ${time}`,
       what: 'closed curves with circulation, core radius and speed; SI units',
       formats: [
-        { kind: 'vtp', name: `${stem}-rings-at-${time}.vtp`, make: async () => wakeFile(march, index) },
-        ...(toGltf === null ? [] : [{ kind: 'gltf' as const, name: `${stem}-rings-at-${time}.gltf`, make: toGltf }]),
+        { kind: 'vtp', name: `${stem}-rings-at-${inName}.vtp`, make: async () => wakeFile(march, index) },
+        ...(toGltf === null ? [] : [{ kind: 'gltf' as const, name: `${stem}-rings-at-${inName}.gltf`, make: toGltf }]),
       ],
     },
   ]

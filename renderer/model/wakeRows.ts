@@ -146,13 +146,13 @@ export function arrivalRows(arrivals: readonly WakeArrival[], units: Units): rea
   return arrivals
     .toSorted((a, b) => a.station - b.station || a.time - b.time)
     .map(({ station, ring, time, timeLow, timeHigh }, index) => {
-      const range = formatRange(timeLow, timeHigh, units.wakeTime, 4)
+      const range = formatRange(timeLow, timeHigh ?? timeLow, units.wakeTime, 4)
       return {
         key: `${index} ${ring}`,
         station: formatQuantity(station, units.length),
         ring,
         time,
-        timeText: `${range.text}\u00A0${range.unit}`,
+        timeText: `${range.text}\u00A0${range.unit}${timeHigh === null ? ' or later' : ''}`,
       }
     })
 }
@@ -180,7 +180,7 @@ export function runFacts(data: WakeData, viscous: boolean, units: Units): readon
     { label: 'Drift', text: driftInWords(wake) },
     {
       label: 'Holds until',
-      text: `${timeText(wake.validUntil, units)}: ${inShownUnits(wake.reason, units, 4).replace(/\.$/u, '')}`,
+      text: `${wake.validUntil <= 1e-9 * wake.time ? 'not from the start' : timeText(wake.validUntil, units)}: ${inShownUnits(wake.reason, units, 4).replace(/\.$/u, '')}`,
     },
     {
       label: 'Work',

@@ -232,9 +232,9 @@ export function createWorkspace(options: WorkspaceOptions): Workspace {
     return failure === null ? null : refusalInWords(field, failure.message)
   }
 
-  /** What the lists and fields of the wake are told is in the units they are shown in. */
+  /** What the lists and fields of the wake and the ranges of the search are told is in the units they are shown in. */
   function refusalInWords(field: string, message: string): string {
-    return problemInWords(field.startsWith('wake') ? inShownUnits(message, units.value) : message)
+    return problemInWords(/^(?:wake|thruster\.search)\b/u.test(field) ? inShownUnits(message, units.value) : message)
   }
 
   function perform(command: CommandId): void {

@@ -73,8 +73,9 @@ export const DOCUMENT_STYLE = `
 .print-document dl.stacked div{display:grid;grid-template-columns:19mm 1fr;gap:2mm;border:0;padding:.3mm 0}
 .print-document dl.stacked dt{color:#444}
 .print-document dl.stacked dd{text-align:left}
+.print-document .lines{break-inside:avoid}
 .print-document .lines div{border-bottom:.5pt solid #777;height:8mm}
-.print-document footer{border-top:.5pt solid #777;margin-top:6mm;padding-top:1.5mm;font-size:8.5pt;color:#333;overflow-wrap:anywhere}
+.print-document footer{break-inside:avoid;break-before:avoid;border-top:.5pt solid #777;margin-top:6mm;padding-top:1.5mm;font-size:8.5pt;color:#333;overflow-wrap:anywhere}
 .print-document .page-break{break-after:page}
 @media screen{.print-document{padding:10mm 0}}
 `

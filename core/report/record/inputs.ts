@@ -58,7 +58,7 @@ function groupBlocks({ path, rows, lists }: InputGroup): DocumentBlock[] {
       rows.filter(({ state }) => state === 'absent').map(({ label }) => label),
     ),
     ...told(
-      'Given, not read by this plan',
+      'Not read by this plan, as given or by default',
       rows.filter(({ state }) => state === 'unread').map(({ label, value }) => `${label} ${value}`),
     ),
   ]

@@ -17,7 +17,7 @@ export function thrustFigures(thruster: ThrusterResult, show: Show): readonly Fi
       'Mean thrust',
       show.range(low, high, 'force'),
       show.result(thruster.meanThrust, 'force'),
-      `slug with the loss of close neighbours, to slug${thruster.quickStart ? ' with quick start' : '; the start is too slow for over-pressure'}`,
+      `slug${thruster.proximityLoss > 0 ? ' with the loss of close neighbours' : ''}, to slug${thruster.quickStart ? ' with quick start' : '; the start is too slow for over-pressure'}`,
     ],
     [
       'Share of the impulse in the ring',
@@ -76,7 +76,7 @@ function figures(thruster: ThrusterResult, show: Show): (readonly [string, strin
     ['Duty cycle of the stroke', percent(thruster.duty)],
     ['Speed of the vehicle', show.result(thruster.speed, 'vehicleSpeed')],
     ['Drag at that speed', show.result(thruster.dragAtSpeed, 'force')],
-    ['Excess of thrust over drag', show.result(thruster.excessThrust, 'force')],
+    ['Excess of thrust over drag', show.result(excess(thruster), 'force')],
     ['Cruise speed reached from rest', show.result(cruise?.fromRest, 'vehicleSpeed')],
     [`Time to ${percent(CRUISE_REACHED)} of it`, show.result(startUp?.time, 'wakeTime')],
     ['Way until then', show.result(startUp?.distance, 'bodyLength')],
@@ -91,6 +91,19 @@ function figures(thruster: ThrusterResult, show: Show): (readonly [string, strin
     ['Range', show.result(thruster.range, 'bodyLength')],
     ...turning(thruster, show),
   ]
+}
+
+/** A balance that is met leaves a residue of rounding: below this share of the drag it is none. */
+const RESIDUE = 1e-9
+
+function excess({ excessThrust, dragAtSpeed }: ThrusterResult): number | null {
+  if (excessThrust === null || dragAtSpeed === null) return excessThrust
+  return Math.abs(excessThrust) < RESIDUE * Math.abs(dragAtSpeed) ? 0 : excessThrust
+}
+
+/** Of the plunger in stroke and refill the faster counts; the pulse tells the stroke's own. */
+function whileRefilling({ plunger, pulse }: ThrusterResult): string {
+  return plunger.speed > pulse.pistonPeakSpeed * (1 + RESIDUE) ? ', while refilling' : ''
 }
 
 function turning({ turning: moments }: ThrusterResult, show: Show): (readonly [string, string])[] {
@@ -150,7 +163,7 @@ function flowFigures(thruster: ThrusterResult, show: Show): (readonly [string, s
     ['Frequency', show.result(thruster.frequency, 'frequency')],
     ['Mean flow of all', show.result(thruster.flow, 'flowRate')],
     ['Plunger travel', show.result(plunger.travel, 'length')],
-    ['Plunger speed', show.result(plunger.speed, 'speed')],
+    [`Peak plunger speed${whileRefilling(thruster)}`, show.result(plunger.speed, 'speed')],
     ['Plunger acceleration', show.result(plunger.acceleration, 'acceleration')],
     ['Plunger force', show.result(plunger.force, 'force')],
     ['Peak power of one', show.result(plunger.peakPower, 'power')],

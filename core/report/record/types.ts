@@ -10,7 +10,8 @@ export interface RecordArrival {
   readonly ring: number
   readonly time: number
   readonly timeLow: number
-  readonly timeHigh: number
+  /** null where it is open: not arrived under the other law by the end of its run. */
+  readonly timeHigh: number | null
 }
 
 export interface RecordWake {

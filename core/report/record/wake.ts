@@ -37,7 +37,11 @@ export function wakeBlocks(context: RecordContext): readonly DocumentBlock[] {
         ['Engine', wake.model === 'coaxial' ? 'rings on one axis' : 'rings in space'],
         ['Ageing', ages],
         ['Followed for', show.result(wake.time, 'wakeTime')],
-        ['Holds until', show.result(wake.validUntil, 'wakeTime')],
+        [
+          'Holds until',
+          // Nearer to the start than rounding tells.
+          wake.validUntil <= 1e-9 * wake.time ? 'not from the start' : show.result(wake.validUntil, 'wakeTime'),
+        ],
         ['Passes', String(wake.events.filter(({ event }) => event === 'pass').length)],
         [
           'Drift of circulation, impulse, energy',
@@ -114,6 +118,12 @@ function furtherRows(count: number, what: string, file: string): DocumentBlock[]
   return [{ kind: 'paragraph', tone: 'small', text: `${count - MOST_ROWS} further ${what} stand in ${file}.` }]
 }
 
+const OPEN_ARRIVALS: DocumentBlock = {
+  kind: 'paragraph',
+  tone: 'small',
+  text: 'Without a latest time: under the other ageing law the ring had not arrived when its run ended, so it arrives at the earliest time or later.',
+}
+
 function arrivalTable({ show }: RecordContext, { arrivals }: RecordWake): DocumentBlock[] {
   if (arrivals.length === 0) return []
   const shown = arrivals.slice(0, MOST_ROWS)
@@ -144,6 +154,7 @@ function arrivalTable({ show }: RecordContext, { arrivals }: RecordWake): Docume
         ),
       ],
     ),
+    ...(shown.some(({ timeHigh }) => timeHigh === null) ? [OPEN_ARRIVALS] : []),
     ...furtherRows(arrivals.length, 'arrivals', 'events.csv'),
   ]
 }

@@ -3,10 +3,11 @@
  */
 import { at } from '../../base'
 import type { WakeAgeing } from '../../coaxial'
+import { formatQuantity } from '../../quantity'
 import { computePulse, type PulseInput, type PulseResult } from '../../pulse'
 import type { WaterInput } from '../../water'
 import type { TankWalls } from '../walls'
-import type { FieldResult } from './fieldTypes'
+import type { FieldResult, MeasuredValue } from './fieldTypes'
 import type { FittedValue, ReadingResidual, RingFit } from './fitTypes'
 import { analyseForce, type ForceResult } from './forceAnalysis'
 import type { HeldParameter } from './identify'
@@ -23,6 +24,7 @@ import {
 } from './predicted'
 import { fitRepeats, type RepeatValue, type Repeats, type RunFit } from './repeats'
 import { sensitivitiesOf, type Sensitivity } from './sensitivities'
+import { student95 } from './student'
 import { calibrated, forceLog, type FitName, type ReadingRow, type ReadingsSection } from './types'
 import { verdictOf, type ComparedValue, type Verdict } from './verdict'
 
@@ -211,10 +213,20 @@ function fitsOf(
     return []
   }
   if (adopted.length > 1)
-    notes.push(
-      'The ring Reynolds number leaves laminar and turbulent ageing open: the fit is under the laminar law, and that under the turbulent one stands beside it.',
-    )
-  return adopted.map(({ start, around }) => fitRepeats({ rows, names: fit, start, around, formedAt }))
+    notes.push('The ring Reynolds number leaves laminar and turbulent ageing open: the fit is under the laminar law.')
+  const fits = adopted.map(({ start, around }) => fitRepeats({ rows, names: fit, start, around, formedAt }))
+  for (const { pooled } of fits.slice(1)) notes.push(otherLaw(pooled))
+  return fits
+}
+
+function otherLaw({ ageing, status, message, fit, ring, residualRms }: RingFit): string {
+  if (status === 'failed') return `Under the ${ageing} law nothing is fitted: ${message}`
+  const error = fit.circulation?.standardError ?? null
+  const told = error === null ? 'held at' : 'fitted as'
+  const circulation = formatQuantity(ring.circulation, 'cm²/s', 3)
+  const also = error === null ? '' : ` (standard error ${formatQuantity(error, 'cm²/s', 2)})`
+  const rms = residualRms === null ? '' : `, and the places lie ${formatQuantity(residualRms, 'mm', 3)} RMS off it`
+  return `Under the ${ageing} law the circulation is ${told} ${circulation}${also}${rms}.`
 }
 
 function forceOf(input: ReadingsInput, computed: PulseResult, prediction: Prediction): ForceResult | null {
@@ -256,12 +268,16 @@ function measuredValues(
   }
   if (fields !== null) {
     if (fields.ring !== null) {
-      found.circulation = fields.ring.circulation
-      found.radius = fields.ring.radius
+      // The mean of few frames scatters as Student's distribution; one frame tells no scatter.
+      const { frames } = fields.ring
+      const told = ({ value, standardError }: MeasuredValue): ComparedValue =>
+        frames < 2 ? { value, standardError: null } : { value, standardError, intervalFactor: student95(frames - 1) }
+      found.circulation = told(fields.ring.circulation)
+      found.radius = told(fields.ring.radius)
     }
     if (fields.formationNumber !== null) found.formationNumber = fields.formationNumber
   }
-  if (force !== null) found.meanForce = { value: force.mean, standardError: force.errors.mean }
+  if (force !== null && force.mean !== null) found.meanForce = { value: force.mean, standardError: force.errors.mean }
   return found
 }
 

@@ -4,7 +4,7 @@
  */
 import { at, last } from '../../base'
 import type { FieldNumbers, FieldOptions, FieldResult, FieldRing, MeasuredValue } from './fieldTypes'
-import { mean, standardDeviation } from './robust'
+import { mean, median, standardDeviation } from './robust'
 
 /** Density at the cut over that of the ring, below which the ring is apart, as in the computed jet. */
 const APART_BELOW = 0.12
@@ -12,10 +12,21 @@ const APART_BELOW = 0.12
 const FLAT_FOR = 1
 const FLAT_WITHIN = 0.03
 const FEWEST_FRAMES = 4
+/** A ring is whole where its circulation differs from the last by less than this share. */
+const WHOLE_WITHIN = 0.03
+/** Standard error of a median over that of a mean, normal values. */
+const MEDIAN_OVER_MEAN = Math.sqrt(Math.PI / 2)
 /** Frames within this formation time of the crossing give the line on which it lies. */
 const CROSSING_REACH = 0.5
 /** Differences of the halves, and of area from contour, from which they are told. */
 const TELL_DIFFERENCE = 0.1
+
+interface SeenRing {
+  readonly time: number
+  readonly ring: FieldRing
+  /** Of its frame. */
+  readonly index: number
+}
 
 interface Line {
   readonly at: number
@@ -30,9 +41,10 @@ export function measuredFormation(frames: readonly FieldNumbers[], options: Fiel
   const { diameter, peakSpeed } = options
   const stretch = flatStretch(frames, (FLAT_FOR * diameter) / peakSpeed, FLAT_WITHIN * peakSpeed * diameter)
   const notes: string[] = []
-  const quarter = Math.max(1, Math.ceil(frames.length / 4))
-  const chosen = stretch === null ? frames.slice(-quarter) : frames.slice(stretch.from, stretch.to + 1)
-  const seen = chosen.flatMap(({ time, ring }) => (ring === null ? [] : [{ time, ring }]))
+  const used = stretch ?? wholeRing(frames)
+  const seen = frames.flatMap(({ time, ring }, index) =>
+    ring === null || index < used.from || index > used.to ? [] : [{ time, ring, index }],
+  )
   const ring = seen.length === 0 ? null : meanRing(seen)
   const first = stretch === null ? null : at(frames, stretch.from)
   const crossing =
@@ -65,6 +77,26 @@ export function measuredFormation(frames: readonly FieldNumbers[], options: Fiel
   }
 }
 
+/** Frames in which the ring is whole: from the end of the stroke on, or from where its circulation has come to that of the last quarter. */
+function wholeRing(frames: readonly FieldNumbers[]): { readonly from: number; readonly to: number } {
+  const to = frames.length - 1
+  if (to < 1) return { from: 0, to }
+  const final = last(frames).formationTime
+  const stopped = frames.findIndex(({ formationTime }) => formationTime !== null && formationTime === final)
+  // One frame at the end of a rise is no plateau.
+  if (final !== null && stopped >= 0 && stopped < to) return { from: stopped, to }
+  const known = frames.flatMap(({ ring }) => (ring === null ? [] : [ring.circulation]))
+  if (known.length === 0) return { from: 0, to }
+  const level = median(known.slice(-Math.max(1, Math.ceil(known.length / 4))))
+  let from = to
+  while (from > 0 && isAt(at(frames, from - 1), level)) from--
+  return { from, to }
+}
+
+function isAt({ ring, circulationError }: FieldNumbers, level: number): boolean {
+  return ring === null || Math.abs(ring.circulation - level) <= Math.max(WHOLE_WITHIN * level, 3 * circulationError)
+}
+
 /**
  * The first stretch of one formation time with a ring in every frame, apart at its end, whose circulation does not drift. A ring that takes in
  * another piece of the jet later is not looked for.
@@ -91,19 +123,26 @@ function flatStretch(
   return null
 }
 
-function meanRing(seen: readonly { readonly time: number; readonly ring: FieldRing }[]): FieldResult['ring'] {
+function meanRing(seen: readonly SeenRing[]): FieldResult['ring'] {
   const over = (value: (ring: FieldRing) => number): MeasuredValue => {
     const values = seen.map(({ ring }) => value(ring))
     return { value: mean(values), standardError: (standardDeviation(values) ?? 0) / Math.sqrt(values.length) }
   }
+  // A second moment weighs what lies far out: one frame with a speck would move a mean.
+  const cores = seen.map(({ ring }) => ring.coreRadius)
   const speed = seen.length < 2 ? null : lineThrough(seen.map(({ time, ring }) => [time, ring.x] as const)).slope
   return {
     circulation: over(({ circulation }) => circulation),
     radius: over(({ radius }) => radius),
-    coreRadius: over(({ coreRadius }) => coreRadius),
+    coreRadius: {
+      value: median(cores),
+      standardError: ((standardDeviation(cores) ?? 0) * MEDIAN_OVER_MEAN) / Math.sqrt(cores.length),
+    },
     impulse: over(({ impulse }) => impulse),
     speed,
     frames: seen.length,
+    from: at(seen, 0).index,
+    to: last(seen).index,
   }
 }
 

@@ -75,6 +75,32 @@ export function standingOut(smoothed: Float64Array, width: number, level: number
   return grown(grown(above, width, 1), width, width)
 }
 
+/** Nodes that hang together about the highest one right of a column, above a share of it. */
+export function regionAbout(smoothed: Float64Array, width: number, begin: number, share: number): readonly number[] {
+  let peak = -1
+  for (let k = 0; k < smoothed.length; k++)
+    if (k % width >= begin && (peak < 0 || read(smoothed, k) > read(smoothed, peak))) peak = k
+  if (peak < 0) return []
+  const least = share * read(smoothed, peak)
+  const seen = new Set<number>([peak])
+  const found: number[] = []
+  const open = [peak]
+  const take = (k: number): void => {
+    if (seen.has(k) || read(smoothed, k) < least) return
+    seen.add(k)
+    open.push(k)
+  }
+  for (let k = open.pop(); k !== undefined; k = open.pop()) {
+    found.push(k)
+    const column = k % width
+    if (column > begin) take(k - 1)
+    if (column < width - 1) take(k + 1)
+    if (k >= width) take(k - width)
+    if (k + width < smoothed.length) take(k + width)
+  }
+  return found
+}
+
 function grown(mask: Float64Array, width: number, stride: number): Float64Array {
   const height = mask.length / width
   const out = mask.slice()

@@ -4,7 +4,7 @@
 import { at } from '../../base'
 import { axialDensity, ringCut } from '../../coaxial'
 import type { HalfPlane } from './fieldGrid'
-import { smoothedVorticity, standingOut } from './fieldNoise'
+import { regionAbout, smoothedVorticity, standingOut } from './fieldNoise'
 
 /**
  * Vorticity below this share of the frame's highest is left out, which a Gaussian core loses of its circulation and gets back. Where
@@ -16,6 +16,14 @@ const QUIET_BELOW = THRESHOLD_SHARE / 3
 const NOISE_TIMES = 4
 /** Above this share the rest is no longer a measure of the ring. */
 export const LARGEST_THRESHOLD = 0.5
+
+/** The core is measured where the smoothed field is above this share of its peak: half of it would be too few nodes, a tenth takes in noise. */
+const CORE_SHARE = 0.2
+const FEWEST_OF_CORE = 9
+/** Each turn takes a third off what is missing, or more. */
+const CORE_TURNS = 60
+/** Beyond this over what was seen, a is a guess. */
+const LARGEST_SPREAD = 4
 
 export interface FieldPart {
   /** By area [m2/s]. */
@@ -95,8 +103,12 @@ export function halfSums(
           first,
           x.findIndex((value) => value / diameter > cut.x),
         )
-  const part = (begin: number): FieldPart | null =>
-    partSums(half, vorticity, areas, { begin, chosen, left: noisy ? 0 : threshold })
+  const part = (begin: number): FieldPart | null => {
+    const sums = partSums(half, vorticity, areas, { begin, chosen, left: noisy ? 0 : threshold })
+    if (!noisy || sums === null) return sums
+    const coreRadius = coreAbout(half, vorticity, smoothed.values, areas, begin, threshold)
+    return coreRadius === null ? sums : { ...sums, coreRadius }
+  }
   return {
     ...nothing,
     total: part(first),
@@ -169,6 +181,51 @@ function partSums(
     coreRadius: Math.sqrt(Math.max(0, core)),
     impulsePerDensity: (Math.PI * sumRR) / (1 - left),
   }
+}
+
+/**
+ * a of a core through noise, from its surroundings alone: a speck of noise far out weighs more in a second moment than the core does.
+ *
+ * The region hangs together about the peak of the smoothed field, above a share of it. It cuts a Gaussian core off at the radius of its own area
+ * A, so that q = exp(-A / (pi a^2)) is missing from its circulation, and a is found by turns from the second moment within.
+ *
+ * @returns null where the region is too small to tell, or where the turns come to nothing
+ */
+function coreAbout(
+  { x, r }: HalfPlane,
+  vorticity: Float64Array,
+  smoothed: Float64Array,
+  areas: Float64Array,
+  begin: number,
+  threshold: number,
+): number | null {
+  const width = x.length
+  const inside = regionAbout(smoothed, width, begin, Math.max(CORE_SHARE, threshold))
+  if (inside.length < FEWEST_OF_CORE) return null
+  let [sum, sumX, sumR, area] = [0, 0, 0, 0]
+  for (const k of inside) {
+    const strength = read(vorticity, k) * read(areas, Math.floor(k / width))
+    area += read(areas, Math.floor(k / width))
+    sum += strength
+    sumX += strength * read(x, k % width)
+    sumR += strength * read(r, Math.floor(k / width))
+  }
+  if (!(sum > 0)) return null
+  const [meanX, meanR] = [sumX / sum, sumR / sum]
+  let spread = 0
+  for (const k of inside) {
+    const row = Math.floor(k / width)
+    const square = (read(x, k % width) - meanX) ** 2 + (read(r, row) - meanR) ** 2
+    spread += (read(vorticity, k) * read(areas, row) * square) / sum
+  }
+  let square = spread
+  for (let turn = 0; turn < CORE_TURNS; turn++) {
+    const cut = Math.exp(-area / (Math.PI * square))
+    square = (spread * (1 - cut)) / (1 - cut + cut * Math.log(cut))
+    if (!(square < LARGEST_SPREAD * spread)) return null
+  }
+  const [dx, dr] = [at(x, 1) - at(x, 0), at(r, 1) - at(r, 0)]
+  return Math.sqrt(Math.max(0, square - (dx * dx + dr * dr) / 6))
 }
 
 /** Line integral round the half plane from a column to its end, trapezoid rule [m2/s]. */

@@ -71,7 +71,10 @@ export interface FieldResult {
     readonly from: number
     readonly to: number
   } | null
-  /** Means over the flat stretch, or over the last quarter of the frames without one; null where no ring was seen. */
+  /**
+   * Means over the flat stretch, or without one over the frames after the stroke, or those in which the ring is whole; the core is
+   * the median. null where no ring was seen.
+   */
   readonly ring: {
     readonly circulation: MeasuredValue
     readonly radius: MeasuredValue
@@ -79,7 +82,10 @@ export interface FieldResult {
     readonly impulse: MeasuredValue
     /** Slope of its place [m/s]; null for a single frame. */
     readonly speed: number | null
+    /** How many frames it is of, and the indices of the first and the last. */
     readonly frames: number
+    readonly from: number
+    readonly to: number
   } | null
   /** Formation time at which the total circulation came to the ring's; null where it cannot be told. */
   readonly formationNumber: MeasuredValue | null

@@ -10,8 +10,9 @@ import { countOf, MEASURED, measurementsOf, spanOf, type MeasuredQuantity, type 
 import { ringAt, type RingStart, type RingSurroundings } from './pathModel'
 import { median, robustDeviation } from './robust'
 import { correlationOf } from './smallMatrix'
+import { startBounds, startNotTold, type StartBounds } from './startBounds'
 import { NORMAL_95, student95 } from './student'
-import type { FitName, ReadingRow } from './types'
+import { FIT_NAMES, type FitName, type ReadingRow } from './types'
 
 /** Scatters of the quantities are estimated in this many turns: each reweights the next. */
 const TURNS = 5
@@ -28,6 +29,10 @@ export interface RingFitInput {
   readonly around: RingSurroundings
   /** Rows before this time [s] see a ring that is still forming and are left out. */
   readonly formedAt: number
+  /** Fit every name or nothing: for the runs of a set, so that all of them fit the same. Default false. */
+  readonly all?: boolean
+  /** What is held for reasons that were found elsewhere. */
+  readonly alsoHeld?: readonly HeldParameter[]
 }
 
 interface Attempt {
@@ -46,17 +51,32 @@ export function fitRing(input: RingFitInput): RingFit {
   const { list, borrowed } = measurementsOf(rows, used)
   const forming = rows.filter((row) => !used(row)).length
   const first = carriedByData(input.names, list, start, around)
-  const held: HeldParameter[] = [...first.held]
+  const held: HeldParameter[] = [...(input.alsoHeld ?? []), ...first.held]
   if (first.names.length === 0 || list.length < 2) return nothingFitted(input, list, held, forming)
+  const refused = (why: string): RingFit => ({ ...nothingFitted(input, list, held, forming), message: why })
+  const [lost] = first.held
+  if (input.all === true && lost !== undefined) return refused(`This run is not fitted by itself. ${lost.reason}`)
+  const bounds = startBounds(list, start, formedAt)
   let names = first.names
-  let attempt = stagedAttempt(names, list, start, around)
+  let attempt = bestAttempt(names, list, start, around, bounds)
   for (;;) {
-    const drop = notCarried(names, errorsOf(attempt), list)
+    const astray = startNotTold(names, factsOf(attempt), bounds)
+    if (astray !== null && input.all === true) return refused(`This run is not fitted by itself. ${astray.reason}`)
+    const drop = astray ?? (input.all === true ? null : notCarried(names, errorsOf(attempt), list))
     if (drop === null) break
+    const next = names.filter((name) => name !== drop.name)
+    const position = held.findIndex(({ name }) => name === 'startPosition')
+    if (astray?.name === 'startTime' && first.names.includes('startPosition') && position >= 0) {
+      // The ring did not pass the planned place in time: then the place is fitted and the planned time is held.
+      held.splice(position, 1)
+      names = FIT_NAMES.filter((name) => name === 'startPosition' || next.includes(name))
+    } else if (next.length === 0 || astray?.name === 'startTime')
+      return refused(`${astray?.reason ?? drop.reason} Check the time and length offsets.`)
+    else names = next
     held.push(drop)
-    names = names.filter((name) => name !== drop.name)
-    attempt = stagedAttempt(names, list, start, around)
+    attempt = bestAttempt(names, list, start, around, bounds)
   }
+  if (attempt.solved.status === 'failed') return refused(`${attempt.solved.message} No numbers are given.`)
   const errors = errorsOf(attempt)
   if (errors === null) {
     const untold = names.map((name) => ({
@@ -125,14 +145,36 @@ function nothingFitted(
   }
 }
 
-/** Circulation and place first, which any record tells; then all from there. */
+/** From the planned start and, where that runs away, from another: the first that converges to a start that can be. */
+function bestAttempt(
+  names: readonly FitName[],
+  list: readonly Measurement[],
+  start: RingStart,
+  around: RingSurroundings,
+  bounds: StartBounds | null,
+): Attempt {
+  const first = stagedAttempt(names, list, start, around, 'startPosition')
+  const good = (one: Attempt): boolean => startNotTold(names, factsOf(one), bounds) === null
+  if (!names.includes('startTime') || good(first)) return first
+  const second = stagedAttempt(names, list, start, around, 'startTime')
+  return good(second) ? second : first
+}
+
+function factsOf({ ring, solved, ...one }: Attempt): Parameters<typeof startNotTold>[1] {
+  const errors = errorsOf({ ...one, ring, solved })
+  const correlation = solved.covariance === null ? [] : correlationOf(solved.covariance)
+  return { ring, errors, correlation, converged: solved.status === 'done' }
+}
+
+/** Circulation and place, or time, first, which any record tells; then all from there. */
 function stagedAttempt(
   names: readonly FitName[],
   list: readonly Measurement[],
   start: RingStart,
   around: RingSurroundings,
+  before: 'startPosition' | 'startTime',
 ): Attempt {
-  const plain = names.filter((name) => name === 'circulation' || name === 'startPosition')
+  const plain = names.filter((name) => name === 'circulation' || name === before)
   const staged = plain.length > 0 && plain.length < names.length
   const from = staged ? weighted(plain, list, start, around).ring : start
   return weighted(names, list, from, around)

@@ -10,6 +10,9 @@ import type { ForceLog } from './types'
 const FEWEST_QUIET = 5
 /** After the last stroke the stand is left to settle for this many strokes before it counts as quiet. */
 const SETTLED_AFTER = 2
+/** Where the log ends before, for fewer, as long as what follows is flat to so many standard errors. */
+const SETTLED_SOONER = [1, 0.5, 0.25, 0.1] as const
+const FLAT_WITHIN = 3
 /**
  * Peaks are read off the mean cycle at this many phases, each a mean over this share of the period: the highest of many noisy values would be
  * too high.
@@ -51,8 +54,8 @@ export interface ForceValue {
 }
 
 export interface ForceResult {
-  /** Over a whole number of periods [N]. */
-  readonly mean: number
+  /** Over a whole number of periods [N]; null for one pulse, which has no period. */
+  readonly mean: number | null
   /** Highest force of the mean cycle [N]. */
   readonly peak: number
   /** Of one pulse [N s]. */
@@ -109,13 +112,15 @@ export function analyseForce(input: ForceInput): ForceResult | null {
     period,
     given: input.standResonance,
   })
+  // One pulse is held against its impulse: its mean would be over whatever the log lasts.
+  const predicted = single && input.period !== null ? times(whole, period / input.period) : single ? null : whole
   const { predictedMean } = input
   return {
-    mean: whole.value,
+    mean: single ? null : whole.value,
     peak: highest.value,
     impulse: whole.value * period,
     errors: {
-      mean: whole.standardError,
+      mean: single ? null : whole.standardError,
       peak: highest.standardError,
       impulse: times(whole, period).standardError,
     },
@@ -126,7 +131,8 @@ export function analyseForce(input: ForceInput): ForceResult | null {
     perPeriod,
     cycle,
     resonance,
-    lossFactor: predictedMean === null || !(predictedMean > 0) ? null : times(whole, 1 / predictedMean),
+    lossFactor:
+      predictedMean === null || !(predictedMean > 0) || predicted === null ? null : times(predicted, 1 / predictedMean),
     notes: [...notesOf(zero, periods.length, pulses, single), ...resonance.notes],
   }
 }
@@ -144,7 +150,8 @@ function times({ value, standardError }: ForceValue, factor: number): ForceValue
 function zeroOf({ time, force }: ForceLog, end: number, duration: number): ForceZero {
   let [count, before, after] = [0, 0, 0]
   let [sumT, sumF] = [0, 0]
-  const quiet = (t: number): boolean => t < 0 || t > end + SETTLED_AFTER * duration
+  const settled = settledFrom({ time, force }, end, duration)
+  const quiet = (t: number): boolean => t < 0 || t > settled
   for (let i = 0; i < time.length; i++) {
     const t = at(time, i)
     if (!quiet(t)) continue
@@ -180,6 +187,27 @@ function zeroOf({ time, force }: ForceLog, end: number, duration: number): Force
     if (quiet(t)) squares += (at(force, i) - zero - drift * t) ** 2
   }
   return { zero, drift, samples: count, noise: Math.sqrt(squares / Math.max(1, count - 2)), from }
+}
+
+/** From when on the stand is quiet after the last stroke [s]; infinity where it is not seen to be. */
+function settledFrom({ time, force }: ForceLog, end: number, duration: number): number {
+  const usual = end + SETTLED_AFTER * duration
+  const after = (from: number): number[] => Array.from(force).filter((_, i) => at(time, i) > from)
+  if (after(usual).length >= FEWEST_QUIET) return usual
+  for (const share of SETTLED_SOONER) {
+    const values = after(end + share * duration)
+    const half = values.length >> 1
+    if (half < FEWEST_QUIET) continue
+    const [early, late] = [values.slice(0, half), values.slice(half)]
+    const error = Math.hypot(standardErrorOf(early), standardErrorOf(late))
+    // Exactly alike where the log is without noise.
+    if (Math.abs(mean(late) - mean(early)) <= FLAT_WITHIN * error) return end + share * duration
+  }
+  return Number.POSITIVE_INFINITY
+}
+
+function standardErrorOf(values: readonly number[]): number {
+  return (standardDeviation(values) ?? 0) / Math.sqrt(values.length)
 }
 
 /** Which of the train's periods lie wholly inside the log. */
@@ -226,7 +254,7 @@ function notesOf(zero: ForceZero, periods: number, pulses: number, single: boole
     )
   else if (zero.from !== 'before and after')
     notes.push(`The zero is that ${zero.from} the pulses: a drift is not seen.`)
-  if (single) notes.push('One pulse: its mean is over the log from the start of the stroke to its end.')
+  if (single) notes.push('One pulse: its impulse is told, and no mean, which would be over whatever the log lasts.')
   else if (periods < pulses) notes.push(`The log holds ${periods} of the ${pulses} periods.`)
   return notes
 }

@@ -18,8 +18,8 @@ const FEWEST_READINGS = 3
 const LONG_GROWTH = 2
 /** Standard error above which a parameter is not carried: of the record's time and way, and of the value itself. */
 const LARGEST_ERROR = { startTime: 0.25, startPosition: 0.25, circulation: 0.5, radius: 0.3, coreRadius: 0.5 } as const
-/** Given up first. */
-const LEAST_WANTED: readonly FitName[] = ['coreRadius', 'radius', 'startTime', 'startPosition', 'circulation']
+/** Given up first: of start time and place the place, which the plan knows better than a camera's clock. */
+const LEAST_WANTED: readonly FitName[] = ['coreRadius', 'radius', 'startPosition', 'startTime', 'circulation']
 
 export const FIT_WORDS: Readonly<Record<FitName, string>> = {
   circulation: 'circulation',
@@ -107,9 +107,17 @@ export function notCarried(
     startTime: LARGEST_ERROR.startTime * spanOf(list, ({ time }) => time),
     startPosition: LARGEST_ERROR.startPosition * spanOf(places, ({ value }) => value),
   }
+  const both = names.includes('startTime') && names.includes('startPosition')
   for (const name of LEAST_WANTED) {
     const k = names.indexOf(name)
     if (k < 0 || names.length === 1) continue
+    const time = names.indexOf('startTime')
+    // Where the time is not carried beside the place, it is carried without it.
+    if (errors !== null && both && name === 'startPosition' && at(errors, time) > limitOf.startTime)
+      return {
+        name,
+        reason: `The start position is held at the planned one, in every run alike: the ring slows so little over this record that the standard error of the start time would be ${short(at(errors, time))} s beside it, above ${short(limitOf.startTime)} s, a quarter of the record.`,
+      }
     if (errors === null)
       return {
         name,
@@ -126,7 +134,7 @@ function heldFor(name: FitName, error: number, limit: number): string {
   if (name === 'startTime')
     return `The start time is held: the ring slows so little over this record that its standard error would be ${short(error)} s, above ${short(limit)} s, a quarter of the record.`
   if (name === 'startPosition')
-    return `The start position is held: its standard error would be ${short(error)} m, above ${short(limit)} m, a quarter of the way seen.`
+    return `The start position is held at the planned one, in every run alike: its standard error would be ${short(error)} m, above ${short(limit)} m, a quarter of the way seen.`
   return `The ${FIT_WORDS[name]} is held: its standard error would be ${short(100 * error)} %, above ${short(100 * limit)} %.`
 }
 

@@ -1,7 +1,7 @@
 /** Repeats: every run fitted by itself, all together, and what the runs say of one another. */
 import type { FittedValue, RingFit } from './fitTypes'
 import { fitRing, type RingFitInput } from './fitRing'
-import { FIT_WORDS } from './identify'
+import { FIT_WORDS, type HeldParameter } from './identify'
 import { mean, standardDeviation } from './robust'
 import { FIT_NAMES, type FitName } from './types'
 
@@ -39,13 +39,29 @@ export function fitRepeats(input: RingFitInput): Repeats {
     if (own === undefined) indices.set(run, [index])
     else own.push(index)
   })
-  const pooled = fitRing(input)
   const single = indices.size === 1
-  const perRun = [...indices].map(([run, rowIndices]): RunFit => {
-    const own = new Set(rowIndices)
-    const fit = single ? pooled : fitRing({ ...input, rows: input.rows.filter((_, index) => own.has(index)) })
-    return { ...fit, run, rowIndices }
-  })
+  const runsOf = (pooled: RingFit): readonly RunFit[] =>
+    [...indices].map(([run, rowIndices]): RunFit => {
+      const own = new Set(rowIndices)
+      const rows = input.rows.filter((_, index) => own.has(index))
+      const told = pooled.fitted.length > 0
+      const alike = told ? { names: pooled.fitted, all: true, alsoHeld: pooled.held } : {}
+      return { ...(single ? pooled : fitRing({ ...input, rows, ...alike })), run, rowIndices }
+    })
+  let pooled = fitRing(input)
+  let perRun = runsOf(pooled)
+  const both = pooled.fitted.includes('startTime') && pooled.fitted.includes('startPosition')
+  // A mean over runs of which some fit the place and others hold it would mix two things.
+  if (both && perRun.some(({ status }) => status === 'failed')) {
+    const held: HeldParameter = {
+      name: 'startPosition',
+      reason:
+        'The start position is held at the planned one, in every run alike: not every run can tell it from the start time.',
+    }
+    const names = input.names.filter((name) => name !== 'startPosition')
+    pooled = fitRing({ ...input, names, alsoHeld: [held] })
+    perRun = runsOf(pooled)
+  }
   const repeats: Partial<Record<FitName, RepeatValue>> = {}
   const notes: string[] = []
   for (const name of FIT_NAMES) {

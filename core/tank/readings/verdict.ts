@@ -109,13 +109,15 @@ function causeInWords(cause: Cause, change: number): string {
 
 function sentence(
   quantity: ComparedQuantity,
-  { value, standardError }: ComparedValue,
+  { value, standardError, intervalFactor }: ComparedValue,
   { low, high }: PredictedValue,
   { state, outsideShare, explanations }: Pick<Verdict, 'state' | 'outsideShare' | 'explanations'>,
 ): string {
   const { name, unit } = QUANTITY_WORDS[quantity]
   const show = (one: number): string => formatQuantity(one, unit, 3)
-  const error = standardError === null ? '' : ` (standard error ${formatQuantity(standardError, unit, 2)})`
+  // As in every other place a verdict stands in: half the 95 % interval.
+  const half = (standardError ?? 0) * (intervalFactor ?? NORMAL_95)
+  const error = half > 0 ? ` ± ${formatQuantity(half, unit, 2)} (95 %)` : ''
   const range = formatRange(low, high, unit)
   const band = low === high ? `the prediction, ${show(low)}` : `the predicted band, ${withUnit(range)}`
   const start = `${name} ${show(value)}${error}`

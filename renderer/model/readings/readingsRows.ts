@@ -35,7 +35,7 @@ export function verdictRows({ verdicts }: ReadingsResult, units: Units): readonl
       id: quantity,
       label,
       figure: valueWithError(measured.value, half, unit),
-      unit,
+      unit: half === null || !(half > 0) ? unit : `${unit} (95\u00A0%)`.trim(),
       state,
       band: `the predicted ${range.text}${range.unit === '' ? '' : `\u00A0${range.unit}`}`,
       text: text.replaceAll(' %', '\u00A0%'),
@@ -127,18 +127,19 @@ export interface FactRow {
 
 function measured(value: number, error: number | null, unit: string): string {
   const text = valueWithError(value, error, unit)
-  return unit === '' ? text : `${text}\u00A0${unit}`
+  const whole = unit === '' ? text : `${text}\u00A0${unit}`
+  return error === null || !(error > 0) ? whole : `${whole} (standard error)`
 }
 
 export function forceRows({ force }: ReadingsResult, units: Units): readonly FactRow[] {
   if (force === null) return []
   const { errors, zero, resonance } = force
   return [
-    { label: 'Mean', text: measured(force.mean, errors.mean, units.force) },
+    ...(force.mean === null ? [] : [{ label: 'Mean', text: measured(force.mean, errors.mean, units.force) }]),
     { label: 'Peak', text: measured(force.peak, errors.peak, units.force) },
     { label: 'Impulse a pulse', text: measured(force.impulse, errors.impulse, units.impulse) },
     ...(force.ripple === null ? [] : [{ label: 'Ripple', text: formatNumber(force.ripple, 3) }]),
-    { label: 'Whole periods', text: String(force.periods) },
+    ...(force.mean === null ? [] : [{ label: 'Whole periods', text: String(force.periods) }]),
     ...(force.lossFactor === null
       ? []
       : [
@@ -157,6 +158,20 @@ export function forceRows({ force }: ReadingsResult, units: Units): readonly Fac
   ]
 }
 
+function framesOf({
+  frames,
+  from,
+  to,
+}: {
+  readonly frames: number
+  readonly from: number
+  readonly to: number
+}): string {
+  if (frames === 1) return `frame ${from + 1}`
+  const whole = to - from + 1
+  return `frames ${from + 1} to ${to + 1}${frames < whole ? `, ${frames} of ${whole} with a ring` : ''}`
+}
+
 export function fieldRows({ fields }: ReadingsResult, units: Units): readonly FactRow[] {
   if (fields === null) return []
   const { ring, formationNumber, pinchOff, frames } = fields
@@ -166,12 +181,16 @@ export function fieldRows({ fields }: ReadingsResult, units: Units): readonly Fa
   if (pinchOff !== null) rows.push({ label: 'Pinched off at', text: formatQuantity(pinchOff.time, units.wakeTime, 3) })
   if (ring !== null)
     rows.push(
+      { label: 'Ring over', text: framesOf(ring) },
       {
         label: 'Ring circulation',
         text: measured(ring.circulation.value, ring.circulation.standardError, units.circulation),
       },
       { label: 'Ring radius', text: measured(ring.radius.value, ring.radius.standardError, units.length) },
-      { label: 'Core radius', text: measured(ring.coreRadius.value, ring.coreRadius.standardError, units.length) },
+      {
+        label: 'Core radius, median',
+        text: measured(ring.coreRadius.value, ring.coreRadius.standardError, units.length),
+      },
       { label: 'Impulse', text: measured(ring.impulse.value, ring.impulse.standardError, units.impulse) },
       ...(ring.speed === null ? [] : [{ label: 'Ring speed', text: formatQuantity(ring.speed, units.ringSpeed, 3) }]),
     )

@@ -157,7 +157,7 @@ describe('a run', () => {
     expect(notes).toEqual([
       'The readings hold nothing to compare, and are left out.',
       'The sweep names no field to vary, and is left out.',
-      'The spread names no number that scatters, and is left out.',
+      'The spread names no number that scatters, and is left out: spread.relative must name one and its relative deviation, or spread.absolute, for instance "relative": { "programme.stroke": 0.01 }.',
     ])
   })
 
@@ -192,6 +192,35 @@ describe('files that are there already', () => {
     expect(written).toEqual([])
     expect(notes.join('\n')).toMatch(/pulse\.csv exists already and out holds no summary of an earlier run/)
     expect(await readFile(path.join(folder, 'out', 'pulse.csv'), 'utf8')).toBe('mine')
+  })
+
+  it('of a run that was killed are cleared, but not files that it does not list', async () => {
+    await writePlanFile()
+    const out = path.join(folder, 'out')
+    await mkdir(out)
+    const files = ['pulse.csv', 'jet.csv', '../notes.txt']
+    await writeFile(path.join(out, '.ringwright-run'), JSON.stringify({ format: 'ringwright-summary', files }))
+    await writeFile(path.join(out, 'pulse.csv'), 'half')
+    await writeFile(path.join(out, 'jet.csv'), 'half')
+    await writeFile(path.join(out, '.jet.csv.77-4.tmp'), 'half')
+    await writeFile(path.join(out, 'mine.csv'), 'mine')
+    await writeFile(path.join(folder, 'notes.txt'), 'mine')
+    expect((await batch(['plan.json', '--out', 'out'])).code).toBe(0)
+    expect((await readdir(out)).toSorted()).toEqual(['mine.csv', 'pulse.csv', 'report.html', 'summary.json'])
+    expect(await readFile(path.join(folder, 'notes.txt'), 'utf8')).toBe('mine')
+  })
+
+  it('are kept where a killed run does not list them', async () => {
+    await writePlanFile()
+    const out = path.join(folder, 'out')
+    await mkdir(out)
+    await writeFile(
+      path.join(out, '.ringwright-run'),
+      JSON.stringify({ format: 'ringwright-summary', files: ['jet.csv'] }),
+    )
+    await writeFile(path.join(out, 'pulse.csv'), 'mine')
+    expect((await batch(['plan.json', '--out', 'out'])).code).toBe(2)
+    expect(await readFile(path.join(out, 'pulse.csv'), 'utf8')).toBe('mine')
   })
 
   it('do not matter when the run writes nothing of their names', async () => {
@@ -252,7 +281,11 @@ describe('a refusal', () => {
     ['tankRun', {}, 'tankRun'],
     ['sweep', {}, 'sweep'],
     ['sweep', { sweep: { fields: [] } }, 'field to sweep'],
-    ['spread', { spread: {} }, 'number that scatters'],
+    [
+      'spread',
+      { spread: {} },
+      'number that scatters: spread.relative must name one and its relative deviation, or spread.absolute, for instance "relative": { "programme.stroke": 0.01 }',
+    ],
   ])('of the section %s where there is nothing to compute exits 2', async (section, parts, lacking) => {
     await writePlanFile(parts)
     const { code, notes } = await batch(['plan.json', '--out', 'out', '--only', section])
@@ -340,7 +373,10 @@ describe('an interrupt', () => {
     })
     expect(code).toBe(130)
     expect(written).toEqual([path.join('out', 'pulse.csv')])
-    expect(await readdir(path.join(folder, 'out'))).toEqual(['pulse.csv'])
+    // The mark tells a later run whose file this is.
+    expect((await readdir(path.join(folder, 'out'))).toSorted()).toEqual(['.ringwright-run', 'pulse.csv'])
+    expect((await batch(['plan.json', '--out', 'out'])).code).toBe(0)
+    expect((await readdir(path.join(folder, 'out'))).toSorted()).toEqual(['pulse.csv', 'report.html', 'summary.json'])
   })
 })
 

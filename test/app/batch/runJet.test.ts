@@ -122,7 +122,10 @@ describe('the section jet of a run', () => {
     expect(header).toEqual(['time (s)', 'event', 'rings', 'x (m)', 'detail'])
     expect(rows.map((row) => row[1])).toEqual(['pinch-off', 'end'])
     const { jet = {} } = await summary('long')
-    expect(Number(rows[0]?.[0])).toBe(jet['pinchOffTime'])
+    expect(Number(rows[0]?.[0])).toBe(jet['pinchOffTimeShown'])
+    // One smoothing length alone: its own mean.
+    expect(jet['pinchOffTimeShown']).toBe(jet['pinchOffTime'])
+    expect(rows[0]?.[4]).toContain(`in the shown run (smoothing length ${String(jet['shownDelta'])} D)`)
     expect(rows[0]?.[2]).toBe('1')
     expect(Number(rows[0]?.[3])).toBeGreaterThan(0)
   })

@@ -121,6 +121,19 @@ describe('the section readings', () => {
     expect(Math.abs(fields.ring.radius.value / INVENTED_RING.radius - 1)).toBeLessThan(0.02)
   })
 
+  it('says why nothing can be fitted, and writes what can still be told', async () => {
+    const none = { radius: null, circulation: null, sigmaX: null, sigmaRadius: null, sigmaCirculation: null }
+    await writeDay({ rows: ['1', '1', '2', '2'].map((run) => ({ ...none, run, time: 2, x: 0.1 })) })
+    const { code, notes } = await batch(['day.json', '--out', 'out', '--only', 'readings'])
+    expect({ code, notes }).toEqual({
+      code: 0,
+      notes: ['The readings: Nothing can be fitted to 4 readings, all of one moment.'],
+    })
+    const report = await readFile(path.join(folder, 'out', 'report.html'), 'utf8')
+    expect(report).not.toMatch(/NaN|undefined/)
+    expect(report).toContain('all of one moment')
+  })
+
   it('says which fields are left out where no folder is named', async () => {
     await writeDay({ fields: FIELDS })
     const { code, notes } = await batch(['day.json', '--out', 'out', '--only', 'readings'])

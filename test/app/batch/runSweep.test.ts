@@ -265,6 +265,7 @@ describe('a whole sweep that was stopped', () => {
     expect(stopped.code).toBe(130)
     expect(stopped.written).toEqual([path.join('out', 'pulse.csv')])
     expect((await readdir(path.join(folder, 'out'))).toSorted()).toEqual([
+      '.ringwright-run',
       'pulse.csv',
       'sweep.csv.partial',
       'sweep.json',

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { CAUTIONS, cautionsFor } from '../../../core/plan'
+import { CAUTIONS, cautionsFor, pulsesOverlap } from '../../../core/plan'
 import { run } from '../../../core/run'
 import { planOf } from '../../support/plans'
 
@@ -55,6 +55,7 @@ const TRIGGERS: Readonly<Record<string, Readonly<Record<string, unknown>>>> = {
   'near-wall': {
     wake: { rings: [RING], wall: { point: [0.1, 0, 0], normal: [1, 0, 0] }, duration: 3, outputStep: 0.1 },
   },
+  'train-overlap': { programme: quick(0.06), train: { pulses: 2, period: 0.1 }, wake: { duration: 0.05 } },
   'wake-rings': { programme: quick(0.03 * 6), wake: { duration: 0.1 } },
   'wake-valid-until': {
     wake: { rings: [RING], wall: { point: [0.1, 0, 0], normal: [1, 0, 0] }, duration: 3, outputStep: 0.1 },
@@ -63,6 +64,11 @@ const TRIGGERS: Readonly<Record<string, Readonly<Record<string, unknown>>>> = {
 }
 
 describe('cautions', () => {
+  it('do not take a period that is the stroke time but for rounding for an overlap', () => {
+    expect(pulsesOverlap(0.82, 0.8200000000000001)).toBe(false)
+    expect(pulsesOverlap(0.8, 0.82)).toBe(true)
+  })
+
   // Those of the starting jet, the thruster, the tank, sizing and spread have their triggers in tests of their own.
   const elsewhere = /^(?:jet|thruster|tank|sizing|spread)-/
   const ids = CAUTIONS.filter(({ group }) => group === 'model').map(({ id }) => id)

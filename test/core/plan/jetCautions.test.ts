@@ -30,6 +30,10 @@ const TRIGGERS: Readonly<Record<string, readonly [Readonly<Record<string, unknow
     /this nozzle has a sharp orifice and a radial speed ratio/,
   ],
   'jet-one-constant': [JET, /averaged over 1 smoothing length .* published over-pressure circulation/],
+  'jet-impulse-share': [
+    { ...JET, programme: { shape: 'rectangular', stroke: 0.24, peakSpeed: 0.2 } },
+    /the slug leaves \d+ % .* pinch off at formation time [\d.]+, has \d+ % behind the ring and \d+ % in it/,
+  ],
   'jet-left-out': [JET, /waves round the ring, turbulence, the boundary layer in the tube/],
   'jet-slow-ring': [JET, /5 to 9 % .* 41 % too slow, and why is not known/],
   'jet-short-stroke': [JET, /stroke of 1\.00 D is below 2 D, and the smoothing given, 0\.2 D/],

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { typescriptKernel } from '../../../core/kernel'
-import { readProgrammeCsv } from '../../../core/plan'
+import { readProgrammeCsv, examplePlan, MATRIX_DEFAULTS, type Plan } from '../../../core/plan'
 import { TANK_CAUTIONS } from '../../../core/plan/tankCautions'
 import {
   arrivalsTable,
@@ -37,6 +37,12 @@ function planned(parts: Partial<TankRunSection> = {}, more: Partial<TankRunInput
   )
 }
 
+/** The plan about a run: its pulse is computed 0.2 m deep. */
+function planOf(parts: Partial<TankRunSection> = {}): Plan {
+  const { water } = examplePlan('tank-day')
+  return { ...examplePlan('tank-day'), water: { ...water, depth: 0.2 }, tankRun: section({ ...CALM, ...parts }) }
+}
+
 const fast = { pulse: { ...PLAIN, programme: { ...PLAIN.programme, peakSpeed: 0.5 } } }
 
 /** A run that fires each caution. */
@@ -54,6 +60,20 @@ const TRIGGERS: Readonly<Record<string, readonly [Partial<TankRunSection>, Parti
   'tank-settling': [{}],
   'tank-dye': [{}],
   'tank-drive-limits': [{ drive: { ...DRIVE, maxTravel: 0.001 } }],
+  'tank-depth-differs': [{ nozzleDepth: 0.5 }],
+  'tank-matrix-limits': [
+    {
+      drive: { ...DRIVE, maxSpeed: 0.1 },
+      matrix: { ...MATRIX_DEFAULTS, fields: [{ path: 'programme.peakSpeed', values: [0.05, 5] }] },
+    },
+    {
+      combined: ([peakSpeed = 0]) => ({
+        section: section({ ...CALM, drive: { ...DRIVE, maxSpeed: 0.1 } }),
+        pulse: { ...PLAIN, programme: { ...PLAIN.programme, peakSpeed } },
+        ageing: 'auto',
+      }),
+    },
+  ],
   'tank-rounding': [{ drive: { ...DRIVE, maxAcceleration: 0.05 } }],
   'tank-pair-interval': [{ camera: { ...CALM.camera, scale: 4000 } }],
   'tank-vectors': [{ camera: { ...CALM.camera, scale: 4000 } }],
@@ -68,7 +88,7 @@ describe('cautions of the tank', () => {
     const trigger = TRIGGERS[id]
     if (trigger === undefined) throw new Error(`no trigger is written down for ${id}`)
     const tankRun = await planned(...trigger)
-    const text = TANK_CAUTIONS.find((one) => one.id === id)?.text({ tankRun }) ?? ''
+    const text = TANK_CAUTIONS.find((one) => one.id === id)?.text({ plan: planOf(trigger[0]), tankRun }) ?? ''
     expect(text.length).toBeGreaterThan(30)
     expect(text).toMatch(/[.:]$/)
     expect(text).not.toMatch(/NaN|undefined|null|Infinity/)
@@ -76,16 +96,18 @@ describe('cautions of the tank', () => {
 
   it('are few for a calm run, none without one, and each is told once', async () => {
     const tankRun = await planned()
-    const ids = TANK_CAUTIONS.filter(({ text }) => text({ tankRun }) !== null).map(({ id }) => id)
+    const ids = TANK_CAUTIONS.filter(({ text }) => text({ plan: planOf(), tankRun }) !== null).map(({ id }) => id)
     expect(ids).toEqual(['tank-settling', 'tank-dye'])
-    expect(TANK_CAUTIONS.every(({ text }) => text({ tankRun: null }) === null)).toBe(true)
+    expect(TANK_CAUTIONS.every(({ text }) => text({ plan: planOf(), tankRun: null }) === null)).toBe(true)
     expect(new Set(TANK_CAUTIONS.map(({ id }) => id)).size).toBe(TANK_CAUTIONS.length)
   })
 
   it('say on every run sheet that dye does not mark vorticity', async () => {
     // Check L4: Maxworthy 1972.
     const tankRun = await planned()
-    expect(TANK_CAUTIONS.find(({ id }) => id === 'tank-dye')?.text({ tankRun })).toMatch(/Dye does not mark vorticity/)
+    expect(TANK_CAUTIONS.find(({ id }) => id === 'tank-dye')?.text({ plan: planOf(), tankRun })).toMatch(
+      /Dye does not mark vorticity/,
+    )
   })
 })
 

@@ -16,6 +16,7 @@ const TRIGGERS: Readonly<Record<ThrusterNoteId, ThrusterInput>> = {
   'thruster-several-speeds': withVehicle({ drag: table([0, 0], [0.05, 0.06], [0.12, 0.01], [0.4, 0.2]) }),
   'thruster-limits': withSection({ actuator: { ...BENCH.actuator, maxForce: 0.001 } }),
   'thruster-speed-jumps': { ...ON_BENCH, pulse: { ...PUSH, programme: CONSTANT } },
+  'thruster-no-column': { ...ON_BENCH, pulse: { ...PUSH, nozzle: { ...PUSH.nozzle, length: 0 } } },
   'thruster-braking-suction': withSection({ intake: { ...BENCH.intake, area: 4e-6 } }),
   'thruster-close-nozzles': withSection({ count: 2, spacing: 0.025 }),
   'thruster-close-rings': {

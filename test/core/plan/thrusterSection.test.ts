@@ -141,7 +141,7 @@ describe('the section thruster', () => {
     [{ target: [{ speed: 1, thrust: 1 }] }, /thruster\.target\.0 must give a speed or a thrust.*it gives both/],
     [
       { search: { diameter: [0.1, 0.02] } },
-      /thruster\.search\.diameter must run from low to high, got 0\.1 before 0\.02/,
+      /thruster\.search\.diameter must run from low to high, got 0\.1.m before 0\.02.m/,
     ],
     [{ search: { diameter: 0.1 } }, /thruster\.search\.diameter must be a low and a high end/],
     [{ search: { count: [1, 2.5] } }, /thruster\.search\.count\.1 must be a whole number between 1 and 100, got 2\.5/],

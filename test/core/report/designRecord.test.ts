@@ -6,6 +6,7 @@ import { inputGroups } from '../../../core/report/record/inputRows'
 import { showOf } from '../../../core/report/record/show'
 import { sourceList } from '../../../core/report/record/sources'
 import { availableSections, run, type RunData } from '../../../core/run'
+import type { ThrusterResult } from '../../../core/thruster'
 
 const META = { date: '4 June 2031', program: { name: 'Ringwright', version: '1.2.3' }, inputHash: 'ab'.repeat(32) }
 
@@ -114,8 +115,44 @@ describe('the inputs of a record', () => {
     const fresh = examplePlan('tank-day')
     const text = textOf(tank.record)
     expect(fresh.water.kind).toBe('fresh')
-    expect(text).toContain('Given, not read by this plan: Salinity 35')
+    expect(text).toContain('Not read by this plan, as given or by default: Salinity 35')
     expect(text).toMatch(/Not given: .*largest jerk|Not given: Largest jerk/u)
+  })
+})
+
+describe('the figures of thrusters in a record', () => {
+  function printedOf(change: (result: ThrusterResult) => Partial<ThrusterResult>): string {
+    const { plan, data } = vehicle
+    if (data.thruster === null) throw new Error('no thruster')
+    const { result } = data.thruster
+    const thruster = { ...data.thruster, result: { ...result, ...change(result) } }
+    return textOf(designRecord(plan, { ...data, thruster }, META))
+  }
+
+  it('show a balance that is met to rounding as nothing over, and a true excess as it is', () => {
+    expect(printedOf(() => ({ dragAtSpeed: 2, excessThrust: -8.88e-16 }))).toMatch(/Excess of thrust over drag\n0 /u)
+    expect(printedOf(() => ({ dragAtSpeed: 2, excessThrust: -0.00724 }))).toMatch(
+      /Excess of thrust over drag\n[-−]7\.24 mN/u,
+    )
+  })
+
+  it('speak of close neighbours only where their loss is in the range', () => {
+    expect(printedOf(() => ({ proximityLoss: 0.02 }))).toContain('slug with the loss of close neighbours, to slug')
+    expect(printedOf(() => ({ proximityLoss: 0 }))).not.toContain('slug with the loss of close neighbours')
+  })
+
+  it('say where the refill, not the stroke, makes the plunger fastest', () => {
+    const faster = (times: number): string =>
+      printedOf(({ plunger, pulse }) => ({ plunger: { ...plunger, speed: times * pulse.pistonPeakSpeed } }))
+    expect(faster(1.5)).toContain('Peak plunger speed, while refilling')
+    expect(faster(1)).not.toContain('while refilling')
+  })
+
+  it('have the water carried along among the parts of the power', () => {
+    expect(printedOf(({ power }) => ({ power: { ...power, carried: 1, total: power.total + 2 } }))).toContain(
+      'water carried along',
+    )
+    expect(textOf(vehicle.record)).not.toContain('water carried along')
   })
 })
 

@@ -70,6 +70,13 @@ describe('jetTimeline', () => {
     expect(at(moments, 2).time).toBe(long.pinchOff?.time)
   })
 
+  it('says that a ring is full in this run only, where the stroke is too short to tell the formation number', async () => {
+    const { shown } = await jetAt(5)
+    const full = jetTimeline(shown, ramped(5), DIAMETER).moments.find(({ id }) => id === 'ring-full')
+    expect(full?.label).toBe('ring full in this run')
+    expect(at(scene.timeline.moments, 0).label).toBe('ring full')
+  })
+
   it('has no pinch-off where one ring takes everything', () => {
     expect(short.trailingJet).toBe(false)
     expect(jetTimeline(short, ramped(2), DIAMETER).moments.map(({ id }) => id)).toEqual(['stroke-end'])

@@ -1,5 +1,12 @@
 import { describe, expect, it } from 'vitest'
-import { drawingColours, plotToSvg, textWidth, type DrawingTheme, type PlotModel } from '../../../core/report'
+import {
+  axisTicks,
+  drawingColours,
+  plotToSvg,
+  textWidth,
+  type DrawingTheme,
+  type PlotModel,
+} from '../../../core/report'
 import { PLOT } from './models'
 import { readXml, textsOf } from './xml'
 
@@ -88,5 +95,22 @@ describe('a plot written as SVG', () => {
   it('uses no font, script or picture from elsewhere', () => {
     const svg = plotToSvg(PLOT, { width: 640, height: 400, theme: 'light' })
     expect(svg).not.toMatch(/<script|<image|@import|@font-face|href|url\(/)
+  })
+})
+
+describe('ticks of an axis', () => {
+  it('are at least two, however few the room is for', () => {
+    // Two steps of 1 would leave only the zero.
+    for (const [min, max] of [
+      [-0.9, 0.98],
+      [-4, 9.9],
+      [-0.4, 0.45],
+      [0.31, 0.49],
+    ] as const) {
+      const ticks = axisTicks(min, max, 2)
+      expect(ticks.length).toBeGreaterThanOrEqual(2)
+      expect(new Set(ticks.map(({ label }) => label)).size).toBe(ticks.length)
+    }
+    expect(axisTicks(0, 10, 5).map(({ label }) => label)).toEqual(['0', '2', '4', '6', '8', '10'])
   })
 })

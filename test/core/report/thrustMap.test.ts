@@ -105,6 +105,38 @@ describe('the map of a thruster', () => {
     ])
   })
 
+  it('names its number of thrusters, and those of candidates that lie elsewhere', () => {
+    const several = [3, 2, 3].map((count) => ({ ...made.present, count }))
+    expect(model.standing).toBe(`For ${made.present.count} thrusters, as planned.`)
+    expect(modelOf(made, 'power', { candidates: several.map((design) => ({ ...design, count: 7 })) }).standing).toBe(
+      `For ${made.present.count} thrusters, as planned. Dashed candidates are for 7 thrusters: they lie on another map.`,
+    )
+    const none = { ...made, map: { ...made.map, feasible: made.map.feasible.map(() => 0) } }
+    const alone = { ...made.present, count: 1 }
+    expect(modelOf(none, 'power', { present: alone, candidates: several }).standing).toBe(
+      'No choice on this map, for 1 thruster, as planned, holds every limit. ' +
+        'Dashed candidates are for 2 or 3 thrusters: they lie on another map.',
+    )
+  })
+
+  it('spans its colours by what holds every limit, and leaves the extremes out where nothing does', () => {
+    const held = made.map.power.filter((_, cell) => at(made.map.feasible, cell) === 1)
+    expect([model.result.low, model.result.high]).toEqual([Math.min(...held), Math.max(...held)])
+    const cells = made.map.power.length
+    // One choice in a hundred takes a million watts: the others keep their colours.
+    const map = {
+      ...made.map,
+      power: made.map.power.map((_, cell) => (cell % 100 === 0 ? 1e6 : 1 + cell / cells)),
+      feasible: made.map.feasible.map(() => 0),
+      rooms: new Map([['thrust' as const, made.map.power.map(() => -1)]]),
+    }
+    const { result, weak } = modelOf({ ...made, map })
+    expect(result.low).toBeGreaterThan(1)
+    expect(result.high).toBeLessThan(2.01)
+    expect(result.beyondHigh).toBe(true)
+    expect(weak.length).toBeGreaterThan(0)
+  })
+
   it('colours by powers of ten where values span them', () => {
     const map = { ...made.map, power: made.map.power.map((_, i) => 10 ** ((4 * i) / made.map.power.length)) }
     const { result } = thrustMap({

@@ -123,6 +123,11 @@ describe('plots of a thruster', () => {
     expect(parts.map(({ id }) => id)).toEqual(['jet', 'nozzleLoss', 'refill', 'column', 'actuator'])
     // Efficiency 0.7.
     expectClose(at(parts, 4).share, 0.3, 1e-12)
+    // Water carried along is a part of its own, and the actuator's loss stays 0.3 of the whole.
+    const { power } = vehicle.thruster
+    const more = powerBar({ power: { ...power, carried: 0.7, total: power.total + 1 } })
+    expect(more.map(({ id }) => id)).toEqual(['jet', 'nozzleLoss', 'refill', 'column', 'carried', 'actuator'])
+    expectClose(at(more, 5).share, 0.3, 1e-12)
   })
 
   it('need no values that have no bound', async () => {

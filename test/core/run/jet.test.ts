@@ -48,7 +48,7 @@ describe('the section jet', () => {
     expect(jet?.own.trailingJet).toBe(false)
     expect(jet?.formation?.shown.strokeRatio).toBeCloseTo(8, 12)
     expect(data?.pulse?.formationNumber.computed).toBe(jet?.formation?.formationNumber)
-    expect(jet?.notes.join(' ')).toMatch(/a stroke of 8 D: the plan's own stroke of 1\.00 D ends before a ring is full/)
+    expect(jet?.notes.join(' ')).toMatch(/a stroke of 8 D: the plan's own stroke of 1\.00 D is too short to tell it/)
     expect(Object.isFrozen(jet?.own.shown.history.time)).toBe(true)
   })
 

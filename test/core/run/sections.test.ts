@@ -142,6 +142,7 @@ describe('sections', () => {
       'power.nozzleLoss',
       'power.refill',
       'power.column',
+      'power.carried',
       'power.total',
       'froudeEfficiency',
       'overallEfficiency',

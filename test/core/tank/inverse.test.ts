@@ -1,7 +1,15 @@
 import { describe, expect, it } from 'vitest'
 import { typescriptKernel } from '../../../core/kernel'
 import { computePulse, withStroke, type PulseInput } from '../../../core/pulse'
-import { solutionsFor, tankArrivals, tankWalls, withPeak, type InverseInput, type Solution } from '../../../core/tank'
+import {
+  pistonProfile,
+  solutionsFor,
+  tankArrivals,
+  tankWalls,
+  withPeak,
+  type InverseInput,
+  type Solution,
+} from '../../../core/tank'
 import { risingRoot } from '../../../core/tank/risingRoot'
 import { expectClose } from '../../support/close'
 import { PLAIN } from '../pulse/plans'
@@ -217,5 +225,56 @@ describe('the root of a rising function', () => {
 
   it('closes in on a jump past the target', async () => {
     expectClose((await root((x) => (x < 5 ? x : x + 10), 8)) ?? NaN, 5, 1e-12)
+  })
+})
+
+describe('a solution is judged by what would run', () => {
+  // A drive that has 0.1 m/s, 2 m/s2 and 200 m/s3 for a ring of 50 cm2/s from a 25 mm tube.
+  const drive = { ...DRIVE, maxTravel: 0.06, maxSpeed: 0.1, maxAcceleration: 2, maxJerk: 200 }
+  const pulse: PulseInput = {
+    ...PLAIN,
+    nozzle: { ...PLAIN.nozzle, diameter: 0.025, pistonDiameter: 0.05 },
+    programme: {
+      ...PLAIN.programme,
+      shape: 'trapezoid',
+      stroke: 0.0625,
+      peakSpeed: 0.1,
+      riseTime: 0.02,
+      fallTime: 0.02,
+    },
+  }
+  const walls = tankWalls({ tank: NO_TANK, nozzleDepth: null }, 0.025)
+  const { strokes, ...usual } = given({ target: { kind: 'circulation', value: 0.005 }, pulse, drive, walls })
+
+  it('by the speed asked and by the circulation left after rounding, and tells both', async () => {
+    expect(strokes).toBeDefined()
+    const solutions = await solutionsFor(usual, OPTIONS)
+    expect(solutions.some(({ ok }) => ok)).toBe(true)
+    expect(solutions.some(({ ok }) => !ok)).toBe(true)
+    for (const { ok, peakSpeed, askedPeakSpeed, stroke, pistonSpeed, reason } of solutions) {
+      const programme = { ...pulse.programme, stroke, peakSpeed: askedPeakSpeed ?? NaN }
+      const profile = pistonProfile({ programme, nozzle: pulse.nozzle, drive, controllerStep: 0.001 })
+      const kept = Math.abs(profile.rounding.circulationShare - 1) <= 0.01
+      expect(ok).toBe((pistonSpeed ?? NaN) <= 0.1 && kept && profile.ok)
+      expect(reason === null).toBe(ok)
+      if ((pistonSpeed ?? NaN) > 0.1)
+        expect(reason).toContain(`Piston speed ${Number((pistonSpeed ?? NaN).toPrecision(4))} m/s is above`)
+      if (!kept) expect(reason).toMatch(/rounded over \d+ steps .* in place of 0\.005 m2\/s/)
+      // The peak listed is the peak reached, at most the one that is asked for.
+      expectClose(computePulse({ ...pulse, programme }).peakSpeed, peakSpeed ?? NaN, 1e-9)
+      expect(peakSpeed ?? NaN).toBeLessThanOrEqual(askedPeakSpeed ?? NaN)
+    }
+    // Half a diameter of stroke never reaches what its ramps of 20 ms are asked for.
+    expect(solutions[0]?.peakSpeed ?? NaN).toBeLessThan(0.9 * (solutions[0]?.askedPeakSpeed ?? NaN))
+  })
+
+  it('tells which strokes lie past pinch-off, and strokes in twelve digits', async () => {
+    const solutions = await solutionsFor(usual, OPTIONS)
+    expect(solutions.map(({ stroke }) => stroke)).toContain(0.075)
+    for (const { pinchedOff, formationNumber, strokeRatio, stroke } of solutions) {
+      expect(pinchedOff).toBe(strokeRatio > (formationNumber ?? NaN))
+      expect(stroke).toBe(Number(stroke.toPrecision(12)))
+    }
+    expect(new Set(solutions.map(({ pinchedOff }) => pinchedOff))).toEqual(new Set([true, false]))
   })
 })

@@ -175,6 +175,48 @@ describe('power', () => {
     expectClose(power.total, (power.jet + power.nozzleLoss + power.refill + power.column) / 0.5, 1e-13)
   })
 
+  it('of water carried along is its energy at the speed of the vehicle, from half the momentum recovered on', () => {
+    const at = (recoveredShare: number) => vehicleBudget(CONSTANT, { ...full, speed: 0.2, recoveredShare, count: 3 })
+    const still = at(0).power
+    for (const share of [0, 0.2, 0.5]) {
+      // Nothing is added there, not even in the last digit.
+      expect(at(share).power).toEqual(still)
+      expect(still.total).toBe((still.jet + still.nozzleLoss + still.refill + still.column) / 0.5)
+    }
+    const all = at(1)
+    expectClose(all.power.carried, 3 * 0.5 * 998.2 * AREA * 0.08 * 0.04, 1e-13)
+    expectClose(at(0.75).power.carried, all.power.carried / 2, 1e-13)
+    expectClose(all.power.total, still.total + all.power.carried / 0.5, 1e-13)
+    // A refill that asks for most power asks for more where it carries water along: half a sine of inflow in 0.1 s.
+    const short = { ...full, nozzleLength: 0, frequency: 1 / 0.26, speed: 0.2, intakeArea: AREA / 4 }
+    const peak = (recoveredShare: number) => vehicleBudget(CONSTANT, { ...short, recoveredShare }).peakPower
+    const inflow = ((Math.PI / 2) * AREA * 0.08) / 0.1
+    expectClose(peak(1) - peak(0), (0.5 * 998.2 * 0.04 * inflow) / 0.5, 1e-9)
+  })
+
+  it('leaves no overall efficiency above the Froude efficiency', () => {
+    fc.assert(
+      fc.property(
+        anyShape,
+        share,
+        factor,
+        fast,
+        fc.double({ min: 0, max: 1, noNaN: true }),
+        (shape, rise, size, v, s) => {
+          const moments = shapeMomentsInTime(shape, 0.08 * size, 0.2, rise, rise)
+          // Nothing lost, and an intake so wide that the refill costs next to nothing: the nearest the two can come.
+          const setting = { ...BARE, speed: 10 * v, recoveredShare: s, intakeArea: 1e3 * AREA, frequency: 2 }
+          const { froudeEfficiency, overallEfficiency } = vehicleBudget(moments, setting)
+          if (froudeEfficiency === null || overallEfficiency === null) return
+          // Two sums of the same terms: a few roundings.
+          expect(overallEfficiency).toBeLessThanOrEqual(froudeEfficiency * (1 + 1e-13))
+          // All the momentum kept: 2 U V / (U^2 + V^2) is at most 1, and a varying U only lessens it.
+          expect(overallEfficiency).toBeLessThanOrEqual(1 + 1e-13)
+        },
+      ),
+    )
+  })
+
   it('of the start over-pressure is its energy, rho D^3 U^2/12, in the jet', () => {
     const slug = vehicleBudget(CONSTANT, BARE).power.jet
     const more = vehicleBudget(CONSTANT, { ...BARE, overPressure: 'quick-start' }).power.jet

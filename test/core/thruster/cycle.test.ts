@@ -59,6 +59,13 @@ describe('the period', () => {
     },
   )
 
+  it('has the power of water that is carried along in the refill', () => {
+    const intake = { ...busy.section.intake, recoveredShare: 0.9 }
+    const result = analyseThruster({ ...busy, section: { ...busy.section, intake } })
+    expect(result.power.carried).toBeGreaterThan(0.01 * result.power.jet)
+    expectClose(mean(result.cycle, 'power'), result.power.total, TRAPEZOIDS)
+  })
+
   it('spreads over-pressure over the stroke, so that its mean stays', () => {
     const pulse = { ...PUSH, overPressure: 'quick-start', programme: { ...PUSH.programme, riseTime: 0.02 } } as const
     const result = analyseThruster({ ...busy, pulse })

@@ -64,6 +64,45 @@ describe('nonDominated', () => {
   })
 })
 
+describe('nonDominated of points alike but for rounding', () => {
+  const near = (value: number): number => value * (1 + 4e-16)
+
+  it('keeps one of them, whichever rounding favours', () => {
+    const front = [
+      { size: 1, value: 5 },
+      { size: 2, value: 3 },
+    ]
+    for (const twin of [
+      { size: near(1), value: 5 - 1e-15 },
+      { size: near(2), value: 3 - 1e-15 },
+      { size: 2, value: near(3) },
+    ])
+      expect(nonDominated([...front, twin]).length).toBe(2)
+    // The same for values below 0, as of thrust.
+    expect(
+      nonDominated([
+        { size: 1, value: -5 },
+        { size: near(1), value: near(-5) },
+      ]).length,
+    ).toBe(1)
+  })
+
+  it('keeps the better of two of one size, and both of two that differ by more', () => {
+    expect(
+      nonDominated([
+        { size: 1, value: 5 },
+        { size: near(1), value: 4 },
+      ]),
+    ).toEqual([{ size: near(1), value: 4 }])
+    expect(
+      nonDominated([
+        { size: 1, value: 5 },
+        { size: 1 + 1e-8, value: 5 - 1e-7 },
+      ]).length,
+    ).toBe(2)
+  })
+})
+
 describe('searchDistinct', () => {
   /** Two valleys: 0 at (0.2, 0.2) and 0.01 at (0.8, 0.7). */
   const valleys: SearchProblem = {

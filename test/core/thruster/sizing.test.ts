@@ -158,7 +158,7 @@ describe('sizeThruster', () => {
   })
 
   it('takes the least swept volume where the power does not depend on the stroke ratio', async () => {
-    // No losses, no inertia of the column, nothing that limits the plunger: P = T U / 2 at a given exit, whatever the stroke.
+    // No losses, no column, nothing that limits the plunger: thrust and power then hang on exit and exit speed alone.
     const free = {
       ...ONE.section.actuator,
       maxForce: null,
@@ -177,7 +177,7 @@ describe('sizeThruster', () => {
         target: [{ thrust: 0.02, share: 1 }],
       },
       {
-        nozzle: { ...ONE.pulse.nozzle, lossCoefficient: 0 },
+        nozzle: { ...ONE.pulse.nozzle, shape: 'tube', length: 0, lossCoefficient: 0 },
         programme: { ...ONE.pulse.programme, shape: 'rectangular' },
       },
     )
@@ -229,6 +229,7 @@ describe('sizeThruster', () => {
     const broken = candidate?.points.flatMap(({ limits }) => limits.filter(({ ok }) => !ok).map(({ name }) => name))
     expect(broken).toContain(leastViolated?.name)
     expect(result.message).toContain(`misses ${leastViolated?.name ?? ''} by`)
+    for (const name of broken ?? []) expect(result.message).toContain(`${name} by`)
     // No design of a grid comes nearer.
     const designs = compileDesigns(asked)
     const least = Math.min(...gridOf(SEARCH, 14, [null]).map((design) => designs.evaluate(design).violation))

@@ -1,9 +1,9 @@
 import { beforeAll, describe, expect, it } from 'vitest'
-import { nextTick, shallowRef } from 'vue'
-import { defaultPlan, setField, setJet, setTitle, type Plan } from '../../../core/plan'
+import { shallowRef } from 'vue'
+import { defaultPlan, setField, setJet, setTitle } from '../../../core/plan'
 import { run, type RunResult } from '../../../core/run'
 import { createJetJob, sameJet } from '../../../renderer/model/jetJob'
-import type { JobOutcome, WorkerClient } from '../../../renderer/worker/client'
+import { heldClient } from './heldClient'
 
 /** One coarse smoothing length and a short stroke: a tenth of a second. */
 const PLAN = setField(setJet(defaultPlan(), { ensemble: false, delta: 0.2 }), 'programme.stroke', 0.03)
@@ -23,48 +23,9 @@ beforeAll(async () => {
   part = await run(PLAN, { sections: ['pulse', 'jet'] }, { signal })
 })
 
-/** A client whose jobs end when the test says so. */
-function heldClient() {
-  const jobs: {
-    plan: Plan
-    sections: readonly string[]
-    cancelled: boolean
-    end: (outcome: JobOutcome) => Promise<void>
-    progress: (share: number) => void
-  }[] = []
-  const client: WorkerClient = {
-    run(plan, sections, onProgress) {
-      let settle: (outcome: JobOutcome) => void = () => undefined
-      const outcome = new Promise<JobOutcome>((resolve) => (settle = resolve))
-      const job = {
-        plan,
-        sections,
-        cancelled: false,
-        async end(result: JobOutcome) {
-          settle(result)
-          await outcome
-          await nextTick()
-        },
-        progress: (share: number) => onProgress?.({ share, what: 'starting jet' }),
-      }
-      jobs.push(job)
-      return { outcome, cancel: () => (job.cancelled = true) }
-    },
-    picture: () => expect.unreachable('a run asks for no picture'),
-    map: () => {
-      throw new Error('no map is asked for here')
-    },
-    fields: () => {
-      throw new Error('no fields are read here')
-    },
-    dispose: () => undefined,
-  }
-  return { client, jobs }
-}
-
 function started() {
   const plan = shallowRef(PLAN)
-  const { client, jobs } = heldClient()
+  const { client, jobs } = heldClient('starting jet')
   const crashes: string[] = []
   let done = 0
   const job = createJetJob({

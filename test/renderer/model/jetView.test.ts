@@ -5,7 +5,16 @@ import { defaultPlan, setField, setJet, type Plan } from '../../../core/plan'
 import { run } from '../../../core/run'
 import { jetExportItems, plotsOf } from '../../../renderer/model/jetExports'
 import type { FinishedJet, JetJob } from '../../../renderer/model/jetJob'
-import { jetDeltaRows, jetFigures, jetFurtherRows, jetRows, momentText, shareOf } from '../../../renderer/model/jetRows'
+import {
+  jetDeltaNote,
+  jetDeltaRows,
+  jetFigures,
+  jetFurtherRows,
+  jetRows,
+  momentText,
+  placeInWords,
+  shareOf,
+} from '../../../renderer/model/jetRows'
 import { estimateRows } from '../../../renderer/model/resultRows'
 import { createJetView, shapeAt } from '../../../renderer/model/jetView'
 import { shownUnits } from '../../../renderer/model/units'
@@ -126,6 +135,14 @@ describe('the rows of a jet', () => {
     expect(jetFurtherRows(long, UNITS).map(({ id }) => id)).toEqual(['jet.stoppingVortex', 'jet.drift'])
   })
 
+  it('say which stroke the formation number of each is read from, where it is not the plan’s own', () => {
+    expect(jetDeltaNote(long)).toBeNull()
+    const formation = long.jet.own
+    expect(jetDeltaNote({ ...short, jet: { ...short.jet, formation } })).toMatch(
+      /^Formation number: from a stroke of 8 D\..* from the plan's own, 2\.00 D\.$/,
+    )
+  })
+
   it('give the numbers of the shape shown in the chosen units, and a dash before a ring is cut', async () => {
     const { view, held } = viewOf(null)
     held.value = long
@@ -136,7 +153,11 @@ describe('the rows of a jet', () => {
     expect(first.get('State')).toBe('forming')
     expect(first.get('In the ring')).toBe('—')
     const end = new Map(jetFigures(long, model, model.shapes.length - 1, UNITS).map(({ label, text }) => [label, text]))
-    expect(end.get('Formation time')).toBe('8.00')
+    // The ruler's mark goes on after the stroke; formation time does not.
+    const place = at(model.timeline.places, model.shapes.length - 1)
+    expect(place).toBeGreaterThan(8.1)
+    expect(end.get('Formation time')).toBe(`8.00, on to ${place.toFixed(1)}`)
+    expect(placeInWords(model, model.shapes.length - 1, 's')).toContain(`8.00, run on to ${place.toFixed(1)}`)
     expect(end.get('Ring radius')).toMatch(/mm$/)
     expect(jetFigures(long, model, 9999, UNITS)).toEqual([])
   })

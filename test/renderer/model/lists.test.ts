@@ -102,6 +102,6 @@ describe('a part in words', () => {
     expect(partInWords('nozzles', at(nozzles, 0), units).replaceAll('\u00A0', ' ')).toBe(
       'tube, exit diameter 2.5 cm, piston diameter 5 cm',
     )
-    expect(partInWords('cameras', at(cameras, 0), units)).toContain('1920 × 1080 px')
+    expect(partInWords('cameras', at(cameras, 0), units)).toContain('5120 × 2560 px')
   })
 })

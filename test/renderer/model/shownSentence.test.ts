@@ -19,6 +19,7 @@ describe('a sentence of the core in the units shown', () => {
       'rings 1 and 2, got both at 0, 10, 1\u00A0mm with radius 20\u00A0mm',
     ],
     ['must be finite, got 0.01 m2/s at 0.25 m/s', 'must be finite, got 100\u00A0cm²/s at 250\u00A0mm/s'],
+    ['from low to high, got 0.04\u00A0m before 0.008\u00A0m', 'from low to high, got 40\u00A0mm before 8\u00A0mm'],
     ['held to 1.23456789 s', 'held to 1.23457\u00A0s'],
     ['at most 20 of 40 rings, 3 modes', 'at most 20 of 40 rings, 3 modes'],
   ])('%s', (sentence, shown) => {

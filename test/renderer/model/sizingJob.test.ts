@@ -4,7 +4,7 @@ import { examplePlan, setDesign, setField, setThruster, setTitle, type Plan } fr
 import { run, type RunResult } from '../../../core/run'
 import { designKey } from '../../../renderer/model/designKey'
 import { createSizingJob } from '../../../renderer/model/sizingJob'
-import type { JobOutcome, WorkerClient } from '../../../renderer/worker/client'
+import { heldClient } from './heldClient'
 
 /** One nozzle in stock: the search has little to look through. */
 const BASE = examplePlan('survey-vehicle')
@@ -27,33 +27,8 @@ beforeAll(async () => {
   part = await run(PLAN, { sections: ['thruster'] }, { signal })
 }, 60_000)
 
-/** A client whose jobs end when the test says so. */
 function started(plan = shallowRef(PLAN)) {
-  const jobs: { cancelled: boolean; end: (outcome: JobOutcome) => Promise<void>; progress: (share: number) => void }[] =
-    []
-  const refuse = () => expect.unreachable('a sizing asks for nothing else')
-  const client: WorkerClient = {
-    run(_plan, sections, onProgress) {
-      expect(sections).toContain('thruster')
-      let settle: (outcome: JobOutcome) => void = () => undefined
-      const outcome = new Promise<JobOutcome>((resolve) => (settle = resolve))
-      const job = {
-        cancelled: false,
-        async end(result: JobOutcome) {
-          settle(result)
-          await outcome
-          await nextTick()
-        },
-        progress: (share: number) => onProgress?.({ share, what: 'candidates' }),
-      }
-      jobs.push(job)
-      return { outcome, cancel: () => (job.cancelled = true) }
-    },
-    picture: refuse,
-    map: refuse,
-    fields: refuse,
-    dispose: () => undefined,
-  }
+  const { client, jobs } = heldClient('candidates', 'thruster')
   const crashes: string[] = []
   return {
     job: createSizingJob(

@@ -15,6 +15,8 @@ import {
 import { startSearch, startThruster } from '../../../renderer/model/thrustStart'
 import { shownUnits } from '../../../renderer/model/units'
 
+const NOZZLE = examplePlan('survey-vehicle').nozzle
+
 async function rowsOf(plan: Plan) {
   const { data, message } = await run(plan, { sections: ['thruster'], sizing: 'off' })
   const section = plan.thruster
@@ -59,6 +61,16 @@ describe('figures of a thruster', () => {
     ])
     expect(vehicle.main.slice(0, 3).map(text)).toEqual(['1.38 N', '0.611 m/s', '3.94 W'])
     expect(vehicle.main[1]?.notes.join()).toMatch(/95\u00A0?.*% of it after 38\.4/)
+  })
+
+  it('tell the way to cruise only where the speed is that of cruise', async () => {
+    const plan = examplePlan('survey-vehicle')
+    const vehicle = plan.thruster?.vehicle ?? null
+    if (vehicle === null) throw new Error('the example has no vehicle')
+    const held = await rowsOf(setThruster(plan, { vehicle: { ...vehicle, speed: 0.9 } }))
+    const notes = held.main.find(({ label }) => label === 'Held speed')?.notes.join()
+    expect(notes).toContain('missing')
+    expect(notes).not.toContain('of it after')
   })
 
   it('put what is broken first, then what has least room', () => {
@@ -132,8 +144,13 @@ describe('candidates as rows', () => {
   it('are sorted by any column and keep their number', async () => {
     const { data } = await run(examplePlan('survey-vehicle'), { sections: ['thruster'] })
     const candidates = data?.thruster?.sizing?.candidates ?? []
-    const rows = candidateRows(candidates, shownUnits({}))
+    const rows = candidateRows(candidates, shownUnits({}), NOZZLE)
     expect(rows.map(({ number }) => number)).toEqual(candidates.map((_, i) => i + 1))
+    // Opening one keeps the proportions of the nozzle.
+    rows.forEach(({ values, candidate: { design } }) => {
+      expect(values.nozzleLength / design.diameter).toBeCloseTo(NOZZLE.length / NOZZLE.diameter, 12)
+      expect(values.plunger / design.diameter).toBeCloseTo(NOZZLE.pistonDiameter / NOZZLE.diameter, 12)
+    })
     const bySize = sortedRows(rows, { column: 'swept', falling: false })
     const sizes = bySize.map(({ values }) => values.swept)
     expect(sizes).toEqual([...sizes].sort((a, b) => a - b))

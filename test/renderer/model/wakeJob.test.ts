@@ -1,9 +1,9 @@
 import { describe, expect, it } from 'vitest'
-import { nextTick, shallowRef } from 'vue'
+import { shallowRef } from 'vue'
 import { defaultPlan, setField, setTitle, setWake, type Plan } from '../../../core/plan'
 import { run, type RunResult } from '../../../core/run'
 import { createWakeJob, QUICK_BUDGET, sameWake } from '../../../renderer/model/wakeJob'
-import type { JobOutcome, WorkerClient } from '../../../renderer/worker/client'
+import { heldClient } from './heldClient'
 
 const RING = {
   circulation: 0.01,
@@ -15,43 +15,6 @@ const RING = {
 } as const
 
 const PLAN = setWake(defaultPlan(), { rings: [RING], duration: 0.2 })
-
-/** A client whose jobs end when the test says so. */
-function heldClient() {
-  const jobs: {
-    plan: Plan
-    cancelled: boolean
-    end: (outcome: JobOutcome) => Promise<void>
-    progress: (share: number) => void
-  }[] = []
-  const client: WorkerClient = {
-    run(plan, _sections, onProgress) {
-      let settle: (outcome: JobOutcome) => void = () => undefined
-      const outcome = new Promise<JobOutcome>((resolve) => (settle = resolve))
-      const job = {
-        plan,
-        cancelled: false,
-        async end(result: JobOutcome) {
-          settle(result)
-          await outcome
-          await nextTick()
-        },
-        progress: (share: number) => onProgress?.({ share, what: 'rings in motion' }),
-      }
-      jobs.push(job)
-      return { outcome, cancel: () => (job.cancelled = true) }
-    },
-    picture: () => expect.unreachable('a run asks for no picture'),
-    map: () => {
-      throw new Error('no map is asked for here')
-    },
-    fields: () => {
-      throw new Error('no fields are read here')
-    },
-    dispose: () => undefined,
-  }
-  return { client, jobs }
-}
 
 async function resultOf(plan: Plan, aborted = false): Promise<RunResult> {
   // Aborted after the water: the march starts and ends at once.
@@ -68,7 +31,7 @@ async function resultOf(plan: Plan, aborted = false): Promise<RunResult> {
 function started() {
   const plan = shallowRef(PLAN)
   const timers: { action: () => void; after: number }[] = []
-  const { client, jobs } = heldClient()
+  const { client, jobs } = heldClient('rings in motion')
   const crashes: string[] = []
   const job = createWakeJob(
     client,

@@ -94,6 +94,11 @@ describe('rows of a wake', () => {
     expect(runFacts(data, true, UNITS).find(({ label }) => label === 'Ageing')?.text).toMatch(/turbulent run as well/)
   })
 
+  it('leave the range of an arrival open where the other law’s run ended before it', () => {
+    const arrival = { station: 0.1, ring: 1, time: 4.85, timeLow: 4.85, timeHigh: null, open: true }
+    expect(plain(arrivalRows([arrival], UNITS)[0]?.timeText ?? '')).toBe('4.85 s or later')
+  })
+
   it('do not tell a drift of sums that are not conserved', async () => {
     const data = await wakeOf(setWake(PAIR, { viscous: true, ageing: 'laminar', duration: 0.1 }))
     expect(runFacts(data, true, UNITS).find(({ label }) => label === 'Drift')?.text).toMatch(/^not told/)
@@ -126,6 +131,20 @@ describe('does one pulse catch the other', () => {
     expect(plain(at(answer, 0))).toMatch(
       /^Ring 1 and ring 2 do not meet within 0\.5 s: the gap is closing, from 200 mm to /,
     )
+  })
+
+  it('does not call a sideways distance a gap', async () => {
+    const rings = [RING, { ...RING, centre: [0, 0.1, 0] } as const]
+    const beside = setWake(PAIR, { rings, duration: 0.2, law: 'regularised', tolerance: 1e-3 })
+    expect(catchInWords((await wakeOf(beside)).wake, 2, 'Ring', UNITS)).toEqual([
+      'Ring 1 and ring 2 run side by side: neither is in the other’s way.',
+    ])
+  })
+
+  it('says so where the model does not hold from the start', async () => {
+    const { wake } = await wakeOf(PAIR)
+    const [answer = ''] = catchInWords({ ...wake, validUntil: 1.02e-16 }, 2, 'Ring', UNITS)
+    expect(answer).toMatch(/; the model does not hold from the start\.$/)
   })
 
   it('tells nozzles apart', async () => {

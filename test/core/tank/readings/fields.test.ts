@@ -51,6 +51,22 @@ describe('one frame of a made ring with a Gaussian core', () => {
     expectClose(ring.radius.value, RING.radius, 0.01, 'radius')
   })
 
+  it('without a pinch-off is the mean of all frames after the stroke, its core the median, whatever specks lie about', () => {
+    const analysis = createFieldAnalysis({ ...OPTIONS, formationTime: (time) => Math.min(3, 2 * time) })
+    const speck: Blob = { circulation: 0.0001, x: 0.12, radius: 0.04, coreRadius: 0.002 }
+    for (let k = 0; k < 8; k++) {
+      const blobs = k === 5 ? [RING, speck] : [{ ...RING, x: 0.04 + 0.006 * k }]
+      analysis.add(madeFrame(0.5 * k, blobs, BOTH, { sigma: 0.02 * 0.1, seed: k + 1 }))
+    }
+    const { ring, pinchOff, frames } = analysis.result()
+    expect(pinchOff).toBeNull()
+    // The formation time stands still from 1.5 s on, the fourth frame.
+    expect([ring?.from, ring?.to, ring?.frames]).toEqual([3, 7, 5])
+    // Noise of 2 % of the fastest speed: 3 % of a core in each frame.
+    for (const frame of frames) expectClose(frame.ring?.coreRadius ?? NaN, RING.coreRadius, 0.03)
+    expectClose(ring?.coreRadius.value ?? NaN, RING.coreRadius, 0.02)
+  })
+
   it('does not mind the order of the nodes, nor vectors that are missing', () => {
     const frame = madeFrame(0, [RING], HALF)
     const plain = createFieldAnalysis(OPTIONS).add(frame)

@@ -70,6 +70,22 @@ describe('the Readings page', () => {
     page.unmount()
   })
 
+  it('says in a sentence where nothing can be fitted', async () => {
+    const plan = examplePlan('tank-day-measured')
+    const { readings } = plan
+    if (readings === null) throw new Error('the example has no readings')
+    const none = { radius: null, circulation: null, sigmaX: null, sigmaRadius: null, sigmaCirculation: null }
+    const rows = ['1', '1', '2', '2'].map((run) => ({ ...none, run, time: 2, x: 0.1 }))
+    const workspace = makeWorkspace({ ...plan, readings: { ...readings, rows } })
+    workspace.page.value = 'readings'
+    await compared(workspace)
+    const page = mountIn(workspace, ReadingsPage)
+    await settled()
+    expect(page.get('.refused-line').text()).toBe('Nothing can be fitted to 4 readings, all of one moment.')
+    expect(page.text()).not.toMatch(/NaN|undefined/)
+    page.unmount()
+  })
+
   it('looks at one run alone, and at all again', async () => {
     const workspace = openOn('tank-day-measured')
     const page = mountIn(workspace, ReadingsPage)
@@ -99,8 +115,10 @@ describe('the Readings page', () => {
     // Against what was measured under the plan before: the fit holds the planned radius, which has moved with the stroke.
     // The linear factor leaves its square, 3.7 % twice, well within 0.5 %.
     expect((circulationOf(workspace)?.predicted.value ?? 0) / measured).toBeCloseTo(1, 2)
+    expect(workspace.notices.list.value.map(({ text }) => text).join()).toContain('Undo takes it back')
     workspace.document.undo()
     expect(workspace.document.content.value).toBe(before)
+    expect(workspace.notices.list.value).toEqual([])
     page.unmount()
   })
 
@@ -169,6 +187,13 @@ describe('importing readings', () => {
     // Both files name no run: the second is told apart by its file.
     expect(workspace.document.content.value.readings?.rows.map(({ run }) => run)).toEqual(['1', '1', 'two', 'two'])
     again.unmount()
+  })
+
+  it('says of an empty file that it is empty', async () => {
+    const dialog = mountIn(makeWorkspace(), ImportDialog, { files: [fileOf('empty.csv', '')] })
+    await settled()
+    expect(dialog.find('[role=alert]').text()).toContain('“empty.csv” is empty')
+    dialog.unmount()
   })
 
   it('says of a file that is no table what is missing, and takes nothing', async () => {

@@ -59,6 +59,44 @@ describe('a list of sizes in stock', () => {
   })
 })
 
+describe('a list of sizes in stock', () => {
+  it('refuses what is no size in place and keeps the text', async () => {
+    const workspace = makeWorkspace(SURVEY)
+    const wrapper = mountIn(workspace, StockField, { label: 'Bores', sizes: [0.02], unit: 'mm' })
+    mounted.push(wrapper)
+    const input = wrapper.get('input')
+    await input.setValue('30; 40; abc')
+    await input.trigger('blur')
+    expect(wrapper.get('.refusal').text()).toContain('abc')
+    expect(input.element.value).toBe('30; 40; abc')
+    expect(wrapper.emitted('commit')).toBeUndefined()
+  })
+})
+
+describe('a limit that is not given', () => {
+  it('shows its unit and reads a bare number in it, however small the results are', async () => {
+    // A bench of millinewtons and microwatts: what the results are shown in must not be what a limit is read in.
+    const { field, plan, settle, workspace } = await pageOf(
+      setThruster({ ...SURVEY, train: { pulses: 10, period: 2000 } }, { vehicle: null, target: [] }),
+    )
+    expect(workspace.units.value.force).not.toBe('N')
+    for (const [label, unit] of [
+      ['Largest force', 'N'],
+      ['Largest power', 'W'],
+    ] as const) {
+      await field(label).setValue('')
+      await field(label).trigger('blur')
+      await settle()
+      expect(field(label).attributes('placeholder')).toBe(`not given, ${unit}`)
+      await field(label).setValue('400')
+      await field(label).trigger('blur')
+      await settle()
+    }
+    expect(plan().thruster?.actuator.maxForce).toBe(400)
+    expect(plan().thruster?.actuator.maxPower).toBe(400)
+  })
+})
+
 describe('the Thrust page', () => {
   it('offers a vehicle, a bench and examples where the plan has no thruster, each one step', async () => {
     const { button, workspace, plan, settle, wrapper } = await pageOf(defaultPlan())
@@ -106,7 +144,7 @@ describe('the Thrust page', () => {
     for (let i = 0; i < 4000 && workspace.thrust.sizing.status.value === 'running'; i++)
       await new Promise((resolve) => setTimeout(resolve, 5))
     await settle()
-    await button(/^Candidates/).trigger('click')
+    expect(button(/^Candidates/).attributes('aria-pressed')).toBe('true')
     const heads = wrapper.findAll('th[aria-sort]')
     expect(heads[0]?.attributes('aria-sort')).toBe('ascending')
     await button(/^Power \(/).trigger('click')

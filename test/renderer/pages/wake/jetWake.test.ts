@@ -45,9 +45,37 @@ describe('a wake from the computed jet in words', () => {
 
   it('says when the second pulse meets what the first has left, or that it does not', () => {
     const [sentence = ''] = jetMeetings(wake, UNITS)
-    expect(sentence).toMatch(/^(The ring|A billow) of pulse 2 (merges with|passes) (the ring|a billow) of pulse 1 at /)
-    expect(jetMeetings(alone, UNITS)).toEqual([expect.stringMatching(/^Pulse 2 meets nothing of the pulses before it/)])
+    expect(sentence).toMatch(
+      /^The ring of pulse 2 ((merges with|passes) the ring of pulse 1 at |catches no ring of an earlier)/,
+    )
+    expect(jetMeetings(alone, UNITS)).toEqual([
+      expect.stringMatching(/^Pulse 2 has no ring yet when the run ends, at 5\s/u),
+    ])
     expect(jetMeetings({ ...wake, jet: null }, UNITS)).toEqual([])
+  })
+
+  it('tells ring on ring first, with what the other law says, and only then the billow met on the way', () => {
+    const each = wake.jet?.release.rings.length ?? 0
+    expect(each).toBeGreaterThan(1)
+    const event = (time: number, rings: readonly number[]) =>
+      ({ time, event: 'merge', rings, x: 0.1 * time, detail: '' }) as const
+    const events = [event(4, [2, each + 1]), event(6, [1, each + 1])]
+    const march = { ...wake.wake, events, validUntil: 5 }
+    const turbulent = { ...march, events: [event(4.5, [2, each + 1]), event(7, [1, each + 1])] }
+    expect(
+      jetMeetings({ ...wake, wake: march, turbulent }, UNITS).map((text) => text.replaceAll('\u00A0', ' ')),
+    ).toEqual([
+      'The ring of pulse 2 merges with the ring of pulse 1 at 6 to 7 s, x = 600 to 700 mm; the model holds only until 5 s.',
+      'The ring of pulse 2 merges with a billow of pulse 1 at 4.0 to 4.5 s, x = 400 to 450 mm.',
+    ])
+  })
+
+  it('says where a pulse has no ring by the end of the run', () => {
+    const each = wake.jet?.release.rings.length ?? 0
+    const none = { ...(wake.wake.trajectories[each] ?? wake.wake.trajectories[0]), time: new Float64Array(0) }
+    const trajectories = wake.wake.trajectories.map((path, i) => (i === each ? { ...path, ...none } : path))
+    const [answer = ''] = jetMeetings({ ...wake, wake: { ...wake.wake, trajectories } }, UNITS)
+    expect(answer).toMatch(/^Pulse 2 has no ring yet when the run ends, at /)
   })
 
   it('lists pinch-offs and mergers among the events and counts the mergers', () => {

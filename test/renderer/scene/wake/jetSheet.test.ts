@@ -27,6 +27,7 @@ const JET: WakeJet = {
   period: 2,
   release: { time: RELEASE_TIME, rings: [], total: NOTHING, leftOut: NOTHING, takenIn: 0 },
   pinchOff: null,
+  pinchOffX: null,
   delta: 0.1,
   snapshots: [0.5, 1, 1.5, 2, 2.5, RELEASE_TIME].map((time) => shape(time, 50, time > 2 ? 4 : 0)),
 }
