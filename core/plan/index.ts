@@ -171,3 +171,4 @@ export { choicesOfColumns, sourceLike, withoutReadings, withReadings } from './r
 export { readReadings, type ReadingsReading, type ReadingsTable } from './readingsCsv'
 export { READINGS_KINDS, READINGS_ROLES, type ReadingsChoices, type ReadingsRole } from './readingsColumns'
 export { READING_NUMBERS, type ReadingNumberKey } from './fieldsReadings'
+export { startSearch, startThruster } from './thrusterStart'

@@ -1,5 +1,13 @@
 import { beforeAll, describe, expect, it } from 'vitest'
-import { defaultPlan, examplePlan, setThruster, validatePlan, type Plan } from '../../../core/plan'
+import {
+  defaultPlan,
+  examplePlan,
+  setThruster,
+  startSearch,
+  startThruster,
+  validatePlan,
+  type Plan,
+} from '../../../core/plan'
 import { run } from '../../../core/run'
 import { candidateRows, sortedRows } from '../../../renderer/model/candidateRows'
 import {
@@ -12,7 +20,6 @@ import {
   timeInWords,
   wayInWords,
 } from '../../../renderer/model/thrustRows'
-import { startSearch, startThruster } from '../../../renderer/model/thrustStart'
 import { shownUnits } from '../../../renderer/model/units'
 
 const NOZZLE = examplePlan('survey-vehicle').nozzle

@@ -1,7 +1,9 @@
-/** The plan as it is when a thruster begins on it. Pure. */
-import { SEARCH_DEFAULTS, setThruster, setTrain, VEHICLE_DEFAULTS, type Plan } from '../../core/plan'
-import type { PulseResult } from '../../core/pulse'
-import type { SearchInput, Span } from '../../core/thruster'
+/** The plan as it is when a thruster begins on it. */
+import type { PulseResult } from '../pulse'
+import { sweptVolume, type SearchInput, type Span } from '../thruster'
+import { SEARCH_DEFAULTS, VEHICLE_DEFAULTS } from './decodeThruster'
+import { setThruster, setTrain } from './edit'
+import type { Plan } from './types'
 
 /** Two digits, as one would type it. */
 function typed(value: number): number {
@@ -31,7 +33,7 @@ interface PulseFigures {
 
 function figuresOf({ nozzle }: Plan, pulse: PulseResult | null, density: number): PulseFigures {
   if (pulse === null) return PLAIN_PULSE
-  const mass = density * (Math.PI / 4) * nozzle.diameter ** 2 * pulse.stroke
+  const mass = density * sweptVolume({ count: 1, diameter: nozzle.diameter, strokeRatio: pulse.strokeRatio })
   return { duration: pulse.duration, impulse: pulse.slug.impulse, peakSpeed: pulse.peakSpeed, mass, density }
 }
 
